@@ -1,0 +1,4 @@
+//! heatpath: a language and interpreter for thermal process sheets.
+
+pub mod diagnostic;
+pub mod span;

@@ -1,0 +1,3 @@
+//! The `heatpath` program: hands its arguments on.
+
+fn main() {}
