@@ -122,8 +122,10 @@ fn chained_power(place: &Place<'_>) -> Option<Diagnostic> {
 fn two_signs(place: &Place<'_>) -> Option<Diagnostic> {
     let sign = |c: char| matches!(c, '+' | '-' | '−');
     let here = place.rest().starts_with(sign);
+    let mut after = place.rest().chars();
+    let ahead = after.next().is_some() && after.as_str().trim_start().starts_with(sign);
     let before = place.before().ends_with(sign) && !place.before().ends_with("->");
-    (here && before).then(|| {
+    (here && (before || ahead)).then(|| {
         Diagnostic::new(Code::TwoSigns, "two signs in a row")
             .label(place.token_span(), "the second sign")
             .help("write one sign, or put the negative value in parentheses: `a - (-b)`")

@@ -1,0 +1,35 @@
+//! Syntax tree to checked Program.
+//!
+//! In comes a tree with its texts; out comes a [`Program`](crate::program::Program), or every mistake of meaning:
+//! names, units, dimensions, kinds, materials, states and steps. One file per construct. After an error the pass goes
+//! on: what could not be checked is `None`, and whoever needs it stays silent.
+
+mod allow;
+mod arithmetic;
+mod call;
+mod checker;
+mod condition;
+mod constant;
+mod datum;
+mod duty;
+mod expression;
+mod heat_capacity;
+mod import;
+mod input;
+mod later;
+mod law_formula;
+mod literal;
+mod matter;
+mod member;
+mod mixture;
+mod names;
+mod output;
+mod species;
+mod state;
+mod step;
+mod transition;
+mod unit;
+mod unknowns;
+mod wanted;
+
+pub use checker::{Checked, check_sheet};

@@ -1,0 +1,118 @@
+//! States: matter at a temperature and a pressure.
+
+use super::{Expr, SpeciesId, StateId};
+use crate::span::Span;
+use crate::thermo::Pin;
+
+/// In what an amount is counted.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Quantum {
+    /// A mass.
+    Mass,
+    /// An amount of substance.
+    Substance,
+    /// A volume at the state's own temperature and pressure.
+    Volume,
+    /// A share of a state.
+    Share,
+}
+
+/// A species in a state, in a phase that is said or follows.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Constituent {
+    /// Which.
+    pub species: SpeciesId,
+    /// Its phase.
+    pub pin: Pin,
+}
+
+/// A constituent of a material with its share by mass.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Portion {
+    /// Which constituent of the state.
+    pub constituent: usize,
+    /// Its share by mass.
+    pub share: f64,
+}
+
+/// Where a state's matter comes from.
+#[derive(Debug, Clone, PartialEq)]
+pub enum Source {
+    /// An amount of a species or a mixture.
+    Fresh {
+        /// How much.
+        amount: Expr,
+        /// Counted how.
+        quantum: Quantum,
+        /// Of what.
+        portions: Vec<Portion>,
+    },
+    /// All of a state.
+    Whole(StateId),
+    /// An amount or a share of other matter.
+    PartOf {
+        /// How much.
+        amount: Expr,
+        /// Counted how.
+        quantum: Quantum,
+        /// Of what.
+        of: Box<Source>,
+    },
+    /// Several together.
+    Sum(Vec<Source>),
+}
+
+/// A temperature or a pressure.
+#[derive(Debug, Clone, PartialEq)]
+pub enum Condition {
+    /// Said.
+    Value(Expr),
+    /// That of another state.
+    Of(StateId),
+    /// The site's atmosphere.
+    Atmosphere,
+    /// Not known; settled by a step.
+    Unknown(Span),
+    /// Where the species boils.
+    Boiling,
+}
+
+/// A state.
+#[derive(Debug, Clone, PartialEq)]
+pub struct State {
+    /// Its name.
+    pub name: String,
+    /// Where it is declared.
+    pub span: Span,
+    /// Whether its amounts are rates.
+    pub flow: bool,
+    /// Its species.
+    pub constituents: Vec<Constituent>,
+    /// Where the matter comes from.
+    pub source: Source,
+    /// Its temperature.
+    pub temperature: Condition,
+    /// Its pressure.
+    pub pressure: Condition,
+    /// How much has changed, where it lies on a transition: the phase and the share of it.
+    pub share: Option<(usize, Expr)>,
+    /// The statement's right side as written.
+    pub text: String,
+}
+
+impl State {
+    /// The states that it is made from.
+    pub fn origins(&self) -> Vec<StateId> {
+        fn gather(source: &Source, into: &mut Vec<StateId>) {
+            match source {
+                Source::Fresh { .. } => {}
+                Source::Whole(state) => into.push(*state),
+                Source::PartOf { of, .. } => gather(of, into),
+                Source::Sum(parts) => parts.iter().for_each(|part| gather(part, into)),
+            }
+        }
+        let mut states = Vec::new();
+        gather(&self.source, &mut states);
+        states
+    }
+}
