@@ -1,1 +1,3 @@
 //! Tests of the program as its users meet it.
+
+mod units_reading;
