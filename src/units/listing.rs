@@ -1,7 +1,7 @@
 //! The list of units for a reader.
 
 use super::ambiguous::ambiguous;
-use super::prefix::Prefixes;
+use super::prefix::{PREFIXES, Prefixes};
 use super::table::{Entry, FAMILIES, find};
 use super::unit::Zero;
 
@@ -21,8 +21,8 @@ pub struct Row {
     pub factor: String,
     /// Where its definition stands.
     pub standard: &'static str,
-    /// Whether it takes prefixes.
-    pub prefixed: bool,
+    /// The prefixes that it takes: "all", none, or their symbols such as `k M G`.
+    pub prefixes: String,
 }
 
 /// Every unit, by dimension, the dimensions that a thermal sheet uses most first.
@@ -69,14 +69,23 @@ fn row(entry: &'static Entry) -> Row {
         dimension: entry.dimension.name().unwrap_or(""),
         factor: factor_text(entry),
         standard: entry.standard,
-        prefixed: entry.prefixes != Prefixes::None,
+        prefixes: prefixes_text(entry.prefixes),
     }
+}
+
+fn prefixes_text(prefixes: Prefixes) -> String {
+    if prefixes == Prefixes::All {
+        return "all".to_owned();
+    }
+    let admitted = PREFIXES.iter().rev().filter(|prefix| prefixes.admit(prefix));
+    admitted.filter_map(|prefix| prefix.symbols.first().copied()).collect::<Vec<_>>().join(" ")
 }
 
 fn factor_text(entry: &Entry) -> String {
     let factor = entry.factor.value();
     let si = entry.dimension;
     match entry.zero {
+        Zero::None if si.is_one() => format!("{factor}"),
         Zero::None => format!("{factor} {si}"),
         Zero::Kelvin(zero) if factor == 1.0 => format!("(x + {zero}) {si}"),
         Zero::Kelvin(zero) => format!("(x + {zero}) * {factor} {si}"),

@@ -31,19 +31,23 @@ pub(crate) fn term(
         }
     }
     match (known_part(word), power) {
-        (Some(part), Some((power, _))) if part == word.len() => {
-            plain_term(word, range).map(|term| Term { exponent: power, ..term })
+        (Some(part), Some((exponent, range))) if part == word.len() => {
+            let name = range.start..range.start + part;
+            plain_term(word, name).map(|term| Term { exponent, range, ..term })
         }
-        (Some(part), Some(_)) if !is_refused(word) => {
+        (Some(part), Some(_)) => {
             Err(UnitError::Malformed { at: range.start + part, why: "a unit takes one power" })
         }
-        (Some(part), _) if !is_refused(word) => with_digits(word, part, range),
-        _ => plain_term(word, range),
+        (Some(part), None) => with_digits(word, part, range),
+        (None, _) => plain_term(word, range),
     }
 }
 
+/// A cubic nanometre by the SI, where gas by the normal cubic metre is meant.
+const CUBIC_NANOMETRE: &str = "nm3";
+
 fn is_refused(word: &str) -> bool {
-    word == "nm3" || ambiguous(word).is_some()
+    word == CUBIC_NANOMETRE || ambiguous(word).is_some()
 }
 
 /// The length of the longest part of the word that has a meaning or is refused for having several, when only digits
@@ -71,7 +75,7 @@ fn with_digits(word: &str, part: usize, range: Range<usize>) -> Result<Term, Uni
 
 /// A word with no power.
 fn plain_term(word: &str, range: Range<usize>) -> Result<Term, UnitError> {
-    if word == "nm3" {
+    if word == CUBIC_NANOMETRE {
         return Err(UnitError::CubicNanometre { word: word.to_owned(), range });
     }
     if let Some(found) = ambiguous(word) {

@@ -1,3 +1,4 @@
 //! Tests of the program as its users meet it.
 
+mod units_listing;
 mod units_reading;

@@ -3,14 +3,11 @@
 use heatpath::units::{Calorie, Dimension, Kind, Unit, UnitError, Zero, read_unit};
 
 fn unit(text: &str) -> Unit {
-    read_unit(text).unwrap_or_else(|error| panic!("`{text}`: {error:?}"))
+    read_unit(text).expect(text)
 }
 
 fn error(text: &str) -> UnitError {
-    match read_unit(text) {
-        Ok(unit) => panic!("`{text}` was read as {unit:?}"),
-        Err(error) => error,
-    }
+    read_unit(text).expect_err(text)
 }
 
 /// The same factor and dimension, whatever the text.

@@ -4,10 +4,9 @@ use super::Entry;
 use crate::units::dimension::Dimension;
 use crate::units::factor::Factor;
 
-const YARD_POUND: &str = "international yard and pound (1959); NIST SP 811 (2008), app. B.6 and B.8";
+const YARD_POUND: &str = "international yard and pound (1959); NIST SP 811 (2008), app. B.8";
 const GRAVITY: &str = "standard gravity, 3rd CGPM (1901); NIST SP 811 (2008), app. B.8";
 const SP_811: &str = "NIST SP 811 (2008), app. B.8";
-const IMPERIAL: &str = "Units of Measurement Regulations 1995 (UK): 4.546 09 L; NIST SP 811 (2008), app. B.8";
 
 /// The standard acceleration of free fall, 9.806 65 m/s2.
 pub(super) const FREE_FALL: Factor = Factor::decimal(980_665.0, -5);
@@ -22,7 +21,9 @@ pub(super) const POUND_FORCE: Factor = POUND.times(FREE_FALL);
 
 const YARD: Factor = Factor::decimal(9_144.0, -4);
 const MILE: Factor = whole(5_280.0).times(FOOT);
+/// 231 cubic inches.
 const GALLON_US: Factor = whole(231.0).times(INCH.power(3));
+/// 4.546 09 L.
 const GALLON_UK: Factor = Factor::decimal(454_609.0, -8);
 
 /// 64.798 91 mg.
@@ -46,9 +47,9 @@ pub(super) const UNITS: &[Entry] = &[
     Entry::new("yd", "yard", Dimension::LENGTH, YARD, YARD_POUND),
     Entry::new("mi", "international mile", Dimension::LENGTH, MILE, YARD_POUND),
     volume("gal_US", "US gallon, 231 cubic inches", GALLON_US, SP_811),
-    volume("gal_UK", "imperial gallon", GALLON_UK, IMPERIAL),
+    volume("gal_UK", "imperial gallon", GALLON_UK, SP_811),
     volume("fl_oz_US", "US fluid ounce", GALLON_US.over(whole(128.0)), SP_811),
-    volume("fl_oz_UK", "imperial fluid ounce", GALLON_UK.over(whole(160.0)), IMPERIAL),
+    volume("fl_oz_UK", "imperial fluid ounce", GALLON_UK.over(whole(160.0)), SP_811),
     volume("bbl_oil", "barrel of petroleum, 42 US gallons", GALLON_US.times(whole(42.0)), SP_811),
     mass("lb", "pound", POUND),
     mass("oz_av", "avoirdupois ounce", POUND.over(whole(16.0))),

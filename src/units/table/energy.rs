@@ -7,7 +7,7 @@ use crate::units::factor::Factor;
 use crate::units::prefix::Prefixes::Only;
 use crate::units::unit::Calorie::{InternationalTable, Thermochemical};
 
-const CALORIE_TH: &str = "thermochemical calorie, 4.184 J: ISO 80000-5:2019; NIST SP 811 (2008), app. B.8";
+const CALORIE_TH: &str = "thermochemical calorie, 4.184 J: NIST SP 811 (2008), app. B.8";
 const CALORIE_IT: &str =
     "International Table calorie, 4.1868 J: 5th ICPS (1956); NIST SP 811 (2008), app. B.8";
 const BTU: &str =

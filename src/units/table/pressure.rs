@@ -9,7 +9,6 @@ use crate::units::unit::Zero;
 
 const PASCAL: &str = "SI Brochure, 9th ed. (2019), table 4";
 const GAUGE: &str = "ISO 80000-4:2019, 4-14.2 (gauge pressure)";
-const BAR: &str = "ISO 80000-4:2019, 4-14.1; NIST SP 811 (2008), app. B.8";
 const ATMOSPHERE: &str = "10th CGPM (1954), resolution 4";
 const SP_811: &str = "NIST SP 811 (2008), app. B.8";
 
@@ -35,7 +34,7 @@ const fn gauge(symbol: &'static str, name: &'static str, factor: Factor) -> Entr
 pub(super) const UNITS: &[Entry] = &[
     pressure("Pa", "pascal", Factor::ONE, PASCAL).or(&["Paa"]).prefixed(All),
     gauge("Pag", "pascal gauge", Factor::ONE).prefixed(Only(&["hecto", "kilo", "mega"])),
-    pressure("bar", "bar", BAR_IN_PASCAL, BAR).or(&["bara"]).prefixed(Only(&["kilo", "milli", "micro"])),
+    pressure("bar", "bar", BAR_IN_PASCAL, SP_811).or(&["bara"]).prefixed(Only(&["kilo", "milli", "micro"])),
     gauge("barg", "bar gauge", BAR_IN_PASCAL).prefixed(Only(&["milli"])),
     pressure("atm", "standard atmosphere", ATMOSPHERE_IN_PASCAL, ATMOSPHERE),
     pressure("psi", "pound-force per square inch", PSI, SP_811).or(&["psia"]),
