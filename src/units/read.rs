@@ -32,18 +32,7 @@ pub fn read_unit(text: &str) -> Result<Unit, UnitError> {
     let terms = reader.unit()?;
     match reader.peek() {
         None => compound(text, &terms),
-        Some(found) => Err(reader.malformed(unexpected(found))),
-    }
-}
-
-fn unexpected(found: char) -> &'static str {
-    match found {
-        ')' => "this parenthesis closes none",
-        '(' => "a product sign `·` is missing here",
-        '^' => "a unit takes one power",
-        '*' | '\u{d7}' => "units are multiplied by `·`, or by a blank inside parentheses",
-        c if c.is_whitespace() => "a blank stands in a unit inside parentheses only",
-        _ => "this does not belong in a unit",
+        Some(found) => Err(reader.unexpected(found)),
     }
 }
 
@@ -148,7 +137,7 @@ impl Reader<'_> {
         if self.peek() != Some(')') {
             return Err(self.peek().map_or_else(
                 || UnitError::Malformed { at: start, why: "this parenthesis is not closed" },
-                |found| self.malformed(unexpected(found)),
+                |found| self.unexpected(found),
             ));
         }
         self.advance();
@@ -240,6 +229,21 @@ impl Reader<'_> {
 
     fn advance(&mut self) {
         self.at += self.peek().map_or(0, char::len_utf8);
+    }
+
+    /// Reading stopped before this character.
+    fn unexpected(&self, found: char) -> UnitError {
+        let rest = self.text.get(self.at..).unwrap_or("");
+        let marked = ["(g)", "(a)", "(abs)", "(gauge)"].iter().any(|mark| rest.starts_with(mark));
+        self.malformed(match found {
+            ')' => "this parenthesis closes none",
+            '(' if marked => "gauge and absolute pressures are written as one word, `barg` and `bara`",
+            '^' => "a unit takes one power",
+            '*' | '\u{d7}' => "units are multiplied by `·`, or by a blank inside parentheses",
+            c if c.is_whitespace() => "a blank stands in a unit inside parentheses only",
+            c if c == '(' || is_word(c) => "a product sign `·` is missing here",
+            _ => "this does not belong in a unit",
+        })
     }
 
     fn malformed(&self, why: &'static str) -> UnitError {

@@ -1,9 +1,11 @@
 //! The unit that a word nearly is.
 
+use super::dimension::Dimension;
 use super::prefix::{PREFIXES, Prefix};
 use super::table::{FAMILIES, find};
 
-/// Words that are no units here, with the unit that they stand for elsewhere.
+/// Words that are no units here, with the unit that they stand for elsewhere. A compound stands in parentheses, since
+/// the word may stand below a solidus.
 const ELSEWHERE: &[(&str, &str)] = &[
     ("C", "degC"),
     ("\u{ba}C", "degC"),
@@ -37,9 +39,12 @@ const ELSEWHERE: &[(&str, &str)] = &[
     ("kgmol", "kmol"),
     ("kgmole", "kmol"),
     ("lbmole", "lbmol"),
-    ("Nm", "N\u{b7}m"),
-    ("cfm", "ft3/min"),
-    ("lpm", "L/min"),
+    ("Nm", "(N\u{b7}m)"),
+    ("cP", "(mPa\u{b7}s)"),
+    ("tph", "(t/h)"),
+    ("kph", "(km/h)"),
+    ("cfm", "(ft3/min)"),
+    ("lpm", "(L/min)"),
     ("bar_g", "barg"),
     ("bar_a", "bara"),
     ("psi_g", "psig"),
@@ -54,11 +59,27 @@ const ELSEWHERE: &[(&str, &str)] = &[
     ("mol%", "%"),
 ];
 
+/// What is often written onto the end of another unit, with the unit that it is: `kgK`, `m2K`, `kgC`.
+const WRITTEN_ON: &[(&str, &str)] = &[
+    ("K", "K"),
+    ("\u{b0}C", "degC"),
+    ("degC", "degC"),
+    ("C", "degC"),
+    ("\u{b0}F", "degF"),
+    ("degF", "degF"),
+    ("F", "degF"),
+    ("m2", "m2"),
+    ("m3", "m3"),
+    ("m", "m"),
+    ("s", "s"),
+    ("h", "h"),
+];
+
 /// Prefixes that a slip is taken to have meant; the others are rare.
 const COMMON: [i32; 6] = [3, 6, -3, 9, -2, -6];
 
 /// The unit that was probably meant by this word: one that goes by it elsewhere, one in other letter case, one whose
-/// English name or plural it is, or one a letter or two away. What stands behind the unit's letters as a power stays.
+/// English name or plural it is, a product whose parts were run together, or one a letter or two away. What stands behind the unit's letters as a power stays.
 pub(crate) fn nearest_unit(word: &str) -> Option<String> {
     let letters = word.trim_end_matches(|c: char| c.is_ascii_digit());
     let power = word.get(letters.len()..).unwrap_or("");
@@ -66,6 +87,7 @@ pub(crate) fn nearest_unit(word: &str) -> Option<String> {
     elsewhere(word)
         .or_else(|| case_slip(word))
         .or_else(|| named(word))
+        .or_else(|| run_together(word))
         .or_else(|| elsewhere(letters).map(with_power))
         .or_else(|| case_slip(letters).map(with_power))
         .or_else(|| letter_slip(word))
@@ -97,6 +119,15 @@ fn case_slip(word: &str) -> Option<String> {
     slips.min_by_key(|candidate| candidate.chars().zip(word.chars()).filter(|(a, b)| a != b).count())
 }
 
+/// Two units without a product sign, as the product in parentheses: it can stand below a solidus as well.
+fn run_together(word: &str) -> Option<String> {
+    WRITTEN_ON.iter().find_map(|(written, second)| {
+        let first = word.strip_suffix(written)?;
+        let known = find(first.trim_end_matches(|c: char| c.is_ascii_digit())).is_some();
+        known.then(|| format!("({first} {second})"))
+    })
+}
+
 fn letter_slip(word: &str) -> Option<String> {
     let length = word.chars().count();
     if length < 3 {
@@ -111,7 +142,7 @@ fn letter_slip(word: &str) -> Option<String> {
         .map(|(_, candidate)| candidate)
 }
 
-/// Every unit's symbol, plain and with the common prefixes that it takes, what is plain first.
+/// Every unit's symbol, plain and with the common prefixes that it takes, what is plain first. Nobody means a `GK`.
 fn candidates() -> impl Iterator<Item = String> {
     let prefixes = COMMON.iter().filter_map(|ten| PREFIXES.iter().find(|prefix| prefix.ten == *ten));
     let ways = std::iter::once(None).chain(prefixes.map(Some));
@@ -121,7 +152,9 @@ fn candidates() -> impl Iterator<Item = String> {
             entry.spellings().filter_map(move |spelling| match way {
                 None => Some(spelling.to_owned()),
                 Some(prefix) => {
-                    let symbol = prefix.symbols.first().filter(|_| entry.prefixes.admit(prefix))?;
+                    let symbol = prefix.symbols.first().filter(|_| {
+                        entry.prefixes.admit(prefix) && entry.dimension != Dimension::TEMPERATURE
+                    })?;
                     Some(format!("{symbol}{spelling}"))
                 }
             })
@@ -185,10 +218,26 @@ mod tests {
             ("Kelvin", "K"),
             ("tonnes", "t"),
             ("lbs", "lb"),
-            ("Nm", "N\u{b7}m"),
+            ("Nm", "(N\u{b7}m)"),
             ("cc", "cm3"),
         ] {
             assert_eq!(nearest_unit(written).as_deref(), Some(meant), "{written}");
+        }
+    }
+
+    #[test]
+    fn products_run_together_are_parted() {
+        for (written, meant) in [
+            ("kgK", "(kg K)"),
+            ("gK", "(g K)"),
+            ("m2K", "(m2 K)"),
+            ("molK", "(mol K)"),
+            ("kgC", "(kg degC)"),
+            ("kg°C", "(kg degC)"),
+            ("hm2", "(h m2)"),
+        ] {
+            assert_eq!(nearest_unit(written).as_deref(), Some(meant), "{written}");
+            assert!(read_unit(&format!("W/{meant}")).is_ok());
         }
     }
 

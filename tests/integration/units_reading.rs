@@ -168,7 +168,7 @@ fn an_unknown_word_names_its_place_and_the_nearest_unit() {
     let expected = UnitError::Unknown { word: "°X".into(), range: 4..7, nearest: None };
     assert_eq!(error("kJ/(°X)"), expected);
     for (text, meant) in
-        [("C", "degC"), ("F", "degF"), ("kw", "kW"), ("KWh", "kWh"), ("Nm", "N·m"), ("M3", "m3")]
+        [("C", "degC"), ("F", "degF"), ("kw", "kW"), ("KWh", "kWh"), ("Nm", "(N·m)"), ("M3", "m3")]
     {
         let UnitError::Unknown { nearest, .. } = error(text) else { panic!("{text}") };
         assert_eq!(nearest.as_deref(), Some(meant), "{text}");
