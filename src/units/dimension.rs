@@ -1,4 +1,4 @@
-//! The dimension of a quantity: a product of powers of the seven base quantities (ISO 80000-1:2022, 5).
+//! The dimension of a quantity: a product of powers of the seven base quantities (SI Brochure, 9th ed., 2.3.3).
 
 use std::fmt;
 

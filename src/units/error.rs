@@ -46,7 +46,8 @@ pub enum UnitError {
         /// Its place.
         range: Range<usize>,
     },
-    /// A product after a solidus, such as `J/kg·K`: which factors stand below it is unclear (ISO 80000-1:2022, 7.3).
+    /// A product after a solidus, such as `J/kg·K`: which factors stand below it is unclear (NIST SP 811, 2008,
+    /// 6.1.6).
     ProductBelow {
         /// The unclear part.
         word: String,

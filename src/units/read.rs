@@ -40,7 +40,7 @@ fn is_product(c: char) -> bool {
     matches!(c, '\u{b7}' | '\u{22c5}')
 }
 
-pub(super) struct Reader<'a> {
+struct Reader<'a> {
     text: &'a str,
     at: usize,
     depth: usize,

@@ -8,7 +8,7 @@ use crate::units::prefix::Prefixes::{All, Only};
 use crate::units::unit::Zero;
 
 const PASCAL: &str = "SI Brochure, 9th ed. (2019), table 4";
-const GAUGE: &str = "ISO 80000-4:2019, 4-14.2 (gauge pressure)";
+const GAUGE: &str = "ISO 80000-4:2019 (gauge pressure)";
 const ATMOSPHERE: &str = "10th CGPM (1954), resolution 4";
 const SP_811: &str = "NIST SP 811 (2008), app. B.8";
 
