@@ -1,5 +1,9 @@
 //! heatpath: a language and interpreter for thermal process sheets.
 
 pub mod diagnostic;
+pub mod library;
+pub mod report;
+pub mod source;
 pub mod span;
 pub mod syntax;
+pub mod units;

@@ -9,7 +9,7 @@ pub fn nearest<'a>(word: &str, candidates: impl IntoIterator<Item = &'a str>) ->
         .into_iter()
         .filter(|candidate| !candidate.is_empty() && *candidate != word)
         .map(|candidate| (strsim::damerau_levenshtein(&folded, &candidate.to_lowercase()), candidate))
-        .filter(|(edits, candidate)| *edits <= allowed && *edits < candidate.chars().count().max(2))
+        .filter(|(edits, candidate)| *edits <= allowed && *edits < candidate.chars().count())
         .min_by_key(|(edits, candidate)| (*edits, candidate.chars().count().abs_diff(word.chars().count())))
         .map(|(_, candidate)| candidate)
 }
