@@ -1,0 +1,12 @@
+//! The report: one model, several readers.
+//!
+//! In comes a worked sheet, gathered into a [`Report`] that holds everything a reader may show, numbers in SI and as
+//! they are to be shown; out come text and JSON. A renderer reads the model and nothing else. `number.rs` is the only
+//! place that formats numbers.
+
+mod model;
+
+pub use model::{
+    Caution, DataRow, DutyRow, Finding, InputRow, Item, LegKind, LegRow, MixtureRow, Path, PressureBasis, Quantity,
+    Report, RequirementRow, ResultRow, Side, SiteRow, SpeciesRow, StateRow, StepRow, TableColumn, TableRow, TableRows,
+};
