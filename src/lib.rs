@@ -1,9 +1,13 @@
 //! heatpath: a language and interpreter for thermal process sheets.
 
+pub mod check;
 pub mod diagnostic;
 pub mod library;
+pub mod numeric;
+pub mod program;
 pub mod report;
 pub mod source;
 pub mod span;
 pub mod syntax;
+pub mod thermo;
 pub mod units;

@@ -5,7 +5,7 @@ use crate::library::Loader;
 use crate::program::{DutyId, Entry, Head, Program, QuantityId, Remark, Site, SpeciesId, StateId, StepId};
 use crate::source::Sources;
 use crate::span::{FileId, Span};
-use crate::syntax::tree::{Item, Statement};
+use crate::syntax::tree::{Item, Statement, Word};
 use crate::syntax::{Parsed, parse_sheet};
 use crate::units::Calorie;
 use crate::units::constants::STANDARD_ATMOSPHERE;
@@ -65,6 +65,12 @@ pub(super) struct Checker<'a> {
     pub(super) calories: Vec<(Calorie, Span)>,
     pub(super) head_seen: Option<Span>,
     pub(super) site_seen: Option<Span>,
+    /// Derived values that are not known, `let x = ?`.
+    pub(super) open_values: Vec<Word>,
+    /// Unknowns that a `settle` names.
+    pub(super) settled: BTreeSet<String>,
+    /// The species of files already read, by identity.
+    pub(super) files: BTreeMap<String, super::import::FileSpecies>,
     /// The identities of the files being read, outermost first.
     pub(super) reading: Vec<String>,
 }
@@ -104,6 +110,9 @@ impl<'a> Checker<'a> {
             calories: Vec::new(),
             head_seen: None,
             site_seen: None,
+            open_values: Vec::new(),
+            settled: BTreeSet::new(),
+            files: BTreeMap::new(),
             reading: vec![identity],
         }
     }
@@ -119,7 +128,7 @@ impl<'a> Checker<'a> {
             Statement::Species(block) => self.species_statement(block),
             Statement::Mixture(mixture) => self.mixture(mixture, item.span),
             Statement::Site(datum, suffixes) => self.site(datum, suffixes, item.span),
-            Statement::Input(input) => self.input(input, item.span),
+            Statement::Input(input) => self.input(input),
             Statement::State(state) => self.state(state, item.span),
             Statement::Step(step) => self.step(step, item.span),
             Statement::Duty(duty) => self.duty(duty, item.span),
@@ -171,7 +180,7 @@ fn empty_program() -> Program {
     Program {
         head: Head::default(),
         remarks: Vec::new(),
-        site: Site { atmosphere: STANDARD_ATMOSPHERE, text: None, source: None, interval: None },
+        site: Site { atmosphere: STANDARD_ATMOSPHERE, text: None, unit: None, source: None, interval: None },
         quantities: Vec::new(),
         species: Vec::new(),
         mixtures: Vec::new(),

@@ -190,7 +190,7 @@ impl Checker<'_> {
 
     /// The constituents of a state that a species' name means.
     fn constituents_named(&mut self, state: &crate::program::State, name: &SpeciesName) -> Option<Vec<usize>> {
-        let Some(Material::Species(species)) = self.material(name)? else {
+        let Material::Species(species) = self.material(name)? else {
             self.report(
                 Diagnostic::new(Code::UnknownSpecies, format!("`{}` is no species", name.name))
                     .label(name.span, "a species is wanted here")
@@ -331,7 +331,7 @@ impl Checker<'_> {
 
     /// `M(Zn)`.
     pub(super) fn molar_mass(&mut self, name: &SpeciesName, span: Span) -> Option<Expr> {
-        let Some(Material::Species(id)) = self.material(name)? else {
+        let Material::Species(id) = self.material(name)? else {
             self.report(
                 Diagnostic::new(Code::NotAQuantity, format!("`{}` is a mixture, and `M` takes a species", name.name))
                     .label(name.span, "a mixture here")

@@ -10,6 +10,7 @@ mod call;
 mod checker;
 mod condition;
 mod constant;
+mod curve_error;
 mod datum;
 mod duty;
 mod expression;

@@ -55,14 +55,7 @@ impl Checker<'_> {
     pub(super) fn look_up(&mut self, name: &str, span: Span) -> Option<Entity> {
         match self.names.get(name) {
             Some(Declared { what: Entity::Broken, .. }) => None,
-            Some(declared) => {
-                let entity = declared.what;
-                if self.materials.contains_key(name) && !self.materials_only(name) {
-                    self.report_either(name, span);
-                    return None;
-                }
-                Some(entity)
-            }
+            Some(declared) => Some(declared.what),
             None if self.broken.contains(name) => None,
             None => {
                 let found = self.unknown_name(name, span);
@@ -70,11 +63,6 @@ impl Checker<'_> {
                 None
             }
         }
-    }
-
-    /// Whether the material's name is broken, so that nothing is said of it.
-    fn materials_only(&self, name: &str) -> bool {
-        self.broken.contains(name)
     }
 
     /// A name that both namespaces hold, where either could be meant.

@@ -27,6 +27,8 @@ pub struct Site {
     pub atmosphere: f64,
     /// As written, where it is said.
     pub text: Option<String>,
+    /// The unit that it is written in.
+    pub unit: Option<Unit>,
     /// Where it comes from.
     pub source: Option<String>,
     /// Its interval.
@@ -115,6 +117,8 @@ pub struct Requirement {
     pub text: String,
     /// Why.
     pub because: Option<String>,
+    /// Where it stands.
+    pub span: Span,
 }
 
 /// A column of a table.

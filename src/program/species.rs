@@ -62,6 +62,8 @@ pub struct PhaseInfo {
     pub class: PhaseClass,
     /// The symbol that stands in parentheses after the species.
     pub symbol: String,
+    /// Its density in kg/m³, where it is one constant.
+    pub constant_density: Option<f64>,
 }
 
 /// `allow Zn(l) to 1250 K because "..."`.

@@ -69,6 +69,8 @@ pub enum Condition {
     Value(Expr),
     /// That of another state.
     Of(StateId),
+    /// That of several states, which must be one; `true` where the site's atmosphere is among them.
+    Agreed(Vec<StateId>, bool),
     /// The site's atmosphere.
     Atmosphere,
     /// Not known; settled by a step.
@@ -101,18 +103,13 @@ pub struct State {
 }
 
 impl State {
-    /// The states that it is made from.
-    pub fn origins(&self) -> Vec<StateId> {
-        fn gather(source: &Source, into: &mut Vec<StateId>) {
-            match source {
-                Source::Fresh { .. } => {}
-                Source::Whole(state) => into.push(*state),
-                Source::PartOf { of, .. } => gather(of, into),
-                Source::Sum(parts) => parts.iter().for_each(|part| gather(part, into)),
-            }
+    /// The states that matter is made from, in order.
+    pub fn origins_of(source: &Source) -> Vec<StateId> {
+        match source {
+            Source::Fresh { .. } => Vec::new(),
+            Source::Whole(state) => vec![*state],
+            Source::PartOf { of, .. } => State::origins_of(of),
+            Source::Sum(parts) => parts.iter().flat_map(State::origins_of).collect(),
         }
-        let mut states = Vec::new();
-        gather(&self.source, &mut states);
-        states
     }
 }

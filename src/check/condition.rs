@@ -1,0 +1,221 @@
+//! Temperatures, pressures and shares of a state.
+
+use super::checker::Checker;
+use super::matter::Gathered;
+use crate::diagnostic::{Code, Diagnostic};
+use crate::program::{Condition, Expr, State, StateId};
+use crate::span::Span;
+use crate::syntax::tree::{self, ConditionKind, Expression, Word};
+use crate::thermo::{PhaseClass, Pin};
+use crate::units::Dimension;
+
+/// The conditions of a state.
+pub(super) struct Conditions {
+    pub(super) temperature: Condition,
+    pub(super) pressure: Condition,
+    pub(super) share: Option<(usize, Expr)>,
+}
+
+/// The conditions while they are read.
+#[derive(Default)]
+struct Read {
+    temperature: Option<(Condition, Span)>,
+    pressure: Option<(Condition, Span)>,
+    share: Option<((usize, Expr), Span)>,
+    failed: bool,
+}
+
+impl Checker<'_> {
+    pub(super) fn conditions(
+        &mut self,
+        conditions: &[tree::Condition],
+        matter: &Gathered,
+        name: &Word,
+    ) -> Option<Conditions> {
+        let mut read = Read::default();
+        for condition in conditions {
+            if self.condition(condition, matter, &mut read).is_none() {
+                read.failed = true;
+            }
+        }
+        for condition in conditions.iter().filter(|condition| condition.kind == ConditionKind::Unknown) {
+            self.unknown_condition(condition.span, &mut read);
+        }
+        if read.failed {
+            return None;
+        }
+        let origins = origins_of(matter);
+        let temperature = match read.temperature {
+            Some((temperature, _)) => temperature,
+            None => self.unsaid_temperature(matter, &origins, name)?,
+        };
+        let pressure = match read.pressure {
+            Some((pressure, _)) => pressure,
+            None => unsaid_pressure(matter, &origins),
+        };
+        Some(Conditions { temperature, pressure, share: read.share.map(|(share, _)| share) })
+    }
+
+    fn condition(&mut self, condition: &tree::Condition, matter: &Gathered, read: &mut Read) -> Option<()> {
+        match &condition.kind {
+            ConditionKind::Unknown => Some(()),
+            ConditionKind::Value(value) => self.value_condition(value, condition.span, read),
+            ConditionKind::Share(value, phase) => self.share_condition(value, phase, matter, read),
+            ConditionKind::Saturated(phase) => self.saturated(phase, condition.span, matter, read),
+            ConditionKind::Equilibrium(name) => {
+                self.material(name);
+                self.later_equilibrium(condition.span);
+                None
+            }
+        }
+    }
+
+    fn value_condition(&mut self, value: &Expression, span: Span, read: &mut Read) -> Option<()> {
+        let wanted = [Dimension::TEMPERATURE, Dimension::PRESSURE];
+        let value = self.wanted(value, &wanted, "a temperature or a pressure of a state")?;
+        let hot = value.dimension == Dimension::TEMPERATURE;
+        self.point(&value, if hot { "the temperature of a state" } else { "the pressure of a state" })?;
+        let slot = if hot { &mut read.temperature } else { &mut read.pressure };
+        if let Some((_, first)) = slot {
+            let first = *first;
+            self.said_twice(if hot { "temperature" } else { "pressure" }, span, first);
+            return None;
+        }
+        *slot = Some((Condition::Value(value), span));
+        Some(())
+    }
+
+    fn said_twice(&mut self, what: &str, span: Span, first: Span) {
+        self.report(
+            Diagnostic::new(Code::ConditionTwice, format!("a second {what} for one state"))
+                .label(span, "said again here")
+                .label(first, "said first here")
+                .help("keep one of the two"),
+        );
+    }
+
+    /// `?` is the temperature, or where that is said already the pressure.
+    fn unknown_condition(&mut self, span: Span, read: &mut Read) {
+        if read.temperature.is_none() {
+            read.temperature = Some((Condition::Unknown(span), span));
+        } else if let Some((_, first)) = &read.pressure {
+            let first = *first;
+            self.said_twice("pressure", span, first);
+            read.failed = true;
+        } else {
+            read.pressure = Some((Condition::Unknown(span), span));
+        }
+    }
+
+    /// `40 % liquid`: how much has changed; of vapour without a temperature, at the boiling point.
+    fn share_condition(
+        &mut self,
+        value: &Expression,
+        phase: &Word,
+        matter: &Gathered,
+        read: &mut Read,
+    ) -> Option<()> {
+        let value = self.wanted(value, &[Dimension::ONE], "a share of a phase")?;
+        let span = value.span.to(phase.span);
+        let at = self.phase_of_share(phase, matter, span)?;
+        if let Some((_, first)) = &read.share {
+            let first = *first;
+            self.said_twice("share", span, first);
+            return None;
+        }
+        read.share = Some(((at, value), span));
+        if matches!(phase.text.as_str(), "vapour" | "vapor") && read.temperature.is_none() {
+            read.temperature = Some((Condition::Boiling, span));
+        }
+        Some(())
+    }
+
+    /// The phase of the one species that a share is said of.
+    fn phase_of_share(&mut self, phase: &Word, matter: &Gathered, span: Span) -> Option<usize> {
+        let [only] = matter.constituents.as_slice() else {
+            self.share_unplaced(span, "a share of a phase in a state of several species", "give the species their state symbols instead");
+            return None;
+        };
+        if only.pin != Pin::Stable {
+            let name = self.constituent_name(only);
+            let message = format!("a share of a phase, while `{name}` is in one phase");
+            self.share_unplaced(span, &message, "leave out the state symbol, or the share");
+            return None;
+        }
+        self.phase_word(only.species, &phase.text, phase.span)
+    }
+
+    fn share_unplaced(&mut self, span: Span, message: &str, help: &str) {
+        self.report(
+            Diagnostic::new(Code::ShareWithoutPlateau, message.to_owned())
+                .label(span, "no one transition that it belongs to")
+                .help(help),
+        );
+    }
+
+    /// `saturated vapour`, `saturated liquid`: at the boiling point of the one species.
+    fn saturated(&mut self, phase: &Word, span: Span, matter: &Gathered, read: &mut Read) -> Option<()> {
+        if !matches!(phase.text.as_str(), "vapour" | "vapor" | "liquid") {
+            let message = format!("saturated `{}`", phase.text);
+            self.share_unplaced(span, &message, "write `saturated vapour` or `saturated liquid`");
+            return None;
+        }
+        let at = self.phase_of_share(phase, matter, span)?;
+        let species = matter.constituents.first()?.species;
+        let boils = self.program.species.get(species.0)?.phases.windows(2).any(|pair| {
+            pair[0].class == PhaseClass::Liquid && pair[1].class == PhaseClass::Gas
+        });
+        if !boils {
+            self.share_unplaced(span, "a saturated state of a species that does not boil", "add `boiling at ... takes ...` to its block");
+            return None;
+        }
+        if let Some((_, first)) = &read.temperature {
+            let first = *first;
+            self.report(
+                Diagnostic::new(Code::ConditionTwice, "a temperature for a saturated state")
+                    .label(span, "takes its temperature from the pressure")
+                    .label(first, "said here")
+                    .help("leave the temperature out, or say `100 % vapour` at the boiling point"),
+            );
+            return None;
+        }
+        let one = Expr {
+            span,
+            dimension: Dimension::ONE,
+            kind: crate::units::Kind::Plain,
+            node: crate::program::Node::Constant(1.0),
+        };
+        read.temperature = Some((Condition::Boiling, span));
+        read.share = Some(((at, one), span));
+        Some(())
+    }
+
+    fn unsaid_temperature(&mut self, matter: &Gathered, origins: &[StateId], name: &Word) -> Option<Condition> {
+        if let ([one], false) = (origins, matter.fresh) {
+            return Some(Condition::Of(*one));
+        }
+        self.report(
+            Diagnostic::new(Code::TemperatureMissing, format!("the state `{}` has no temperature", name.text))
+                .label(name.span, "at which temperature?")
+                .help(format!("add `at 25 degC`; `at ?` where a step settles `{}.T`", name.text)),
+        );
+        None
+    }
+}
+
+/// The states that matter is made from, each once.
+fn origins_of(matter: &Gathered) -> Vec<StateId> {
+    let mut origins = State::origins_of(&matter.source);
+    origins.sort_unstable();
+    origins.dedup();
+    origins
+}
+
+/// The pressure of the states that a state is made from; of fresh material the site's atmosphere.
+fn unsaid_pressure(matter: &Gathered, origins: &[StateId]) -> Condition {
+    match (origins, matter.fresh) {
+        ([], _) => Condition::Atmosphere,
+        ([one], false) => Condition::Of(*one),
+        (several, fresh) => Condition::Agreed(several.to_vec(), fresh),
+    }
+}

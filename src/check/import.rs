@@ -1,0 +1,147 @@
+//! `use`: species of the library, of a file beside the sheet, and the steam tables.
+
+use super::checker::{Checker, Declared, Material};
+use crate::diagnostic::{Code, Diagnostic, nearest};
+use crate::library::{LoadError, Loaded, families, family};
+use crate::program::Species;
+use crate::span::Span;
+use crate::syntax::parse_sheet;
+use crate::syntax::tree::{SpeciesName, Statement, Text, Use, UseFrom, Word};
+
+/// The species of a file, or `None` where the file is at fault and that is reported.
+pub(super) type FileSpecies = Option<Vec<Species>>;
+
+impl Checker<'_> {
+    pub(super) fn import(&mut self, line: &Use, span: Span) {
+        let found = match &line.from {
+            UseFrom::Family(word) if word.text == "iapws97" => {
+                self.later_steam(span);
+                None
+            }
+            UseFrom::Family(word) => self.family(word),
+            UseFrom::File(path) => self.file(path),
+        };
+        for name in &line.names {
+            let word = Word { text: name.name.clone(), span: name.span };
+            let species = found.as_ref().and_then(|known| self.taken(name, known, line));
+            self.enter_species(&word, species);
+        }
+    }
+
+    fn taken(&mut self, name: &SpeciesName, known: &[Species], line: &Use) -> Option<Species> {
+        if let Some(symbol) = &name.symbol {
+            self.report(
+                Diagnostic::new(Code::NotInFamily, format!("`{}` with a state symbol cannot be taken", name.to_text()))
+                    .label(symbol.span, "a species is taken with all its phases")
+                    .help(format!("write `use {} from ...`", name.name)),
+            );
+            return None;
+        }
+        if let Some(species) = known.iter().find(|species| species.name == name.name) {
+            return Some(species.clone());
+        }
+        let place = match &line.from {
+            UseFrom::Family(word) => format!("the family `{}`", word.text),
+            UseFrom::File(text) => format!("`{}`", text.text),
+        };
+        let found = Diagnostic::new(Code::NotInFamily, format!("{place} holds no `{}`", name.name))
+            .label(name.span, "not there");
+        let names = || known.iter().map(|species| species.name.as_str());
+        let help = match nearest(&name.name, names()) {
+            Some(near) => format!("did you mean `{near}`?"),
+            None => format!("it holds {}", names().take(20).collect::<Vec<_>>().join(", ")),
+        };
+        self.report(found.help(help));
+        None
+    }
+
+    fn family(&mut self, word: &Word) -> FileSpecies {
+        let Some(text) = family(&word.text) else {
+            let found = Diagnostic::new(Code::UnknownFamily, format!("no family `{}` in the library", word.text))
+                .label(word.span, "unknown");
+            let known: Vec<&str> = families().collect();
+            let help = match nearest(&word.text, known.iter().copied()) {
+                Some(near) => format!("did you mean `{near}`?"),
+                None if known.is_empty() => {
+                    "this version ships no families: write a `species` block, or use one from a file: `from \"metals.heat\"`".to_owned()
+                }
+                None => format!("families: {}", known.join(", ")),
+            };
+            self.report(found.help(help));
+            return None;
+        };
+        let identity = format!("library:{}", word.text);
+        let loaded = Loaded { identity, name: format!("{}.heat", word.text), text: text.to_owned() };
+        self.species_of(&loaded, word.span)
+    }
+
+    fn file(&mut self, path: &Text) -> FileSpecies {
+        let from = self.reading.last().cloned().unwrap_or_default();
+        match self.loader.load(&from, &path.text) {
+            Ok(loaded) => self.species_of(&loaded, path.span),
+            Err(LoadError::Outside) => {
+                self.report(
+                    Diagnostic::new(Code::PathOutside, format!("`{}` lies outside the sheet's folder", path.text))
+                        .label(path.span, "a sheet uses files of its own folder only")
+                        .help("copy the file beside the sheet and name it without `..` or a leading `/`"),
+                );
+                None
+            }
+            Err(LoadError::Unreadable(why)) => {
+                self.report(
+                    Diagnostic::new(Code::ImportUnreadable, format!("`{}` cannot be opened: {why}", path.text))
+                        .label(path.span, "used here")
+                        .help("the path counts from the file that uses it"),
+                );
+                None
+            }
+        }
+    }
+
+    /// The species of a loaded file; each file is read once.
+    fn species_of(&mut self, loaded: &Loaded, span: Span) -> FileSpecies {
+        if self.reading.contains(&loaded.identity) {
+            self.report(
+                Diagnostic::new(Code::ImportCycle, format!("`{}` uses itself, by way of others", loaded.name))
+                    .label(span, "this closes the circle")
+                    .help("move the species that both need into a third file"),
+            );
+            return None;
+        }
+        if let Some(known) = self.files.get(&loaded.identity) {
+            return known.clone();
+        }
+        let read = self.read_species(loaded);
+        self.files.insert(loaded.identity.clone(), read.clone());
+        read
+    }
+
+    fn read_species(&mut self, loaded: &Loaded) -> FileSpecies {
+        let file = self.sources.add(loaded.name.clone(), loaded.text.clone());
+        let parsed = parse_sheet(file, &loaded.text);
+        let mut inner = Checker::new(self.sources, self.loader, loaded.identity.clone());
+        inner.reading = self.reading.iter().cloned().chain([loaded.identity.clone()]).collect();
+        inner.files = std::mem::take(&mut self.files);
+        inner.broken.extend(parsed.broken);
+        inner.diagnostics = parsed.diagnostics;
+        for item in &parsed.tree.items {
+            match &item.statement {
+                Statement::Species(block) => {
+                    let species = inner.species(block, Some(loaded.name.clone()));
+                    inner.enter_species(&block.name, species);
+                }
+                Statement::Use(line) => inner.import(line, item.span),
+                _ => {}
+            }
+        }
+        let Checker { diagnostics, materials, program, files, .. } = inner;
+        self.files = files;
+        let failed = diagnostics.iter().any(Diagnostic::is_error);
+        self.diagnostics.extend(diagnostics);
+        let usable = |declared: &Declared<Material>| match declared.what {
+            Material::Species(id) => program.species.get(id.0).cloned(),
+            _ => None,
+        };
+        (!failed).then(|| materials.values().filter_map(usable).collect())
+    }
+}
