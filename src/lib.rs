@@ -1,4 +1,5 @@
 //! heatpath: a language and interpreter for thermal process sheets.
 
 pub mod diagnostic;
+pub mod numeric;
 pub mod span;
