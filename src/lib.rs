@@ -3,3 +3,4 @@
 pub mod diagnostic;
 pub mod numeric;
 pub mod span;
+pub mod thermo;
