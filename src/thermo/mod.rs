@@ -9,6 +9,8 @@ pub mod composition;
 pub mod constants;
 pub mod element;
 pub mod heat_capacity;
+pub mod ideal_gas;
+pub mod path_work;
 mod si;
 
 pub use composition::{Composition, FormulaError};
