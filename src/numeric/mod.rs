@@ -14,4 +14,4 @@ pub mod root;
 pub use formula::{Formula, FormulaError, Op};
 pub use interpolation::{Interpolant, InterpolantError, Shape};
 pub use quadrature::{Integral, QuadratureFailure, Tolerance, integrate};
-pub use root::{Root, RootFailure, find_root};
+pub use root::{Root, RootFailure, find_rising_root, find_root};

@@ -92,6 +92,45 @@ pub fn find_root(mut f: impl FnMut(f64) -> f64, a: f64, b: f64, tolerance: f64) 
     Err(RootFailure::NotConverged { x: b, residual: fb })
 }
 
+/// Finds the root of a rising function between `a` and `b` (`a < b`, taken as bracketing) by Newton's method from
+/// `start`, halving wherever a step would leave the bracket. `f` gives the value and the slope. It stops when a step
+/// no longer moves the place, or when the steps, already below 1e-9 of it, cease to shrink: there rounding has the say.
+///
+/// # Errors
+/// [`RootFailure`] when the function is not a number or the steps run out.
+pub fn find_rising_root(
+    mut f: impl FnMut(f64) -> (f64, f64),
+    (mut a, mut b): (f64, f64),
+    start: f64,
+) -> Result<Root, RootFailure> {
+    let mut x = if start > a && start < b { start } else { a + 0.5 * (b - a) };
+    let mut last = f64::INFINITY;
+    let mut residual = f64::NAN;
+    for iterations in 1..=STEP_LIMIT {
+        let (value, slope) = f(x);
+        residual = value;
+        if value.is_nan() {
+            return Err(RootFailure::NotFinite { at: x });
+        }
+        if value > 0.0 {
+            b = x
+        } else {
+            a = x
+        }
+        let newton = x - value / slope;
+        let next = if newton >= a && newton <= b { newton } else { a + 0.5 * (b - a) };
+        let step = (next - x).abs();
+        let rounding = step < 1e-9 * x.abs() && step >= last;
+        if value == 0.0 || rounding || step <= f64::EPSILON * x.abs() {
+            let x = if rounding { x } else { next };
+            return Ok(Root { x, residual, iterations, evaluations: iterations });
+        }
+        last = step;
+        x = next;
+    }
+    Err(RootFailure::NotConverged { x, residual })
+}
+
 /// The step from `b` that inverse interpolation through the known points proposes.
 fn interpolated((a, fa): (f64, f64), (b, fb): (f64, f64), (c, fc): (f64, f64)) -> Option<f64> {
     let s = fb / fa;
@@ -138,6 +177,18 @@ mod tests {
             assert!(root.evaluations <= 60, "case {i}: {root:?}");
             assert!(find_root(f, b, a, 0.0).unwrap().residual.abs() < 1e-12, "case {i} reversed");
         }
+    }
+
+    #[test]
+    fn newton_agrees_with_the_closed_form() {
+        // x² = 2 from both sides, and a curve with a kink at 1 whose root is 1.5: 3(x - 1) = 1.5.
+        for start in [0.01, 1.9, 5.0] {
+            let root = find_rising_root(|x| (x * x - 2.0, 2.0 * x), (0.0, 2.0), start).unwrap();
+            assert!((root.x - std::f64::consts::SQRT_2).abs() <= 4.0 * f64::EPSILON, "{root:?}");
+        }
+        let kinked =
+            |x: f64| if x < 1.0 { (0.1 * (x - 1.0) - 1.5, 0.1) } else { (3.0 * (x - 1.0) - 1.5, 3.0) };
+        assert_eq!(find_rising_root(kinked, (0.0, 10.0), 0.5).unwrap().x, 1.5);
     }
 
     #[test]

@@ -7,12 +7,19 @@
 
 pub mod composition;
 pub mod constants;
+pub mod curve;
 pub mod element;
 pub mod heat_capacity;
 pub mod ideal_gas;
 pub mod path_work;
+pub mod settle;
 mod si;
 
 pub use composition::{Composition, FormulaError};
+pub use curve::{Allowance, CurveData, CurveError, HeatingCurve, LocateError, PhaseClass, Pin, Place, Side};
 pub use element::Element;
 pub use heat_capacity::{Basis, HeatCapacity, HeatCapacityError, MaierKelley};
+pub use settle::{
+    Part, SettleError, Settled, Unreachable, temperature_for_enthalpy, temperature_for_internal_energy,
+    temperature_isentropic,
+};

@@ -237,6 +237,14 @@ impl HeatCapacity {
                 Law::Formula { formula, from } => quadrature(|t| formula.eval(t) / t, *from, t),
             }
     }
+
+    /// `(a, b)` in J/(kg K) and J/(kg K²) when cp is `a + b T`.
+    pub(crate) fn straight_line(&self) -> Option<(f64, f64)> {
+        match &self.law {
+            Law::Powers(powers) => powers.straight_line().map(|(a, b)| (a * self.factor, b * self.factor)),
+            Law::Table(_) | Law::Formula { .. } => None,
+        }
+    }
 }
 
 fn interpolated(points: &[(f64, f64)], shape: Shape) -> Result<Interpolant, HeatCapacityError> {

@@ -148,6 +148,17 @@ impl Powers {
         }
         sum
     }
+
+    /// `(a, b)` when the law is `a + b T` and nothing else.
+    pub(super) fn straight_line(&self) -> Option<(f64, f64)> {
+        let alone = self.falling.used == 0
+            && self.inverse == 0.0
+            && self.root == 0.0
+            && self.inverse_root == 0.0
+            && self.other.is_empty();
+        let [a, b, ..] = self.rising.law;
+        (alone && self.rising.used <= 2).then_some((a, b))
+    }
 }
 
 /// The place of a whole exponent, counted from zero.

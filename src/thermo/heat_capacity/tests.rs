@@ -116,6 +116,9 @@ const ALUMINIUM: [Interval; 1] = [(
     [-62518.1143, 634.393435, -0.713188382, 0.0108872528, -1.45874182e-5, 9.96116088e-9, -1.77492801e-12],
 )];
 
+/// A species, its intervals and points `(T, H(T) - H(298.15 K))`.
+type Case<'a> = (&'a str, &'a [Interval], &'a [(f64, f64)]);
+
 /// H(T) - H(298.15 K) in J/mol, summed over the intervals.
 fn molar_enthalpy(intervals: &[Interval], t: f64) -> f64 {
     intervals
@@ -131,7 +134,7 @@ fn molar_enthalpy(intervals: &[Interval], t: f64) -> f64 {
 #[test]
 fn published_coefficients_give_the_published_enthalpies() {
     // Expected: the NASA 9-term records' own enthalpies with R = 8.314510 J/(mol K), to the hundredth of a J/mol.
-    let cases: [(&str, &[Interval], &[(f64, f64)]); 5] = [
+    let cases: [Case; 5] = [
         (
             "O2",
             &O2,
