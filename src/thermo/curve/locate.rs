@@ -1,0 +1,180 @@
+//! From a temperature to a place on the curve.
+
+use uom::si::f64::{Pressure, ThermodynamicTemperature};
+
+use super::assemble::HeatingCurve;
+use super::data::PhaseClass;
+use super::place::{Allowance, Pin, Place, Side};
+use super::segment::Body;
+use super::track::{Limits, Track};
+use crate::thermo::si::typed;
+
+/// Within how many kelvin of a transition the side has to be named.
+const TRANSITION_BAND: f64 = 0.5;
+
+/// Why a temperature has no place on a curve; phases by their index.
+#[derive(Debug, Clone, Copy, PartialEq)]
+#[allow(missing_docs)]
+pub enum LocateError {
+    /// The species has no such phase.
+    NoSuchPhase,
+    /// A temperature that is not above 0 K, or no number.
+    NotATemperature,
+    /// Within 0.5 K of a transition, and no side named.
+    OnTransition { temperature: ThermodynamicTemperature, below: usize, above: usize },
+    /// Outside the data of the phase.
+    OutsideRange { phase: usize, lo: ThermodynamicTemperature, hi: ThermodynamicTemperature },
+    /// Above the temperature at which the species decomposes.
+    Decomposes { at: ThermodynamicTemperature },
+    /// Across the boiling point at a pressure where it does not hold.
+    BoilingPressure { temperature: ThermodynamicTemperature },
+    /// A side named where no transition of that phase is near.
+    NoTransition,
+    /// A share that is not from 0 to 1.
+    ShareOutOfBounds,
+}
+
+impl HeatingCurve {
+    /// The place at `temperature` and `pressure` of the phase that `pin` says. Within 0.5 K of a transition on the way a
+    /// `side` is wanted, and the place is on the transition itself; elsewhere a side is refused.
+    ///
+    /// # Errors
+    /// [`LocateError`].
+    pub fn locate(
+        &self,
+        temperature: ThermodynamicTemperature,
+        pressure: Pressure,
+        pin: Pin,
+        side: Option<Side>,
+        allowance: &Allowance,
+    ) -> Result<Place, LocateError> {
+        let t = temperature.value;
+        let track = self.track(pin).ok_or(LocateError::NoSuchPhase)?;
+        if !(t > 0.0 && t.is_finite()) {
+            return Err(LocateError::NotATemperature);
+        }
+        if let Some((at, link)) = nearest_point(track, t, side) {
+            return self.on_point(track, (at, link), side, (pressure.value, allowance));
+        }
+        if side.is_some() {
+            return Err(LocateError::NoTransition);
+        }
+        self.check_limits(track, t, pressure.value, allowance)?;
+        Ok(self.place_on(track, t, 0.0))
+    }
+
+    /// The place at a temperature that was worked out and not written: no transition is too near. Exactly on a point
+    /// transition `upper_share` says how far along it is, the lower phase alone if none is given.
+    ///
+    /// # Errors
+    /// [`LocateError`], but never `OnTransition` or `NoTransition`.
+    pub fn place(
+        &self,
+        temperature: ThermodynamicTemperature,
+        pressure: Pressure,
+        pin: Pin,
+        upper_share: Option<f64>,
+        allowance: &Allowance,
+    ) -> Result<Place, LocateError> {
+        let t = temperature.value;
+        let track = self.track(pin).ok_or(LocateError::NoSuchPhase)?;
+        if !(t > 0.0 && t.is_finite()) {
+            return Err(LocateError::NotATemperature);
+        }
+        let share = upper_share.unwrap_or(0.0);
+        if !(0.0..=1.0).contains(&share) {
+            return Err(LocateError::ShareOutOfBounds);
+        }
+        self.check_limits(track, t, pressure.value, allowance)?;
+        match track.points.iter().find(|(at, _)| *at == t) {
+            Some(&(at, link)) => Ok(self.plateau(at, link, share)),
+            None => Ok(self.place_on(track, t, 0.0)),
+        }
+    }
+
+    fn on_point(
+        &self,
+        track: &Track,
+        (at, link): (f64, usize),
+        side: Option<Side>,
+        (pressure, allowance): (f64, &Allowance),
+    ) -> Result<Place, LocateError> {
+        let boils = self.phases.get(link + 1).is_some_and(|upper| upper.class == PhaseClass::Gas);
+        let limits = self.limits(track, allowance, pressure);
+        if boils && (limits.gas_only || limits.condensed_only) {
+            return Err(LocateError::BoilingPressure { temperature: typed(at) });
+        }
+        let Some(Side { phase, share }) = side else {
+            return Err(LocateError::OnTransition { temperature: typed(at), below: link, above: link + 1 });
+        };
+        if !(0.0..=1.0).contains(&share) {
+            return Err(LocateError::ShareOutOfBounds);
+        }
+        if limits.decomposes && at > limits.hi {
+            return Err(LocateError::Decomposes { at: typed(limits.hi) });
+        }
+        Ok(self.plateau(at, link, if phase == link { 1.0 - share } else { share }))
+    }
+
+    fn plateau(&self, temperature: f64, link: usize, share: f64) -> Place {
+        let segment = self.joints.get(link).map_or(0, |joint| joint.segments.start);
+        Place { segment, temperature, share, extrapolated: false }
+    }
+
+    fn check_limits(
+        &self,
+        track: &Track,
+        t: f64,
+        pressure: f64,
+        allowance: &Allowance,
+    ) -> Result<(), LocateError> {
+        let data = self.data_limits(track, allowance);
+        if t < data.lo || t > data.hi {
+            return Err(self.outside(track, t, &data));
+        }
+        let limits = self.limits(track, allowance, pressure);
+        let across_up = limits.condensed_only && t > limits.hi;
+        let across_down = limits.gas_only && t < limits.lo;
+        match track.boiling {
+            Some(boiling) if across_up || across_down => {
+                Err(LocateError::BoilingPressure { temperature: typed(boiling) })
+            }
+            _ => Ok(()),
+        }
+    }
+
+    fn outside(&self, track: &Track, t: f64, limits: &Limits) -> LocateError {
+        if limits.decomposes && t > limits.hi {
+            return LocateError::Decomposes { at: typed(limits.hi) };
+        }
+        let (phase, (lo, hi)) = if t < limits.lo {
+            (track.first, (limits.lo, self.phases.get(track.first).map_or(limits.hi, |phase| phase.hi)))
+        } else {
+            (track.last, (self.phases.get(track.last).map_or(limits.lo, |phase| phase.lo), limits.hi))
+        };
+        LocateError::OutsideRange { phase, lo: typed(lo), hi: typed(hi) }
+    }
+
+    /// The place on a track at a temperature within its limits.
+    #[inline]
+    pub(in crate::thermo) fn place_on(&self, track: &Track, t: f64, share: f64) -> Place {
+        let piece = track.pieces.iter().find(|piece| t < piece.hi).or(track.pieces.last());
+        let segment = piece.map_or(0, |piece| piece.segment);
+        let inside = self.segments.get(segment).is_some_and(|segment| t >= segment.lo && t <= segment.hi);
+        let decomposed = self.decomposes_at.is_some_and(|at| t > at);
+        let share = match self.segments.get(segment).map(|segment| (&segment.body, segment.lo)) {
+            Some((Body::Melting { melting, .. }, lo)) => melting.share_at(t - lo).clamp(0.0, 1.0),
+            _ => share,
+        };
+        let edge = piece.is_some_and(|piece| t >= piece.lo && t <= piece.hi);
+        Place { segment, temperature: t, share, extrapolated: !(inside || edge) || decomposed }
+    }
+}
+
+/// The nearest point transition within the band; with a side, one that its phase takes part in.
+fn nearest_point(track: &Track, t: f64, side: Option<Side>) -> Option<(f64, usize)> {
+    let takes_part = |link: usize| side.is_none_or(|side| side.phase == link || side.phase == link + 1);
+    let near =
+        track.points.iter().filter(|(at, link)| (t - at).abs() <= TRANSITION_BAND && takes_part(*link));
+    near.copied().min_by(|a, b| (t - a.0).abs().total_cmp(&(t - b.0).abs()))
+}
