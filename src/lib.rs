@@ -2,8 +2,10 @@
 
 pub mod check;
 pub mod diagnostic;
+pub mod eval;
 pub mod library;
 pub mod numeric;
+pub mod plan;
 pub mod program;
 pub mod report;
 pub mod source;

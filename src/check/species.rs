@@ -106,7 +106,7 @@ impl Checker<'_> {
             molar_mass: draft.molar_mass,
             phases: infos,
             absolute: curve.absolute(),
-            curve,
+            curve: std::sync::Arc::new(curve),
             data: draft.data,
             allowances: Vec::new(),
             remarks: remarks.collect(),
@@ -484,7 +484,7 @@ impl Checker<'_> {
 }
 
 fn transition_range(checker: &mut Checker<'_>, transition: &TransitionEntry) -> Option<(f64, f64)> {
-    let mut read = |datum: &tree::Datum| {
+    let read = |datum: &tree::Datum| {
         let unit = datum.literal.unit.as_ref()?;
         let unit = crate::units::read_unit(&unit.text).ok()?;
         let value = if datum.negative { -datum.literal.value } else { datum.literal.value };

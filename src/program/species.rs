@@ -2,6 +2,7 @@
 
 use crate::span::Span;
 use crate::thermo::{Composition, HeatingCurve, PhaseClass};
+use std::sync::Arc;
 
 /// What a datum says.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord)]
@@ -97,7 +98,7 @@ pub struct Species {
     /// Its phases in the order of heating.
     pub phases: Vec<PhaseInfo>,
     /// Its heating curve, per kilogram, allowances included.
-    pub curve: HeatingCurve,
+    pub curve: Arc<HeatingCurve>,
     /// Its data.
     pub data: Vec<Datum>,
     /// What is allowed beyond the data.

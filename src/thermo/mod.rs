@@ -15,8 +15,11 @@ pub mod path_work;
 pub mod settle;
 mod si;
 
-pub use composition::{Composition, FormulaError};
-pub use curve::{Allowance, CurveData, CurveError, HeatingCurve, LocateError, PhaseClass, Pin, Place, Side};
+pub use composition::{Composition, Fault, FormulaError};
+pub use curve::{
+    Allowance, CurveData, CurveError, Density, HeatingCurve, LawRange, Leg, LegKind, Link, LocateError, MeltingFault,
+    PhaseClass, PhaseData, PhaseShares, Pin, Place, Side,
+};
 pub use element::Element;
 pub use heat_capacity::{Basis, HeatCapacity, HeatCapacityError, MaierKelley};
 pub use settle::{

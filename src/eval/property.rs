@@ -1,0 +1,207 @@
+//! Places on heating curves and what they tell.
+
+use super::frame::{Fault, Frame};
+use crate::plan::{Material, PhaseSet, PlaceSlot, Plan, Slot};
+use crate::thermo::{Place, Side};
+use crate::units::quantity;
+
+/// The material of an operation; a Plan names only materials it holds.
+fn material(plan: &Plan, at: u32) -> &Material {
+    &plan.materials[at as usize]
+}
+
+pub(super) fn locate<const N: usize>(
+    plan: &Plan,
+    frame: &mut Frame<N>,
+    at: usize,
+    which: u32,
+    [t, p]: [Slot; 2],
+    side: Option<(u32, Slot)>,
+    to: PlaceSlot,
+) {
+    let material = material(plan, which);
+    let (t, p) = (frame.get(t), frame.get(p));
+    let share = side.map(|(phase, slot)| (phase as usize, frame.get(slot)));
+    for lane in 0..N {
+        let side = share.map(|(phase, shares)| Side { phase, share: shares[lane] });
+        let silent = t[lane].is_nan() || p[lane].is_nan() || side.is_some_and(|side| side.share.is_nan());
+        let place = if silent {
+            None
+        } else {
+            let (kelvin, pascal) = (t[lane], p[lane]);
+            match material.curve.locate(quantity(kelvin), quantity(pascal), material.pin, side, &material.allowance) {
+                Ok(place) => Some(place),
+                Err(error) => {
+                    frame.fail(at, lane, Fault::Locate { error, kelvin, pascal });
+                    None
+                }
+            }
+        };
+        frame.places[to.0 as usize][lane] = place;
+    }
+}
+
+pub(super) fn place<const N: usize>(
+    plan: &Plan,
+    frame: &mut Frame<N>,
+    at: usize,
+    which: u32,
+    [t, p, share]: [Slot; 3],
+    to: PlaceSlot,
+) {
+    let material = material(plan, which);
+    let (t, p, share) = (frame.get(t), frame.get(p), frame.get(share));
+    for lane in 0..N {
+        let (kelvin, pascal) = (t[lane], p[lane]);
+        let upper = (!share[lane].is_nan()).then_some(share[lane]);
+        let place = if kelvin.is_nan() || pascal.is_nan() {
+            None
+        } else {
+            match material.curve.place(quantity(kelvin), quantity(pascal), material.pin, upper, &material.allowance) {
+                Ok(place) => Some(place),
+                Err(error) => {
+                    frame.fail(at, lane, Fault::Locate { error, kelvin, pascal });
+                    None
+                }
+            }
+        };
+        frame.places[to.0 as usize][lane] = place;
+    }
+}
+
+/// A property of a place in each lane; none gives NaN, with a fault if there is one for it.
+fn each<const N: usize>(
+    frame: &mut Frame<N>,
+    place: PlaceSlot,
+    to: Slot,
+    fault: Option<(usize, Fault)>,
+    tell: impl Fn(Place, usize) -> Option<f64>,
+) {
+    let places = frame.places[place.0 as usize];
+    for (lane, place) in places.into_iter().enumerate() {
+        let value = place.map(|place| tell(place, lane));
+        frame.slots[to.0 as usize][lane] = value.flatten().unwrap_or(f64::NAN);
+        if let (Some(None), Some((at, fault))) = (value, fault) {
+            frame.fail(at, lane, fault);
+        }
+    }
+}
+
+pub(super) fn enthalpy<const N: usize>(
+    plan: &Plan,
+    frame: &mut Frame<N>,
+    which: u32,
+    place: PlaceSlot,
+    p: Slot,
+    to: Slot,
+) {
+    let curve = &material(plan, which).curve;
+    let p = frame.slots[p.0 as usize];
+    each(frame, place, to, None, |place, lane| {
+        let pressure_part = curve.condensed_pressure_enthalpy(place, quantity(p[lane]));
+        Some(curve.enthalpy(place).value + pressure_part.map_or(0.0, |part| part.value))
+    });
+}
+
+pub(super) fn internal_energy<const N: usize>(
+    plan: &Plan,
+    frame: &mut Frame<N>,
+    at: usize,
+    which: u32,
+    place: PlaceSlot,
+    to: Slot,
+) {
+    let curve = &material(plan, which).curve;
+    each(frame, place, to, Some((at, Fault::NoVolume)), |place, _| {
+        curve.internal_energy(place).map(|energy| energy.value)
+    });
+}
+
+pub(super) fn latent<const N: usize>(plan: &Plan, frame: &mut Frame<N>, which: u32, place: PlaceSlot, to: Slot) {
+    let curve = &material(plan, which).curve;
+    each(frame, place, to, None, |place, _| Some(curve.latent(place).value));
+}
+
+pub(super) fn pressure_part<const N: usize>(
+    plan: &Plan,
+    frame: &mut Frame<N>,
+    which: u32,
+    place: PlaceSlot,
+    p: Slot,
+    to: Slot,
+) {
+    let curve = &material(plan, which).curve;
+    let p = frame.slots[p.0 as usize];
+    each(frame, place, to, None, |place, lane| {
+        Some(curve.condensed_pressure_enthalpy(place, quantity(p[lane])).map_or(0.0, |part| part.value))
+    });
+}
+
+pub(super) fn heat_capacity<const N: usize>(
+    plan: &Plan,
+    frame: &mut Frame<N>,
+    at: usize,
+    which: u32,
+    place: PlaceSlot,
+    to: Slot,
+) {
+    let curve = &material(plan, which).curve;
+    each(frame, place, to, Some((at, Fault::NoHeatCapacity)), |place, _| {
+        curve.heat_capacity(place).map(|cp| cp.value)
+    });
+}
+
+pub(super) fn volume<const N: usize>(
+    plan: &Plan,
+    frame: &mut Frame<N>,
+    at: usize,
+    (which, place, p): (u32, PlaceSlot, Slot),
+    neglect: bool,
+    to: Slot,
+) {
+    let curve = &material(plan, which).curve;
+    let p = frame.slots[p.0 as usize];
+    let fault = (!neglect).then_some((at, Fault::NoVolume));
+    each(frame, place, to, fault, |place, lane| match curve.specific_volume(place, quantity(p[lane])) {
+        Some(volume) => Some(volume.value),
+        None => neglect.then_some(0.0),
+    });
+}
+
+pub(super) fn phase_share<const N: usize>(
+    plan: &Plan,
+    frame: &mut Frame<N>,
+    which: u32,
+    place: PlaceSlot,
+    phases: PhaseSet,
+    to: Slot,
+) {
+    let curve = &material(plan, which).curve;
+    each(frame, place, to, None, |place, _| {
+        let present = curve.phases_at(place);
+        let shares = std::iter::once(present.lower).chain(present.upper);
+        let wanted = |phase: usize| match phases {
+            PhaseSet::One(one) => phase == one as usize,
+            PhaseSet::Class(class) => curve.phase_class(phase) == Some(class),
+        };
+        Some(shares.filter(|(phase, _)| wanted(*phase)).fold(0.0, |sum, (_, share)| sum + share))
+    });
+}
+
+pub(super) fn gas_only<const N: usize>(
+    plan: &Plan,
+    frame: &mut Frame<N>,
+    at: usize,
+    (which, place): (u32, PlaceSlot),
+    value: Slot,
+    to: Slot,
+) {
+    let curve = &material(plan, which).curve;
+    let value = frame.slots[value.0 as usize];
+    each(frame, place, to, Some((at, Fault::NoGas)), |place, lane| {
+        let present = curve.phases_at(place);
+        let gas = |phase: usize| curve.phase_class(phase) == Some(crate::thermo::PhaseClass::Gas);
+        let all = gas(present.lower.0) && present.upper.is_none_or(|(phase, _)| gas(phase));
+        all.then_some(value[lane])
+    });
+}

@@ -1,0 +1,17 @@
+//! Program to Plan: straight-line operations on numbered slots.
+//!
+//! In comes a checked [`Program`](crate::program::Program); out go a [`Plan`], which holds no names, units or text, and
+//! the [`SlotMap`] that says which slot holds what. A sheet is lowered once and evaluated as often as there are points.
+//! Every operation carries the index of its origin, through which a failure finds its place in the sheet again.
+//!
+//! Guaranteed: an operation reads only slots that an earlier one has written, or inputs; whatever can fail passes its
+//! value through a guard, so that a Plan pruned to some outputs still guards them.
+
+mod lower;
+mod op;
+mod prune;
+mod slots;
+
+pub use lower::{Lowered, lower};
+pub use op::{Check, Material, Op, Part, PartRange, PhaseSet, PlaceSlot, Plan, Settle, Slot};
+pub use slots::{DutySlots, LimitSlots, Origin, OriginKind, SlotMap, StateSlots, StepSlots, TableSlots};
