@@ -89,12 +89,6 @@ impl HeatingCurve {
         (track.first..=track.last).any(|phase| self.is_gas(phase))
     }
 
-    /// Whether a piece is a plateau.
-    #[inline]
-    pub(in crate::thermo) fn is_plateau(&self, piece: &Piece) -> bool {
-        matches!(self.segments.get(piece.segment).map(|segment| &segment.body), Some(Body::Plateau { .. }))
-    }
-
     /// The temperature on a piece at which enthalpy is `h`, which lies between those of its ends.
     #[inline]
     pub(in crate::thermo) fn temperature_on(&self, piece: &Piece, h: f64) -> f64 {

@@ -70,6 +70,7 @@ impl Segment {
     #[inline]
     pub(super) fn enthalpy(&self, t: f64, share: f64) -> f64 {
         match &self.body {
+            Body::Range { line: Some((a, b)), .. } => self.offset + t * (a + 0.5 * b * t),
             Body::Range { law, .. } => self.offset + law.enthalpy(t),
             Body::Plateau { height, .. } => self.offset + share * height,
             Body::Melting { melting, .. } => {
@@ -93,6 +94,7 @@ impl Segment {
     #[inline]
     pub(super) fn cp(&self, t: f64) -> f64 {
         match &self.body {
+            Body::Range { line: Some((a, b)), .. } => a + b * t,
             Body::Range { law, .. } => law.value(t),
             Body::Plateau { .. } => f64::INFINITY,
             Body::Melting { melting, .. } => melting.cp(t - self.lo),

@@ -20,6 +20,8 @@ pub(in crate::thermo) struct Piece {
     pub(in crate::thermo) hi: f64,
     pub(in crate::thermo) h_lo: f64,
     pub(in crate::thermo) h_hi: f64,
+    pub(in crate::thermo) plateau: bool,
+    pub(super) melting: bool,
 }
 
 /// Linked phases `first..=last` with the pieces that lead through them, by rising temperature and enthalpy.
@@ -29,11 +31,21 @@ pub(in crate::thermo) struct Track {
     pub(super) last: usize,
     pub(in crate::thermo) pieces: Vec<Piece>,
     /// Point transitions on the way: temperature and link.
-    pub(super) points: Vec<(f64, usize)>,
+    pub(in crate::thermo) points: Vec<(f64, usize)>,
     /// The boiling or sublimation point on the way.
     pub(super) boiling: Option<f64>,
     /// Whether the species' decomposition bounds it.
-    decomposes: bool,
+    pub(super) decomposes: bool,
+}
+
+impl Track {
+    /// Whether the boiling point on the way, if there is one, holds at the pressure.
+    #[inline]
+    pub(super) fn boils_at(&self, pressure: f64) -> bool {
+        let (least, most) =
+            ((1.0 - BOILING_BAND) * STANDARD_ATMOSPHERE, (1.0 + BOILING_BAND) * STANDARD_ATMOSPHERE);
+        self.boiling.is_none() || (pressure >= least && pressure <= most)
+    }
 }
 
 /// The tracks of a curve.
@@ -118,7 +130,8 @@ fn lay_pieces(
         let plateau = matches!(segment.body, Body::Plateau { .. });
         if lo < hi || plateau {
             let (h_lo, h_hi) = (segment.enthalpy(lo, 0.0), segment.enthalpy(hi, 1.0));
-            pieces.push(Piece { segment: at, lo, hi, h_lo, h_hi });
+            let melting = matches!(segment.body, Body::Melting { .. });
+            pieces.push(Piece { segment: at, lo, hi, h_lo, h_hi, plateau, melting });
         }
     }
 }

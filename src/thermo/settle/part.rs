@@ -38,6 +38,8 @@ pub enum SettleError {
     NoSuchPhase { part: usize },
     /// A part that is not a gas, or a gas without molar mass, where an ideal gas is wanted.
     NotAGas { part: usize },
+    /// A start at which a part has no data.
+    StartOutsideRange { part: usize, lo: ThermodynamicTemperature, hi: ThermodynamicTemperature },
     /// The data of the parts share no temperature: the highest of their lower ends lies above the lowest upper end.
     NoCommonRange { lo: ThermodynamicTemperature, hi: ThermodynamicTemperature },
     /// The target lies outside what the parts hold between the ends of their data.

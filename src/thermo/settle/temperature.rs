@@ -68,6 +68,11 @@ pub fn temperature_isentropic(
             Some(molar_mass) if part.curve.all_gas(track) => gain += part.mass.value / molar_mass.value,
             _ => return Err(SettleError::NotAGas { part: index }),
         }
+        let limits = part.curve.limits(track, part.allowance, STANDARD_ATMOSPHERE);
+        if !(from.value >= limits.lo && from.value <= limits.hi) {
+            let (lo, hi) = (typed(limits.lo), typed(limits.hi));
+            return Err(SettleError::StartOutsideRange { part: index, lo, hi });
+        }
     }
     let target = sum.total(from.value, false) + GAS_CONSTANT * gain * log_pressure_ratio;
     sum.settle(target).map_err(|error| match error {
@@ -94,7 +99,7 @@ fn settle_alone(part: &Part<'_>, target: f64, pressure: f64) -> Option<Settled> 
     if cut || piece.lo < limits.lo || piece.hi > limits.hi {
         return None;
     }
-    if curve.is_plateau(piece) {
+    if piece.plateau {
         let share = (h - piece.h_lo) / (piece.h_hi - piece.h_lo);
         return Some(Settled { temperature: typed(piece.lo), upper_share: Some(share) });
     }

@@ -174,6 +174,8 @@ fn isentropic_compression_follows_the_poisson_law() {
         temperature_isentropic(&parts, k(300.0), 100.0),
         Err(SettleError::RatioUnreachable { hi, .. }) if hi == k(3000.0)
     ));
+    let outside = temperature_isentropic(&parts, k(90.0), 1.0);
+    assert_eq!(outside, Err(SettleError::StartOutsideRange { part: 0, lo: k(100.0), hi: k(3000.0) }));
     let ice = ice();
     let refused = temperature_isentropic(&[part(&ice, Pin::Stable, 1.0)], k(250.0), 1.0);
     assert_eq!(refused, Err(SettleError::NotAGas { part: 0 }));
