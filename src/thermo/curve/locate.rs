@@ -102,7 +102,8 @@ impl HeatingCurve {
     }
 
     /// The place at a temperature that was worked out and not written: no transition is too near. Exactly on a point
-    /// transition `upper_share` says how far along it is, the lower phase alone if none is given.
+    /// transition `upper_share` says how far along it is; if none is given, the lower phase alone is meant, or the gas
+    /// where the pressure lets the liquid be none.
     ///
     /// # Errors
     /// [`LocateError`], but never `OnTransition` or `NoTransition`.
@@ -119,7 +120,8 @@ impl HeatingCurve {
         if !(t > 0.0 && t.is_finite()) {
             return Err(LocateError::NotATemperature);
         }
-        let share = upper_share.unwrap_or(0.0);
+        let limits = self.limits(track, allowance, pressure.value);
+        let share = upper_share.unwrap_or(if limits.gas_only && limits.lo == t { 1.0 } else { 0.0 });
         if !(0.0..=1.0).contains(&share) {
             return Err(LocateError::ShareOutOfBounds);
         }

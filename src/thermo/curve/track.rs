@@ -31,7 +31,7 @@ pub(in crate::thermo) struct Track {
     pub(super) last: usize,
     pub(in crate::thermo) pieces: Vec<Piece>,
     /// Point transitions on the way: temperature and link.
-    pub(in crate::thermo) points: Vec<(f64, usize)>,
+    pub(super) points: Vec<(f64, usize)>,
     /// The boiling or sublimation point on the way.
     pub(super) boiling: Option<f64>,
     /// Whether the species' decomposition bounds it.
@@ -39,6 +39,12 @@ pub(in crate::thermo) struct Track {
 }
 
 impl Track {
+    /// Whether a point transition lies exactly at `t`.
+    #[inline]
+    pub(in crate::thermo) fn changes_at(&self, t: f64) -> bool {
+        self.points.iter().any(|(at, _)| *at == t)
+    }
+
     /// Whether the boiling point on the way, if there is one, holds at the pressure.
     #[inline]
     pub(super) fn boils_at(&self, pressure: f64) -> bool {

@@ -22,7 +22,7 @@ pub struct Part<'a> {
 pub struct Settled {
     /// The temperature.
     pub temperature: ThermodynamicTemperature,
-    /// On a plateau the mass share of the upper phase, the same in every part that changes there.
+    /// Exactly on a point transition the mass share of the upper phase, the same in every part that changes there.
     pub upper_share: Option<f64>,
 }
 

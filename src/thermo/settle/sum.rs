@@ -78,7 +78,7 @@ impl<'a> Sum<'a> {
                     (total - target, slope)
                 };
                 let root = find_rising_root(f, (a.0, b.0), start).map_err(|_| SettleError::NotFinite)?;
-                Ok(plain(root.x))
+                Ok(self.beside(root.x, a.0))
             }
         }
     }
@@ -199,9 +199,15 @@ impl<'a> Sum<'a> {
         (below, if self.changes_at(t) { side(true) } else { below })
     }
 
+    /// A temperature found between two edges; where rounding puts it onto a transition, the side it came from is kept.
+    fn beside(&self, t: f64, lower_edge: f64) -> Settled {
+        let share = if t == lower_edge { 1.0 } else { 0.0 };
+        Settled { temperature: typed(t), upper_share: self.changes_at(t).then_some(share) }
+    }
+
     /// Whether any part has a transition exactly at `t`.
     fn changes_at(&self, t: f64) -> bool {
-        self.tracks().any(|(_, track)| track.is_some_and(|track| track.points.iter().any(|(at, _)| *at == t)))
+        self.tracks().any(|(_, track)| track.is_some_and(|track| track.changes_at(t)))
     }
 
     fn unreachable(&self, window: Window) -> SettleError {
@@ -226,10 +232,6 @@ enum Narrowed {
         a: (f64, f64),
         b: (f64, f64),
     },
-}
-
-fn plain(t: f64) -> Settled {
-    Settled { temperature: typed(t), upper_share: None }
 }
 
 /// The target is met at `t`, where the total goes from `below` to `above`.

@@ -104,5 +104,7 @@ fn settle_alone(part: &Part<'_>, target: f64, pressure: f64) -> Option<Settled> 
         return Some(Settled { temperature: typed(piece.lo), upper_share: Some(share) });
     }
     let t = curve.temperature_on(piece, h);
-    t.is_finite().then_some(Settled { temperature: typed(t), upper_share: None })
+    let side = if t == piece.lo { 1.0 } else { 0.0 };
+    let upper_share = track.changes_at(t).then_some(side);
+    t.is_finite().then_some(Settled { temperature: typed(t), upper_share })
 }

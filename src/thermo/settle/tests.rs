@@ -208,7 +208,48 @@ fn a_settled_temperature_near_a_transition_has_a_place() {
     assert_eq!(zinc.phases_at(place.unwrap()).lower, (1, 1.0));
 }
 
+/// What parts of 1 kg in all hold at a settled temperature, at the places that it names.
+fn held(parts: &[Part<'_>], settled: Settled, pressure: f64) -> f64 {
+    let hold = |part: &Part<'_>| {
+        let (t, share) = (settled.temperature, settled.upper_share);
+        let place = part.curve.place(t, typed(pressure), part.pin, share, part.allowance).unwrap();
+        part.mass.value * part.curve.enthalpy(place).value
+    };
+    parts.iter().map(hold).sum()
+}
+
 proptest! {
+    #[test]
+    fn the_settled_place_holds_the_target(
+        part_of_span in 0.0_f64..=1.0,
+        edge in 0_usize..12,
+        nudge in -3_i32..=3,
+        at_edge in any::<bool>(),
+        pressure in prop_oneof![Just(101_325.0), Just(50e3), Just(5e5)],
+    ) {
+        // Anywhere between the ends of the curve, or some last digits beside one of its edges.
+        let rich = rich();
+        let edges: Vec<_> = rich.edges(Pin::Stable).flat_map(|edge| [edge.below.value, edge.above.value]).collect();
+        let (least, most) = (edges[0], edges[edges.len() - 1]);
+        let spread = least + (most - least) * part_of_span;
+        let beside = edges[edge % edges.len()] * (1.0 + f64::from(nudge) * f64::EPSILON);
+        let target = if at_edge { beside } else { spread };
+        let alone = [part(&rich, Pin::Stable, 1.0)];
+        let halves = [part(&rich, Pin::Stable, 0.25), part(&rich, Pin::Stable, 0.75)];
+        for parts in [&alone[..], &halves[..]] {
+            match temperature_for_enthalpy(parts, energy(target), typed(pressure)) {
+                Ok(settled) => {
+                    let found = held(parts, settled, pressure);
+                    prop_assert!((found - target).abs() < 1e-8, "{found} for {target}: {settled:?}");
+                }
+                Err(SettleError::Unreachable(reach)) => {
+                    prop_assert!(target < reach.least.value || target > reach.most.value, "{reach:?}");
+                }
+                Err(other) => prop_assert!(false, "{other:?}"),
+            }
+        }
+    }
+
     #[test]
     fn settling_undoes_enthalpy(t in 250.0_f64..2000.0, mass in 0.001_f64..1e6) {
         let rich = rich();
