@@ -1,8 +1,9 @@
-//! A root of one equation between two ends, by Brent's method (R. P. Brent, Algorithms for Minimization without
-//! Derivatives, Prentice-Hall 1973, chapter 4): inverse quadratic or linear steps, halving where they fail.
+//! A root of one equation between two ends, by Brent's method (R. P. Brent, Algorithms for Minimization
+//! without Derivatives, Prentice-Hall 1973, chapter 4): inverse quadratic or linear steps, halving where they
+//! fail.
 
-/// How many steps are taken at most; halving alone needs fewer than 64 inside any bracket that a double can halve
-/// evenly, and the bound below adds what uneven brackets may cost.
+/// How many steps are taken at most; halving alone needs fewer than 64 inside any bracket that a double can
+/// halve evenly, and the bound below adds what uneven brackets may cost.
 const STEP_LIMIT: usize = 200;
 
 /// A root with what it cost.
@@ -42,8 +43,8 @@ pub enum RootFailure {
     },
 }
 
-/// Finds `x` between `a` and `b` with `f(x) = 0`, to within `tolerance` (absolute, and never finer than the doubles
-/// allow). The evaluations come in one fixed order: `a`, `b`, then one for each step.
+/// Finds `x` between `a` and `b` with `f(x) = 0`, to within `tolerance` (absolute, and never finer than the
+/// doubles allow). The evaluations come in one fixed order: `a`, `b`, then one for each step.
 ///
 /// # Errors
 /// [`RootFailure`] when the ends do not bracket a root, the function is not a number, or the steps run out.
@@ -92,9 +93,10 @@ pub fn find_root(mut f: impl FnMut(f64) -> f64, a: f64, b: f64, tolerance: f64) 
     Err(RootFailure::NotConverged { x: b, residual: fb })
 }
 
-/// Finds the root of a rising function between `a` and `b` (`a < b`, taken as bracketing) by Newton's method from
-/// `start`, halving wherever a step would leave the bracket. `f` gives the value and the slope. The search ends with the
-/// first Newton step below 1e-9 of the place: as each squares the error of the one before, it is exact to rounding.
+/// Finds the root of a rising function between `a` and `b` (`a < b`, taken as bracketing) by Newton's method
+/// from `start`, halving wherever a step would leave the bracket. `f` gives the value and the slope. The
+/// search ends with the first Newton step below 1e-9 of the place: as each squares the error of the one
+/// before, it is exact to rounding.
 ///
 /// # Errors
 /// [`RootFailure`] when the function is not a number or the steps run out.

@@ -159,10 +159,11 @@ fn lay_links(data: &CurveData, laid: &[Vec<Segment>]) -> Vec<LaidLink> {
     data.links.iter().enumerate().map(lay).collect()
 }
 
-/// What each phase's enthalpy is shifted by, so that links hold and formation enthalpies are met; and whether they are.
+/// What each phase's enthalpy is shifted by, so that links hold and formation enthalpies are met; and whether
+/// they are.
 ///
-/// Phases that latent heats link form a run and move together; each run takes its level from the first phase in it with
-/// a formation enthalpy. A curve of one run may do without.
+/// Phases that latent heats link form a run and move together; each run takes its level from the first phase
+/// in it with a formation enthalpy. A curve of one run may do without.
 fn shift_runs(
     data: &CurveData,
     laid: &[Vec<Segment>],

@@ -35,8 +35,8 @@ pub enum LocateError {
 }
 
 impl HeatingCurve {
-    /// The place at `temperature` and `pressure` of the phase that `pin` says. Within 0.5 K of a transition on the way a
-    /// `side` is wanted, and the place is on the transition itself; elsewhere a side is refused.
+    /// The place at `temperature` and `pressure` of the phase that `pin` says. Within 0.5 K of a transition
+    /// on the way a `side` is wanted, and the place is on the transition itself; elsewhere a side is refused.
     ///
     /// # Errors
     /// [`LocateError`].
@@ -59,8 +59,8 @@ impl HeatingCurve {
         self.locate_on(track, t, pressure.value, side, allowance)
     }
 
-    /// The common case: nothing is stretched, nothing decomposes, pressure does not matter and no transition is near.
-    /// None where any of this may not hold.
+    /// The common case: nothing is stretched, nothing decomposes, pressure does not matter and no transition
+    /// is near. None where any of this may not hold.
     #[inline]
     fn plain_place(&self, track: &Track, t: f64, pressure: f64, allowance: &Allowance) -> Option<Place> {
         let plain = allowance.is_none() && !track.decomposes && track.boils_at(pressure);
@@ -101,9 +101,9 @@ impl HeatingCurve {
         Ok(self.place_on(track, t))
     }
 
-    /// The place at a temperature that was worked out and not written: no transition is too near. Exactly on a point
-    /// transition `upper_share` says how far along it is; if none is given, the lower phase alone is meant, or the gas
-    /// where the pressure lets the liquid be none.
+    /// The place at a temperature that was worked out and not written: no transition is too near. Exactly on
+    /// a point transition `upper_share` says how far along it is; if none is given, the lower phase alone is
+    /// meant, or the gas where the pressure lets the liquid be none.
     ///
     /// # Errors
     /// [`LocateError`], but never `OnTransition` or `NoTransition`.

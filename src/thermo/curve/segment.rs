@@ -119,8 +119,8 @@ impl Segment {
         }
     }
 
-    /// The temperature between `lo` and `hi` at which enthalpy lies `rise` above its value at `lo`, of `whole` that it
-    /// rises up to `hi`.
+    /// The temperature between `lo` and `hi` at which enthalpy lies `rise` above its value at `lo`, of
+    /// `whole` that it rises up to `hi`.
     #[inline]
     pub(super) fn temperature_after(&self, (lo, hi): (f64, f64), rise: f64, whole: f64) -> f64 {
         let (first, second) = match &self.body {

@@ -167,8 +167,8 @@ pub(in crate::thermo) struct Limits {
 }
 
 impl HeatingCurve {
-    /// The breakpoints of the track that `pin` leads along, by rising temperature, its two ends among them; none where
-    /// the species has no such phase.
+    /// The breakpoints of the track that `pin` leads along, by rising temperature, its two ends among them;
+    /// none where the species has no such phase.
     pub fn edges(&self, pin: Pin) -> impl Iterator<Item = Edge> + '_ {
         let pieces = self.track(pin).map_or(&[][..], |track| &track.pieces);
         let inner = pieces.iter().zip(pieces.iter().skip(1)).map(|(a, b)| (a.hi, a.h_hi, b.h_lo));
@@ -203,7 +203,8 @@ impl HeatingCurve {
         limits
     }
 
-    /// As [`HeatingCurve::data_limits`], and cut at the boiling point when the pressure is not the one it holds at.
+    /// As [`HeatingCurve::data_limits`], and cut at the boiling point when the pressure is not the one it
+    /// holds at.
     #[inline]
     pub(in crate::thermo) fn limits(&self, track: &Track, allowance: &Allowance, pressure: f64) -> Limits {
         let mut limits = self.data_limits(track, allowance);

@@ -24,7 +24,8 @@ struct Window {
     boiling: bool,
 }
 
-/// An end of the bracket, with the total there as seen from inside it; none at an end of the window not yet looked at.
+/// An end of the bracket, with the total there as seen from inside it; none at an end of the window not yet
+/// looked at.
 #[derive(Debug, Clone, Copy)]
 struct End {
     t: f64,
@@ -115,8 +116,8 @@ impl<'a> Sum<'a> {
         Ok(Window { lo, hi, boiling })
     }
 
-    /// Tries every edge between the ends, then the ends as far as they are still open, until the target is met or the
-    /// bracket holds no edge.
+    /// Tries every edge between the ends, then the ends as far as they are still open, until the target is
+    /// met or the bracket holds no edge.
     fn narrow(&self, window: Window, target: f64) -> Result<Narrowed, SettleError> {
         let (mut a, mut b) = (End { t: window.lo, total: None }, End { t: window.hi, total: None });
         for (_, track) in self.tracks() {
@@ -180,8 +181,8 @@ impl<'a> Sum<'a> {
         }
     }
 
-    /// The totals on the lower and the upper side of an end of the window; a boiling point that does not hold has but one
-    /// side.
+    /// The totals on the lower and the upper side of an end of the window; a boiling point that does not hold
+    /// has but one side.
     fn ends_at(&self, t: f64, lower_end: bool) -> (f64, f64) {
         let side = |upper: bool| {
             self.over_parts(|part, track| {
@@ -199,7 +200,8 @@ impl<'a> Sum<'a> {
         (below, if self.changes_at(t) { side(true) } else { below })
     }
 
-    /// A temperature found between two edges; where rounding puts it onto a transition, the side it came from is kept.
+    /// A temperature found between two edges; where rounding puts it onto a transition, the side it came from
+    /// is kept.
     fn beside(&self, t: f64, lower_edge: f64) -> Settled {
         let share = if t == lower_edge { 1.0 } else { 0.0 };
         Settled { temperature: typed(t), upper_share: self.changes_at(t).then_some(share) }

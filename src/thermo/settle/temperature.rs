@@ -8,8 +8,8 @@ use crate::thermo::constants::{GAS_CONSTANT, STANDARD_ATMOSPHERE};
 use crate::thermo::curve::Measure;
 use crate::thermo::si::typed;
 
-/// The temperature at which the parts' enthalpies add up to `target`, at `pressure`. For a flow the masses are those of
-/// one second and the target is its power times one second.
+/// The temperature at which the parts' enthalpies add up to `target`, at `pressure`. For a flow the masses
+/// are those of one second and the target is its power times one second.
 ///
 /// # Errors
 /// [`SettleError`].
@@ -29,8 +29,8 @@ pub fn temperature_for_enthalpy(
     sum.settle(target.value)
 }
 
-/// The temperature at which the parts' internal energies add up to `target`. The pressure decides only on which side of
-/// its boiling point a species may be.
+/// The temperature at which the parts' internal energies add up to `target`. The pressure decides only on
+/// which side of its boiling point a species may be.
 ///
 /// # Errors
 /// [`SettleError`].
@@ -50,8 +50,8 @@ pub fn temperature_for_internal_energy(
     sum.settle(target.value)
 }
 
-/// The temperature to which ideal gases at `from` come when their pressure changes reversibly without heat by the factor
-/// `exp(log_pressure_ratio)`: their entropies change by `m R/M ln(p2/p1)` altogether.
+/// The temperature to which ideal gases at `from` come when their pressure changes reversibly without heat by
+/// the factor `exp(log_pressure_ratio)`: their entropies change by `m R/M ln(p2/p1)` altogether.
 ///
 /// # Errors
 /// [`SettleError`]; every part has to be pinned to a gas and to have a molar mass.
@@ -81,7 +81,8 @@ pub fn temperature_isentropic(
     })
 }
 
-/// One part whose enthalpy pressure does not touch, inside its own data: the piece is read off, no sum is needed.
+/// One part whose enthalpy pressure does not touch, inside its own data: the piece is read off, no sum is
+/// needed.
 #[inline]
 fn settle_alone(part: &Part<'_>, target: f64, pressure: f64) -> Option<Settled> {
     let curve = part.curve;

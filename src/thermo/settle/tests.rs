@@ -32,7 +32,8 @@ fn ice() -> HeatingCurve {
 
 #[test]
 fn a_heat_that_ends_on_the_plateau_gives_its_share() {
-    // 450 kg from 291.15 K with sensible heat up to the melting point and 40 % of 7322 J/mol over 65.38 g/mol.
+    // 450 kg from 291.15 K with sensible heat up to the melting point and 40 % of 7322 J/mol over 65.38
+    // g/mol.
     let zinc = zinc();
     let sensible = 22.40 * (692.68 - 291.15) + 0.5 * 10.05e-3 * (692.68 * 692.68 - 291.15 * 291.15);
     let heat = 450.0 * (sensible + 0.4 * 7322.0) / 0.065_38;
@@ -67,8 +68,8 @@ fn quenching_ends_at_the_mean_weighted_by_heat_capacity() {
 
 #[test]
 fn ice_in_warm_water_melts_by_the_balance() {
-    // 10 kg of ice at 263.15 K in 30 kg of water at 290 K: cooling to 273.15 K gives 30·4200·16.85 = 2.1231 MJ, warming
-    // the ice takes 0.21 MJ, 1.9131 MJ melts 5.745 kg: of all 40 kg, 35.745/40 are liquid.
+    // 10 kg of ice at 263.15 K in 30 kg of water at 290 K: cooling to 273.15 K gives 30·4200·16.85 = 2.1231
+    // MJ, warming the ice takes 0.21 MJ, 1.9131 MJ melts 5.745 kg: of all 40 kg, 35.745/40 are liquid.
     let ice = ice();
     let parts = [part(&ice, Pin::Stable, 10.0), part(&ice, Pin::Stable, 30.0)];
     let target = 10.0 * h(&ice, 263.15) + 30.0 * h(&ice, 290.0);

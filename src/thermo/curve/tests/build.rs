@@ -4,8 +4,8 @@ use super::*;
 
 #[test]
 fn latent_heat_follows_from_two_formation_enthalpies() {
-    // Liquid cp 4180, gas cp 1865, formations -15.866e6 and -13.423e6 J/kg at 298.15 K; at 373.15 K the gas lies higher
-    // by 2.443e6 + 75 (1865 - 4180) = 2 269 375 J/kg.
+    // Liquid cp 4180, gas cp 1865, formations -15.866e6 and -13.423e6 J/kg at 298.15 K; at 373.15 K the gas
+    // lies higher by 2.443e6 + 75 (1865 - 4180) = 2 269 375 J/kg.
     let mut liquid = phase("liquid", PhaseClass::Liquid, &[(273.15, 500.0, &[(4180.0, 0.0)])]);
     let mut gas = phase("gas", PhaseClass::Gas, &[(298.15, 1000.0, &[(1865.0, 0.0)])]);
     gas.formation = Some(j(-13.423e6));
@@ -120,9 +120,9 @@ fn a_table_must_cover_its_range_and_is_not_stretched_by_leave() {
 
 #[test]
 fn published_records_give_their_published_enthalpies_through_melting() {
-    // NASA/TP-2002-211556 (McBride, Zehe, Gordon 2002), records Zn(cr), Zn(L), AL(cr), AL(L): coefficients, melting points
-    // and the jump between the records as latent heat; expected H(T) - H(298.15 K) in J/mol from the records' own
-    // enthalpy constants.
+    // NASA/TP-2002-211556 (McBride, Zehe, Gordon 2002), records Zn(cr), Zn(L), AL(cr), AL(L): coefficients,
+    // melting points and the jump between the records as latent heat; expected H(T) - H(298.15 K) in J/mol
+    // from the records' own enthalpy constants.
     type Record = ([f64; 7], [f64; 7], f64, f64, [(f64, f64); 4]);
     let liquid = |a3: f64| [0.0, 0.0, a3, 0.0, 0.0, 0.0, 0.0];
     let zinc: Record = (
