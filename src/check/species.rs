@@ -144,24 +144,24 @@ impl Checker<'_> {
         }
     }
 
-    fn formula_error(&mut self, word: &Word, error: &crate::thermo::FormulaError) {
+    fn formula_error(&mut self, word: &Word, error: &crate::thermo::CompositionError) {
         let place = |range: &std::ops::Range<usize>| {
             let at = |offset: usize| word.span.start + u32::try_from(offset.min(word.text.len())).unwrap_or(0);
             if range.is_empty() { word.span } else { Span { start: at(range.start), end: at(range.end), ..word.span } }
         };
         let found = match error {
-            crate::thermo::FormulaError::UnknownElement { symbol, range } => {
+            crate::thermo::CompositionError::UnknownElement { symbol, range } => {
                 Diagnostic::new(Code::UnknownElement, format!("`{symbol}` in `{}` is no element", word.text))
                     .label(place(range), "no element of this symbol")
                     .help("symbols are IUPAC's: a capital, then a small letter where there are two, such as `Zn`")
             }
-            crate::thermo::FormulaError::NoAtomicWeight { element, range } => Diagnostic::new(
+            crate::thermo::CompositionError::NoAtomicWeight { element, range } => Diagnostic::new(
                 Code::UnknownElement,
                 format!("`{}` has no standard atomic weight", element.symbol()),
             )
             .label(place(range), "no stable isotopes")
             .help("leave the formula out and give `molar_mass ... g/mol`"),
-            crate::thermo::FormulaError::Malformed { fault, range } => {
+            crate::thermo::CompositionError::Malformed { fault, range } => {
                 Diagnostic::new(Code::BadFormula, format!("the formula `{}` cannot be read", word.text))
                     .label(place(range), fault_in_words(*fault))
                     .help("write formulas such as `Ca(OH)2`, `Fe0.947O` or `CuSO4·5H2O`")

@@ -5,7 +5,7 @@ use crate::numeric::find_root;
 use crate::plan::{PartRange, Plan, Settle, Slot};
 use crate::thermo::constants::GAS_CONSTANT;
 use crate::thermo::{
-    Part, PhaseClass, SettleError, Settled, temperature_for_enthalpy, temperature_for_internal_energy,
+    Part, PhaseClass, Pin, SettleError, Settled, temperature_for_enthalpy, temperature_for_internal_energy,
     temperature_isentropic,
 };
 use crate::units::quantity;
@@ -104,12 +104,21 @@ fn volume_and_gas(parts: &[Part<'_>], kelvin: f64, pascal: f64, share: Option<f6
     Some((condensed, gas))
 }
 
+/// Between which temperatures a part has data, K.
+fn data_span(part: &Part<'_>) -> Option<(f64, f64)> {
+    let wanted = |phase: usize| match part.pin {
+        Pin::Phase(one) => phase == one,
+        Pin::Class(class) => part.curve.phase_class(phase) == Some(class),
+        Pin::Stable => true,
+    };
+    let spans = (0..part.curve.phase_count()).filter(|phase| wanted(*phase)).filter_map(|phase| part.curve.phase_span(phase));
+    spans.map(|(lo, hi)| (lo.value, hi.value)).reduce(|(lo, hi), (from, to)| (lo.min(from), hi.max(to)))
+}
+
 /// The temperature at which the parts fill a volume at a pressure.
 fn temperature_for_volume(parts: &[Part<'_>], volume: f64, pascal: f64) -> Result<Settled, SettleError> {
-    let ends = parts.iter().filter_map(|part| part.curve.span(part.pin, part.allowance));
-    let (lo, hi) = ends.fold((0.0, f64::INFINITY), |(lo, hi): (f64, f64), (from, to)| {
-        (lo.max(from.value), hi.min(to.value))
-    });
+    let ends = parts.iter().filter_map(data_span);
+    let (lo, hi) = ends.fold((0.0, f64::INFINITY), |(lo, hi): (f64, f64), (from, to)| (lo.max(from), hi.min(to)));
     let miss = |kelvin: f64| {
         volume_and_gas(parts, kelvin, pascal, None)
             .map_or(f64::NAN, |(condensed, gas)| condensed + gas * GAS_CONSTANT * kelvin / pascal - volume)

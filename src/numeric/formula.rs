@@ -1,5 +1,5 @@
-//! A formula of one variable, compiled to postfix code: what a heat capacity or a density is worked from when it is
-//! no sum of powers.
+//! A formula of one variable, compiled to postfix code: what a heat capacity or a density is worked from when
+//! it is no sum of powers.
 
 use super::math;
 
@@ -153,8 +153,8 @@ fn two_operands(op: Op, left: f64, right: f64) -> f64 {
     }
 }
 
-/// A stack of at most 32 values; the depth was checked when the formula was built, and the mask keeps every access
-/// inside the array whatever happens.
+/// A stack of at most 32 values; the depth was checked when the formula was built, and the mask keeps every
+/// access inside the array whatever happens.
 struct Stack {
     values: [f64; Formula::DEPTH_LIMIT],
     height: usize,

@@ -1,6 +1,6 @@
-//! Interpolation of a table over strictly rising abscissae: straight lines, or a cubic that keeps every rise and fall
-//! of the table (F. N. Fritsch, R. E. Carlson, SIAM J. Numer. Anal. 1980, 17, 238; slopes limited by the circle of
-//! radius 3 given there). Outside the table the answer is `NaN`, never a guess.
+//! Interpolation of a table over strictly rising abscissae: straight lines, or a cubic that keeps every rise
+//! and fall of the table (F. N. Fritsch, R. E. Carlson, SIAM J. Numer. Anal. 1980, 17, 238; slopes limited by
+//! the circle of radius 3 given there). Outside the table the answer is `NaN`, never a guess.
 
 use super::math;
 
@@ -30,8 +30,8 @@ pub enum InterpolantError {
     },
 }
 
-/// The curve between two points: `y = c0 + c1 s + c2 s² + c3 s³` with `s = x - left`, and the integrals of `y` and of
-/// `y/x` from the start of the table to `left`.
+/// The curve between two points: `y = c0 + c1 s + c2 s² + c3 s³` with `s = x - left`, and the integrals of
+/// `y` and of `y/x` from the start of the table to `left`.
 #[derive(Debug, Clone, Copy, PartialEq)]
 struct Piece {
     left: f64,
@@ -49,8 +49,8 @@ pub struct Interpolant {
 }
 
 impl Interpolant {
-    /// How far outside its ends, relative to the end, an argument is still taken as the end itself: what rounding may
-    /// do to it.
+    /// How far outside its ends, relative to the end, an argument is still taken as the end itself: what
+    /// rounding may do to it.
     pub const EDGE: f64 = 1e-9;
 
     /// Draws the curve through `points`, each `(x, y)`.
@@ -104,8 +104,8 @@ impl Interpolant {
         Interpolant::from_cubics(cubics, self.span())
     }
 
-    /// The slope of `y · (x - origin)` as a curve of its own: what the mean of a quantity above `origin` says about the
-    /// quantity itself.
+    /// The slope of `y · (x - origin)` as a curve of its own: what the mean of a quantity above `origin` says
+    /// about the quantity itself.
     #[must_use]
     pub fn slope_above(&self, origin: f64) -> Interpolant {
         let cubics = self.pieces.iter().map(|piece| {
@@ -136,8 +136,8 @@ impl Interpolant {
         self.with(x, |piece, s| piece.integral(s))
     }
 
-    /// The integral of the curve over `x` from the start of the table to `x`, in closed form; the table must lie above
-    /// zero.
+    /// The integral of the curve over `x` from the start of the table to `x`, in closed form; the table must
+    /// lie above zero.
     pub fn integral_over_x(&self, x: f64) -> f64 {
         self.with(x, |piece, s| piece.integral_over_x(s))
     }
@@ -187,8 +187,8 @@ impl Piece {
 
 /// The integrals of `u^k/(u + x)` over `u` from 0 to `s`, for `k` from 0 to 3.
 ///
-/// `J₀ = ln(1 + s/x)` and `J_k = s^k/k - x J_{k-1}`; upwards this loses digits where `s` is small against `x`, so there
-/// `J₃` is summed as a power series and the recurrence is run downwards, which is stable.
+/// `J₀ = ln(1 + s/x)` and `J_k = s^k/k - x J_{k-1}`; upwards this loses digits where `s` is small against
+/// `x`, so there `J₃` is summed as a power series and the recurrence is run downwards, which is stable.
 fn moments_over_x(s: f64, x: f64) -> [f64; 4] {
     let z = s / x;
     let (s2, s3) = (s * s / 2.0, s * s * s / 3.0);
@@ -257,7 +257,8 @@ fn initial_slopes(steps: &[(f64, f64)]) -> Vec<f64> {
     std::iter::once(first).chain(inner).chain(std::iter::once(last)).collect()
 }
 
-/// One-sided three-point slope at an end, next to the step `near`; zero where it would turn against the table.
+/// One-sided three-point slope at an end, next to the step `near`; zero where it would turn against the
+/// table.
 fn end_slope(near: Option<&(f64, f64)>, next: Option<&(f64, f64)>) -> f64 {
     match (near, next) {
         (Some(&(h0, d0)), Some(&(h1, d1))) => {

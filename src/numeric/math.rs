@@ -1,5 +1,5 @@
-//! The transcendental functions of the program. They come from the `libm` crate, which is plain Rust, and not from
-//! the platform's C library, whose last bit differs between machines.
+//! The transcendental functions of the program. They come from the `libm` crate, which is plain Rust, and not
+//! from the platform's C library, whose last bit differs between machines.
 
 /// The exponential function.
 #[inline]
@@ -31,8 +31,8 @@ pub fn pow(base: f64, exponent: f64) -> f64 {
     libm::pow(base, exponent)
 }
 
-/// `base` raised to an integer, by squaring from the lowest bit of the exponent up; a negative exponent takes the
-/// reciprocal at the end. The order of the products is fixed.
+/// `base` raised to an integer, by squaring from the lowest bit of the exponent up; a negative exponent takes
+/// the reciprocal at the end. The order of the products is fixed.
 #[inline]
 pub fn powi(base: f64, exponent: i32) -> f64 {
     let mut left = exponent.unsigned_abs();

@@ -1,9 +1,10 @@
 //! Adaptive quadrature by the Gauss-Kronrod pair of 7 and 15 points.
 //!
-//! Nodes and weights: Piessens, de Doncker-Kapenga, Überhuber, Kahaner, QUADPACK, Springer 1983, routine QK15; the
-//! error estimate is the one given there. The tests check that the rule is exact to degree 22.
+//! Nodes and weights: Piessens, de Doncker-Kapenga, Überhuber, Kahaner, QUADPACK, Springer 1983, routine
+//! QK15; the error estimate is the one given there. The tests check that the rule is exact to degree 22.
 
-/// Nodes of the 15-point rule on one half of `[-1, 1]`, from the outside; odd places belong to the 7-point rule.
+/// Nodes of the 15-point rule on one half of `[-1, 1]`, from the outside; odd places belong to the 7-point
+/// rule.
 const NODES: [f64; 7] = [
     0.991_455_371_120_812_6,
     0.949_107_912_342_758_5,
@@ -73,8 +74,8 @@ struct Panel {
     rounding: f64,
 }
 
-/// Integrates `f` from `a` to `b` (either order). Intervals are halved until their share of the tolerance is met,
-/// the left half always first.
+/// Integrates `f` from `a` to `b` (either order). Intervals are halved until their share of the tolerance is
+/// met, the left half always first.
 ///
 /// # Errors
 /// [`QuadratureFailure`] when the function is not finite, or the limits are reached first.
@@ -183,7 +184,8 @@ mod tests {
 
     #[test]
     fn fifteen_points_are_exact_for_every_even_degree_to_22() {
-        // The integral of x^n over [-1, 1] is 2/(n + 1) for even n; a 15-point Kronrod rule is exact to 3·7 + 1.
+        // The integral of x^n over [-1, 1] is 2/(n + 1) for even n; a 15-point Kronrod rule is exact to 3·7 +
+        // 1.
         for n in (0..=22).step_by(2) {
             let mut search = Search { f: |x| math::powi(x, n), evaluations: 0, exhausted: false, floor: 0.0 };
             let panel = search.panel(-1.0, 1.0).unwrap();

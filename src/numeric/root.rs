@@ -1,8 +1,9 @@
-//! A root of one equation between two ends, by Brent's method (R. P. Brent, Algorithms for Minimization without
-//! Derivatives, Prentice-Hall 1973, chapter 4): inverse quadratic or linear steps, halving where they fail.
+//! A root of one equation between two ends, by Brent's method (R. P. Brent, Algorithms for Minimization
+//! without Derivatives, Prentice-Hall 1973, chapter 4): inverse quadratic or linear steps, halving where they
+//! fail.
 
-/// How many steps are taken at most; halving alone needs fewer than 64 inside any bracket that a double can halve
-/// evenly, and the bound below adds what uneven brackets may cost.
+/// How many steps are taken at most; halving alone needs fewer than 64 inside any bracket that a double can
+/// halve evenly, and the bound below adds what uneven brackets may cost.
 const STEP_LIMIT: usize = 200;
 
 /// A root with what it cost.
@@ -42,8 +43,8 @@ pub enum RootFailure {
     },
 }
 
-/// Finds `x` between `a` and `b` with `f(x) = 0`, to within `tolerance` (absolute, and never finer than the doubles
-/// allow). The evaluations come in one fixed order: `a`, `b`, then one for each step.
+/// Finds `x` between `a` and `b` with `f(x) = 0`, to within `tolerance` (absolute, and never finer than the
+/// doubles allow). The evaluations come in one fixed order: `a`, `b`, then one for each step.
 ///
 /// # Errors
 /// [`RootFailure`] when the ends do not bracket a root, the function is not a number, or the steps run out.
@@ -92,19 +93,20 @@ pub fn find_root(mut f: impl FnMut(f64) -> f64, a: f64, b: f64, tolerance: f64) 
     Err(RootFailure::NotConverged { x: b, residual: fb })
 }
 
-/// Finds the root of a rising function between `a` and `b` (`a < b`, taken as bracketing) by Newton's method from
-/// `start`, halving wherever a step would leave the bracket. `f` gives the value and the slope. It stops when a step
-/// no longer moves the place, or when the steps, already below 1e-9 of it, cease to shrink: there rounding has the say.
+/// Finds the root of a rising function between `a` and `b` (`a < b`, taken as bracketing) by Newton's method
+/// from `start`, halving wherever a step would leave the bracket. `f` gives the value and the slope. The
+/// search ends with the first Newton step below 1e-9 of the place: as each squares the error of the one
+/// before, it is exact to rounding.
 ///
 /// # Errors
 /// [`RootFailure`] when the function is not a number or the steps run out.
+#[inline]
 pub fn find_rising_root(
     mut f: impl FnMut(f64) -> (f64, f64),
     (mut a, mut b): (f64, f64),
     start: f64,
 ) -> Result<Root, RootFailure> {
     let mut x = if start > a && start < b { start } else { a + 0.5 * (b - a) };
-    let mut last = f64::INFINITY;
     let mut residual = f64::NAN;
     for iterations in 1..=STEP_LIMIT {
         let (value, slope) = f(x);
@@ -118,14 +120,12 @@ pub fn find_rising_root(
             a = x
         }
         let newton = x - value / slope;
-        let next = if newton >= a && newton <= b { newton } else { a + 0.5 * (b - a) };
-        let step = (next - x).abs();
-        let rounding = step < 1e-9 * x.abs() && step >= last;
-        if value == 0.0 || rounding || step <= f64::EPSILON * x.abs() {
-            let x = if rounding { x } else { next };
-            return Ok(Root { x, residual, iterations, evaluations: iterations });
+        let inside = newton >= a && newton <= b;
+        let next = if inside { newton } else { a + 0.5 * (b - a) };
+        let fine = if inside { 1e-9 } else { f64::EPSILON };
+        if value == 0.0 || (next - x).abs() <= fine * x.abs() {
+            return Ok(Root { x: next, residual, iterations, evaluations: iterations });
         }
-        last = step;
         x = next;
     }
     Err(RootFailure::NotConverged { x, residual })

@@ -18,7 +18,7 @@ pub struct Composition {
 
 /// Why a formula cannot be read; ranges are bytes of the formula's text.
 #[derive(Debug, Clone, PartialEq, Eq)]
-pub enum FormulaError {
+pub enum CompositionError {
     /// A symbol that no element has.
     UnknownElement {
         /// The symbol as written.
@@ -58,12 +58,12 @@ pub enum Fault {
 }
 
 impl Composition {
-    /// Reads a formula. Counts may be decimal; round and square brackets group; `·`, `•` or `⋅` joins the parts of an
-    /// addition compound, each with its multiplier in front.
+    /// Reads a formula. Counts may be decimal; round and square brackets group; `·`, `•` or `⋅` joins the
+    /// parts of an addition compound, each with its multiplier in front.
     ///
     /// # Errors
-    /// [`FormulaError`] with the place in the text.
-    pub fn parse(text: &str) -> Result<Composition, FormulaError> {
+    /// [`CompositionError`] with the place in the text.
+    pub fn parse(text: &str) -> Result<Composition, CompositionError> {
         let mut reader = Reader { text, at: 0 };
         let mut parts = reader.group(None, 0)?;
         while reader.peek().is_some() {
@@ -147,13 +147,13 @@ impl<'a> Reader<'a> {
         rest.get(..end).unwrap_or("")
     }
 
-    fn fault(&self, fault: Fault) -> FormulaError {
+    fn fault(&self, fault: Fault) -> CompositionError {
         let width = self.peek().map_or(0, char::len_utf8);
-        FormulaError::Malformed { fault, range: self.at..self.at + width }
+        CompositionError::Malformed { fault, range: self.at..self.at + width }
     }
 
     /// Elements and bracketed groups up to `close`, or to a hydrate dot or the end where `close` is none.
-    fn group(&mut self, close: Option<char>, depth: usize) -> Result<Parts, FormulaError> {
+    fn group(&mut self, close: Option<char>, depth: usize) -> Result<Parts, CompositionError> {
         let mut parts = Vec::new();
         loop {
             match self.peek() {
@@ -169,7 +169,7 @@ impl<'a> Reader<'a> {
         }
     }
 
-    fn bracketed(&mut self, open: char, depth: usize) -> Result<Vec<(Element, f64)>, FormulaError> {
+    fn bracketed(&mut self, open: char, depth: usize) -> Result<Vec<(Element, f64)>, CompositionError> {
         if depth >= NESTING_LIMIT {
             return Err(self.fault(Fault::TooDeep));
         }
@@ -180,29 +180,29 @@ impl<'a> Reader<'a> {
         Ok(scaled(parts, count).collect())
     }
 
-    fn element(&mut self) -> Result<(Element, f64), FormulaError> {
+    fn element(&mut self) -> Result<(Element, f64), CompositionError> {
         let start = self.at;
         self.skip();
         self.take_while(|c| c.is_ascii_lowercase());
         let range = start..self.at;
         let symbol = self.text.get(range.clone()).unwrap_or("");
         let Some(element) = Element::from_symbol(symbol) else {
-            return Err(FormulaError::UnknownElement { symbol: symbol.to_owned(), range });
+            return Err(CompositionError::UnknownElement { symbol: symbol.to_owned(), range });
         };
         if element.molar_mass().is_none() {
-            return Err(FormulaError::NoAtomicWeight { element, range });
+            return Err(CompositionError::NoAtomicWeight { element, range });
         }
         Ok((element, self.optional_count()?))
     }
 
-    fn optional_count(&mut self) -> Result<f64, FormulaError> {
+    fn optional_count(&mut self) -> Result<f64, CompositionError> {
         if self.next_is(|c| c.is_ascii_digit()) { self.count() } else { Ok(1.0) }
     }
 
-    fn count(&mut self) -> Result<f64, FormulaError> {
+    fn count(&mut self) -> Result<f64, CompositionError> {
         let start = self.at;
         let digits = self.take_while(|c| c.is_ascii_digit() || c == '.');
-        let wrong = FormulaError::Malformed { fault: Fault::Count, range: start..self.at };
+        let wrong = CompositionError::Malformed { fault: Fault::Count, range: start..self.at };
         if digits.ends_with('.') {
             return Err(wrong);
         }
@@ -254,18 +254,18 @@ mod tests {
     fn says_where_a_symbol_is_unknown() {
         assert_eq!(
             Composition::parse("CaXo3"),
-            Err(FormulaError::UnknownElement { symbol: "Xo".to_owned(), range: 2..4 })
+            Err(CompositionError::UnknownElement { symbol: "Xo".to_owned(), range: 2..4 })
         );
         assert!(matches!(
             Composition::parse("Na2Tc"),
-            Err(FormulaError::NoAtomicWeight { range, .. }) if range == (3..5)
+            Err(CompositionError::NoAtomicWeight { range, .. }) if range == (3..5)
         ));
     }
 
     #[test]
     fn refuses_what_is_no_formula() {
         let fault = |text: &str| match Composition::parse(text) {
-            Err(FormulaError::Malformed { fault, range }) => (fault, range),
+            Err(CompositionError::Malformed { fault, range }) => (fault, range),
             other => panic!("{text}: {other:?}"),
         };
         assert_eq!(fault(""), (Fault::Empty, 0..0));

@@ -8,9 +8,9 @@ use super::si::typed;
 pub const ATOMIC_WEIGHTS_SOURCE: &str = "IUPAC standard atomic weights 2021, abridged to five significant figures, \
      conventional values (Prohaska et al., Pure Appl. Chem. 2022, 94, 573)";
 
-/// Symbols by atomic number, with the abridged standard atomic weight where the element has one. The values were taken
-/// from the open package `pyciaaw` 1.3.2, which carries the tables of the IUPAC commission; no printed copy was at
-/// hand.
+/// Symbols by atomic number, with the abridged standard atomic weight where the element has one. The values
+/// were taken from the open package `pyciaaw` 1.3.2, which carries the tables of the IUPAC commission; no
+/// printed copy was at hand.
 #[rustfmt::skip]
 const ELEMENTS: [(&str, Option<f64>); 118] = [
     ("H", Some(1.008)), ("He", Some(4.0026)), ("Li", Some(6.94)), ("Be", Some(9.0122)), ("B", Some(10.81)),
@@ -61,8 +61,8 @@ impl Element {
         self.0 + 1
     }
 
-    /// Its standard atomic weight as the mass of one mole; none for an element without a stable composition in nature,
-    /// such as technetium.
+    /// Its standard atomic weight as the mass of one mole; none for an element without a stable composition
+    /// in nature, such as technetium.
     pub fn molar_mass(self) -> Option<MolarMass> {
         let (_, weight) = ELEMENTS.get(usize::from(self.0))?;
         weight.map(|weight| typed(weight / 1000.0))

@@ -1,9 +1,9 @@
 //! The physics of heat, on typed quantities.
 //!
-//! In come heat capacity laws, transitions and temperatures as `uom` quantities; out come enthalpies, latent heats,
-//! volumes and temperatures, likewise typed. Everything is per mass. Nothing here knows a sheet, a span or a unit's
-//! name: an error carries indices and quantities, and the caller adds the place. Nothing stretches a datum in silence:
-//! outside its range there is an error, or a flag that says so.
+//! In come heat capacity laws, transitions and temperatures as `uom` quantities; out come enthalpies, latent
+//! heats, volumes and temperatures, likewise typed. Everything is per mass. Nothing here knows a sheet, a
+//! span or a unit's name: an error carries indices and quantities, and the caller adds the place. Nothing
+//! stretches a datum in silence: outside its range there is an error, or a flag that says so.
 
 pub mod composition;
 pub mod constants;
@@ -15,7 +15,7 @@ pub mod path_work;
 pub mod settle;
 mod si;
 
-pub use composition::{Composition, Fault, FormulaError};
+pub use composition::{Composition, CompositionError, Fault};
 pub use curve::{
     Allowance, CurveData, CurveError, Density, HeatingCurve, LawRange, Leg, LegKind, Link, LocateError, MeltingFault,
     PhaseClass, PhaseData, PhaseShares, Pin, Place, Side,

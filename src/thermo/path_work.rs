@@ -23,8 +23,8 @@ pub fn constant_pressure(pressure: Pressure, v1: Volume, v2: Volume) -> Energy {
     typed(-pressure.value * (v2.value - v1.value))
 }
 
-/// The work of a real machine whose reversible twin takes `ideal`: a compression (positive) takes `ideal/η`, an
-/// expansion (negative) gives `η · ideal`. None for an efficiency that is not above 0 and at most 1.
+/// The work of a real machine whose reversible twin takes `ideal`: a compression (positive) takes `ideal/η`,
+/// an expansion (negative) gives `η · ideal`. None for an efficiency that is not above 0 and at most 1.
 #[inline]
 pub fn with_isentropic_efficiency(ideal: Energy, efficiency: f64) -> Option<Energy> {
     let fits = efficiency > 0.0 && efficiency <= 1.0;

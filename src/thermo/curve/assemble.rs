@@ -91,13 +91,14 @@ fn lay_phase(index: usize, phase: &PhaseData) -> Vec<Segment> {
     let (mut enthalpy, mut entropy) = (0.0, 0.0);
     let lay = |range: &super::LawRange| {
         let (lo, hi) = (range.lo.value, range.hi.value);
-        let offset = enthalpy - range.law.enthalpy(lo);
         let entropy_offset = entropy - range.law.entropy(lo);
-        enthalpy = offset + range.law.enthalpy(hi);
         entropy = entropy_offset + range.law.entropy(hi);
         let line = range.law.straight_line();
         let body = Body::Range { phase: index, law: range.law.clone(), entropy_offset, line };
-        Segment { lo, hi, offset, latent: 0.0, body }
+        let mut segment = Segment { lo, hi, offset: 0.0, latent: 0.0, body };
+        segment.offset = enthalpy - segment.enthalpy(lo, 0.0);
+        enthalpy = segment.enthalpy(hi, 0.0);
+        segment
     };
     phase.ranges.iter().map(lay).collect()
 }
@@ -158,10 +159,11 @@ fn lay_links(data: &CurveData, laid: &[Vec<Segment>]) -> Vec<LaidLink> {
     data.links.iter().enumerate().map(lay).collect()
 }
 
-/// What each phase's enthalpy is shifted by, so that links hold and formation enthalpies are met; and whether they are.
+/// What each phase's enthalpy is shifted by, so that links hold and formation enthalpies are met; and whether
+/// they are.
 ///
-/// Phases that latent heats link form a run and move together; each run takes its level from the first phase in it with
-/// a formation enthalpy. A curve of one run may do without.
+/// Phases that latent heats link form a run and move together; each run takes its level from the first phase
+/// in it with a formation enthalpy. A curve of one run may do without.
 fn shift_runs(
     data: &CurveData,
     laid: &[Vec<Segment>],

@@ -72,7 +72,8 @@ pub enum Link {
         /// What it takes.
         latent: AvailableEnergy,
     },
-    /// A transition at one temperature whose latent heat follows from the formation enthalpies of both phases.
+    /// A transition at one temperature whose latent heat follows from the formation enthalpies of both
+    /// phases.
     AtFromFormations {
         /// Where it is.
         temperature: ThermodynamicTemperature,
@@ -85,8 +86,8 @@ pub enum Link {
         to: ThermodynamicTemperature,
         /// What it takes altogether.
         latent: AvailableEnergy,
-        /// Points `(temperature, share of the upper phase)` between which the share rises in straight lines, from 0 at
-        /// `from` to 1 at `to`; empty for one straight line.
+        /// Points `(temperature, share of the upper phase)` between which the share rises in straight lines,
+        /// from 0 at `from` to 1 at `to`; empty for one straight line.
         along: Vec<(ThermodynamicTemperature, f64)>,
     },
     /// No transition: the next phase has its own formation enthalpy and is reached by its state symbol alone.

@@ -45,7 +45,8 @@ pub enum CurveError {
     FormationOutside { phase: usize },
     /// The species' formation enthalpy and the phase's own for one phase.
     FormationTwice { phase: usize },
-    /// The latent heats up to this phase contradict its own formation enthalpy by more than 1 % of the last of them.
+    /// The latent heats up to this phase contradict its own formation enthalpy by more than 1 % of the last
+    /// of them.
     LatentContradiction { phase: usize, given: AvailableEnergy, follows: AvailableEnergy },
     /// A heat capacity that is not a positive number somewhere in its range.
     HeatCapacityNotPositive { phase: usize, range: usize, temperature: ThermodynamicTemperature },

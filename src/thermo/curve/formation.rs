@@ -29,8 +29,8 @@ pub(super) fn runs(data: &CurveData, cut: impl Fn(&Link) -> bool) -> Vec<Range<u
     runs
 }
 
-/// The chain that temperature alone leads along: the first, unless that is a lone phase with its own formation enthalpy,
-/// which only a state symbol reaches, and another is not.
+/// The chain that temperature alone leads along: the first, unless that is a lone phase with its own
+/// formation enthalpy, which only a state symbol reaches, and another is not.
 pub(super) fn stable_chain(data: &CurveData) -> Range<usize> {
     let chains = chains(data);
     let by_symbol = |chain: &Range<usize>| {

@@ -6,7 +6,7 @@ use super::assemble::HeatingCurve;
 use super::data::PhaseClass;
 use super::place::{Allowance, Pin, Place, Side};
 use super::segment::Body;
-use super::track::{Limits, Track};
+use super::track::{Limits, Piece, Track};
 use crate::thermo::si::typed;
 
 /// Within how many kelvin of a transition the side has to be named.
@@ -35,11 +35,12 @@ pub enum LocateError {
 }
 
 impl HeatingCurve {
-    /// The place at `temperature` and `pressure` of the phase that `pin` says. Within 0.5 K of a transition on the way a
-    /// `side` is wanted, and the place is on the transition itself; elsewhere a side is refused.
+    /// The place at `temperature` and `pressure` of the phase that `pin` says. Within 0.5 K of a transition
+    /// on the way a `side` is wanted, and the place is on the transition itself; elsewhere a side is refused.
     ///
     /// # Errors
     /// [`LocateError`].
+    #[inline]
     pub fn locate(
         &self,
         temperature: ThermodynamicTemperature,
@@ -50,21 +51,59 @@ impl HeatingCurve {
     ) -> Result<Place, LocateError> {
         let t = temperature.value;
         let track = self.track(pin).ok_or(LocateError::NoSuchPhase)?;
+        if side.is_none()
+            && let Some(place) = self.plain_place(track, t, pressure.value, allowance)
+        {
+            return Ok(place);
+        }
+        self.locate_on(track, t, pressure.value, side, allowance)
+    }
+
+    /// The common case: nothing is stretched, nothing decomposes, pressure does not matter and no transition
+    /// is near. None where any of this may not hold.
+    #[inline]
+    fn plain_place(&self, track: &Track, t: f64, pressure: f64, allowance: &Allowance) -> Option<Place> {
+        let plain = allowance.is_none() && !track.decomposes && track.boils_at(pressure);
+        if !plain || track.points.iter().any(|(at, _)| (t - at).abs() <= TRANSITION_BAND) {
+            return None;
+        }
+        let inside = |piece: &&Piece| t < piece.hi;
+        let piece = track.pieces.iter().find(inside).or(track.pieces.last().filter(|piece| t == piece.hi))?;
+        let share = if piece.melting { self.melting_share(piece.segment, t) } else { 0.0 };
+        (t >= piece.lo).then_some(Place {
+            segment: piece.segment,
+            temperature: t,
+            share,
+            extrapolated: false,
+        })
+    }
+
+    #[cold]
+    #[inline(never)]
+    fn locate_on(
+        &self,
+        track: &Track,
+        t: f64,
+        pressure: f64,
+        side: Option<Side>,
+        allowance: &Allowance,
+    ) -> Result<Place, LocateError> {
         if !(t > 0.0 && t.is_finite()) {
             return Err(LocateError::NotATemperature);
         }
         if let Some((at, link)) = nearest_point(track, t, side) {
-            return self.on_point(track, (at, link), side, (pressure.value, allowance));
+            return self.on_point(track, (at, link), side, (pressure, allowance));
         }
         if side.is_some() {
             return Err(LocateError::NoTransition);
         }
-        self.check_limits(track, t, pressure.value, allowance)?;
-        Ok(self.place_on(track, t, 0.0))
+        self.check_limits(track, t, pressure, allowance)?;
+        Ok(self.place_on(track, t))
     }
 
-    /// The place at a temperature that was worked out and not written: no transition is too near. Exactly on a point
-    /// transition `upper_share` says how far along it is, the lower phase alone if none is given.
+    /// The place at a temperature that was worked out and not written: no transition is too near. Exactly on
+    /// a point transition `upper_share` says how far along it is; if none is given, the lower phase alone is
+    /// meant, or the gas where the pressure lets the liquid be none.
     ///
     /// # Errors
     /// [`LocateError`], but never `OnTransition` or `NoTransition`.
@@ -81,14 +120,15 @@ impl HeatingCurve {
         if !(t > 0.0 && t.is_finite()) {
             return Err(LocateError::NotATemperature);
         }
-        let share = upper_share.unwrap_or(0.0);
+        let limits = self.limits(track, allowance, pressure.value);
+        let share = upper_share.unwrap_or(if limits.gas_only && limits.lo == t { 1.0 } else { 0.0 });
         if !(0.0..=1.0).contains(&share) {
             return Err(LocateError::ShareOutOfBounds);
         }
         self.check_limits(track, t, pressure.value, allowance)?;
         match track.points.iter().find(|(at, _)| *at == t) {
             Some(&(at, link)) => Ok(self.plateau(at, link, share)),
-            None => Ok(self.place_on(track, t, 0.0)),
+            None => Ok(self.place_on(track, t)),
         }
     }
 
@@ -156,18 +196,22 @@ impl HeatingCurve {
     }
 
     /// The place on a track at a temperature within its limits.
-    #[inline]
-    pub(in crate::thermo) fn place_on(&self, track: &Track, t: f64, share: f64) -> Place {
+    fn place_on(&self, track: &Track, t: f64) -> Place {
         let piece = track.pieces.iter().find(|piece| t < piece.hi).or(track.pieces.last());
         let segment = piece.map_or(0, |piece| piece.segment);
         let inside = self.segments.get(segment).is_some_and(|segment| t >= segment.lo && t <= segment.hi);
-        let decomposed = self.decomposes_at.is_some_and(|at| t > at);
-        let share = match self.segments.get(segment).map(|segment| (&segment.body, segment.lo)) {
-            Some((Body::Melting { melting, .. }, lo)) => melting.share_at(t - lo).clamp(0.0, 1.0),
-            _ => share,
-        };
         let edge = piece.is_some_and(|piece| t >= piece.lo && t <= piece.hi);
+        let decomposed = self.decomposes_at.is_some_and(|at| t > at);
+        let share = self.melting_share(segment, t);
         Place { segment, temperature: t, share, extrapolated: !(inside || edge) || decomposed }
+    }
+
+    /// The upper phase's share in a piece of a melting range; zero elsewhere.
+    fn melting_share(&self, segment: usize, t: f64) -> f64 {
+        match self.segments.get(segment).map(|segment| (&segment.body, segment.lo)) {
+            Some((Body::Melting { melting, .. }, lo)) => melting.share_at(t - lo).clamp(0.0, 1.0),
+            _ => 0.0,
+        }
     }
 }
 

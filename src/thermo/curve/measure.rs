@@ -18,7 +18,8 @@ pub(in crate::thermo) enum Measure {
 }
 
 impl HeatingCurve {
-    /// Whether pressure does not enter the enthalpies of this curve, so that those of its pieces hold as they are.
+    /// Whether pressure does not enter the enthalpies of this curve, so that those of its pieces hold as they
+    /// are.
     #[inline]
     pub(in crate::thermo) fn pressure_free(&self, excess: f64) -> bool {
         excess == 0.0 || !self.has_density
@@ -49,8 +50,8 @@ impl HeatingCurve {
         }
     }
 
-    /// The measure at `t`, on a plateau at its lower end, and how it rises with temperature there, thermal expansion of
-    /// condensed phases left out.
+    /// The measure at `t`, on a plateau at its lower end, and how it rises with temperature there, thermal
+    /// expansion of condensed phases left out.
     #[inline]
     pub(in crate::thermo) fn measure_and_slope(&self, track: &Track, measure: Measure, t: f64) -> (f64, f64) {
         let piece = track.pieces.iter().find(|piece| t <= piece.hi).or(track.pieces.last());
@@ -87,12 +88,6 @@ impl HeatingCurve {
     /// Whether a track leads through a gas.
     pub(in crate::thermo) fn holds_gas(&self, track: &Track) -> bool {
         (track.first..=track.last).any(|phase| self.is_gas(phase))
-    }
-
-    /// Whether a piece is a plateau.
-    #[inline]
-    pub(in crate::thermo) fn is_plateau(&self, piece: &Piece) -> bool {
-        matches!(self.segments.get(piece.segment).map(|segment| &segment.body), Some(Body::Plateau { .. }))
     }
 
     /// The temperature on a piece at which enthalpy is `h`, which lies between those of its ends.

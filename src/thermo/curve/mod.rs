@@ -1,14 +1,15 @@
 //! The heating curve of a species: enthalpy over temperature, through all its phases.
 //!
-//! In come phases in the order of heating, each with its laws, and what links them ([`CurveData`]); they are checked
-//! once and laid out as segments - a law's range, a plateau, a piece of a melting range - on each of which enthalpy is
-//! a constant plus an antiderivative. Out come a [`Place`] for a temperature, and from a place its enthalpy, latent
-//! heat, heat capacity, volume and phases, and the legs of the [route](HeatingCurve::route) between two places.
+//! In come phases in the order of heating, each with its laws, and what links them ([`CurveData`]); they are
+//! checked once and laid out as segments - a law's range, a plateau, a piece of a melting range - on each of
+//! which enthalpy is a constant plus an antiderivative. Out come a [`Place`] for a temperature, and from a
+//! place its enthalpy, latent heat, heat capacity, volume and phases, and the legs of the
+//! [route](HeatingCurve::route) between two places.
 //!
-//! Guaranteed: along the chain of linked phases enthalpy is continuous but for the plateaus; a place exists only where
-//! data hold, or where an [`Allowance`] says that they may be stretched, and then it says so itself; near a transition
-//! the side has to be named. Enthalpies are absolute (elements at 298.15 K are zero) where a formation enthalpy is
-//! known, else they count from the lowest temperature.
+//! Guaranteed: along the chain of linked phases enthalpy is continuous but for the plateaus; a place exists
+//! only where data hold, or where an [`Allowance`] says that they may be stretched, and then it says so
+//! itself; near a transition the side has to be named. Enthalpies are absolute (elements at 298.15 K are
+//! zero) where a formation enthalpy is known, else they count from the lowest temperature.
 
 mod assemble;
 mod check;

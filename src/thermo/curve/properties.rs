@@ -57,8 +57,8 @@ impl HeatingCurve {
         }
     }
 
-    /// Volume per mass at a place: `R T/(M p)` for a gas, one over the density else, by mass share between two phases.
-    /// None when a gas has no molar mass or a condensed phase no density.
+    /// Volume per mass at a place: `R T/(M p)` for a gas, one over the density else, by mass share between
+    /// two phases. None when a gas has no molar mass or a condensed phase no density.
     #[inline]
     pub fn specific_volume(&self, place: Place, pressure: Pressure) -> Option<SpecificVolume> {
         let PhaseShares { lower, upper } = self.phases_at(place);
@@ -72,16 +72,17 @@ impl HeatingCurve {
         Some(typed(sum))
     }
 
-    /// What pressure adds to the enthalpy of the condensed phases at a place: `v (p - 101.325 kPa)`, their volume taken
-    /// as the same at every pressure. A gas adds nothing; none when a condensed phase has no density.
+    /// What pressure adds to the enthalpy of the condensed phases at a place: `v (p - 101.325 kPa)`, their
+    /// volume taken as the same at every pressure. A gas adds nothing; none when a condensed phase has no
+    /// density.
     #[inline]
     pub fn condensed_pressure_enthalpy(&self, place: Place, pressure: Pressure) -> Option<AvailableEnergy> {
         let volume = self.condensed_volume(place)?;
         Some(typed(volume * (pressure.value - STANDARD_ATMOSPHERE)))
     }
 
-    /// Internal energy at a place: enthalpy less `R T/M` for a gas, less `v · 101.325 kPa` for a condensed phase, whose
-    /// volume is neglected where it has no density. None when a gas has no molar mass.
+    /// Internal energy at a place: enthalpy less `R T/M` for a gas, less `v · 101.325 kPa` for a condensed
+    /// phase, whose volume is neglected where it has no density. None when a gas has no molar mass.
     pub fn internal_energy(&self, place: Place) -> Option<AvailableEnergy> {
         let segment = self.segments.get(place.segment)?;
         let less = self.flow_work(segment, place.temperature, place.share);

@@ -55,7 +55,8 @@ impl Leg {
     }
 }
 
-/// Where a place stands among the phases and links: phase `i` is stop `2 i`, the link above it stop `2 i + 1`.
+/// Where a place stands among the phases and links: phase `i` is stop `2 i`, the link above it stop `2 i +
+/// 1`.
 #[derive(Debug, Clone, Copy, PartialEq)]
 struct Stop {
     at: usize,
@@ -71,9 +72,10 @@ impl Stop {
 }
 
 impl HeatingCurve {
-    /// The legs from one place to another, in order; their sum is the difference of the enthalpies. The way leads
-    /// through every phase and transition between; a phase that stands past its transition first goes back to it. Between
-    /// phases apart it crosses over at 298.15 K, or at the nearest temperature at which both have data.
+    /// The legs from one place to another, in order; their sum is the difference of the enthalpies. The way
+    /// leads through every phase and transition between; a phase that stands past its transition first goes
+    /// back to it. Between phases apart it crosses over at 298.15 K, or at the nearest temperature at which
+    /// both have data.
     pub fn route(&self, from: Place, to: Place) -> Vec<Leg> {
         let (Some(start), Some(end)) = (self.stop(from), self.stop(to)) else { return Vec::new() };
         let mut legs = Vec::new();

@@ -70,6 +70,7 @@ impl Segment {
     #[inline]
     pub(super) fn enthalpy(&self, t: f64, share: f64) -> f64 {
         match &self.body {
+            Body::Range { line: Some((a, b)), .. } => self.offset + t * (a + 0.5 * b * t),
             Body::Range { law, .. } => self.offset + law.enthalpy(t),
             Body::Plateau { height, .. } => self.offset + share * height,
             Body::Melting { melting, .. } => {
@@ -93,6 +94,7 @@ impl Segment {
     #[inline]
     pub(super) fn cp(&self, t: f64) -> f64 {
         match &self.body {
+            Body::Range { line: Some((a, b)), .. } => a + b * t,
             Body::Range { law, .. } => law.value(t),
             Body::Plateau { .. } => f64::INFINITY,
             Body::Melting { melting, .. } => melting.cp(t - self.lo),
@@ -117,8 +119,8 @@ impl Segment {
         }
     }
 
-    /// The temperature between `lo` and `hi` at which enthalpy lies `rise` above its value at `lo`, of `whole` that it
-    /// rises up to `hi`.
+    /// The temperature between `lo` and `hi` at which enthalpy lies `rise` above its value at `lo`, of
+    /// `whole` that it rises up to `hi`.
     #[inline]
     pub(super) fn temperature_after(&self, (lo, hi): (f64, f64), rise: f64, whole: f64) -> f64 {
         let (first, second) = match &self.body {

@@ -20,6 +20,8 @@ pub(in crate::thermo) struct Piece {
     pub(in crate::thermo) hi: f64,
     pub(in crate::thermo) h_lo: f64,
     pub(in crate::thermo) h_hi: f64,
+    pub(in crate::thermo) plateau: bool,
+    pub(super) melting: bool,
 }
 
 /// Linked phases `first..=last` with the pieces that lead through them, by rising temperature and enthalpy.
@@ -33,7 +35,23 @@ pub(in crate::thermo) struct Track {
     /// The boiling or sublimation point on the way.
     pub(super) boiling: Option<f64>,
     /// Whether the species' decomposition bounds it.
-    decomposes: bool,
+    pub(super) decomposes: bool,
+}
+
+impl Track {
+    /// Whether a point transition lies exactly at `t`.
+    #[inline]
+    pub(in crate::thermo) fn changes_at(&self, t: f64) -> bool {
+        self.points.iter().any(|(at, _)| *at == t)
+    }
+
+    /// Whether the boiling point on the way, if there is one, holds at the pressure.
+    #[inline]
+    pub(super) fn boils_at(&self, pressure: f64) -> bool {
+        let (least, most) =
+            ((1.0 - BOILING_BAND) * STANDARD_ATMOSPHERE, (1.0 + BOILING_BAND) * STANDARD_ATMOSPHERE);
+        self.boiling.is_none() || (pressure >= least && pressure <= most)
+    }
 }
 
 /// The tracks of a curve.
@@ -118,7 +136,8 @@ fn lay_pieces(
         let plateau = matches!(segment.body, Body::Plateau { .. });
         if lo < hi || plateau {
             let (h_lo, h_hi) = (segment.enthalpy(lo, 0.0), segment.enthalpy(hi, 1.0));
-            pieces.push(Piece { segment: at, lo, hi, h_lo, h_hi });
+            let melting = matches!(segment.body, Body::Melting { .. });
+            pieces.push(Piece { segment: at, lo, hi, h_lo, h_hi, plateau, melting });
         }
     }
 }
@@ -148,8 +167,8 @@ pub(in crate::thermo) struct Limits {
 }
 
 impl HeatingCurve {
-    /// The breakpoints of the track that `pin` leads along, by rising temperature, its two ends among them; none where
-    /// the species has no such phase.
+    /// The breakpoints of the track that `pin` leads along, by rising temperature, its two ends among them;
+    /// none where the species has no such phase.
     pub fn edges(&self, pin: Pin) -> impl Iterator<Item = Edge> + '_ {
         let pieces = self.track(pin).map_or(&[][..], |track| &track.pieces);
         let inner = pieces.iter().zip(pieces.iter().skip(1)).map(|(a, b)| (a.hi, a.h_hi, b.h_lo));
@@ -184,7 +203,8 @@ impl HeatingCurve {
         limits
     }
 
-    /// As [`HeatingCurve::data_limits`], and cut at the boiling point when the pressure is not the one it holds at.
+    /// As [`HeatingCurve::data_limits`], and cut at the boiling point when the pressure is not the one it
+    /// holds at.
     #[inline]
     pub(in crate::thermo) fn limits(&self, track: &Track, allowance: &Allowance, pressure: f64) -> Limits {
         let mut limits = self.data_limits(track, allowance);

@@ -110,8 +110,8 @@ impl HeatCapacity {
         HeatCapacity::new(Law::Table(interpolated(points, shape)?), basis.factor())
     }
 
-    /// A table of `(T in K, enthalpy)`, above any one level; cp is the slope of the interpolated enthalpy. The
-    /// temperature that the table counts from belongs among the points, with enthalpy 0.
+    /// A table of `(T in K, enthalpy)`, above any one level; cp is the slope of the interpolated enthalpy.
+    /// The temperature that the table counts from belongs among the points, with enthalpy 0.
     ///
     /// # Errors
     /// As for [`HeatCapacity::table`].
@@ -123,8 +123,8 @@ impl HeatCapacity {
         HeatCapacity::new(Law::Table(interpolated(points, shape)?.slope()), basis.factor())
     }
 
-    /// A table of `(T in K, mean cp between reference and T)`: the mean is interpolated and
-    /// `h(T) - h(reference) = mean(T) (T - reference)`. Between the reference and a table that begins beyond it, the
+    /// A table of `(T in K, mean cp between reference and T)`: the mean is interpolated and `h(T) -
+    /// h(reference) = mean(T) (T - reference)`. Between the reference and a table that begins beyond it, the
     /// nearest mean holds.
     ///
     /// # Errors
@@ -147,8 +147,8 @@ impl HeatCapacity {
         HeatCapacity::new(Law::Table(mean.slope_above(origin)), basis.factor())
     }
 
-    /// Any formula of T in K. Its integrals are taken numerically from `from`, which lies in the range where the law
-    /// holds, to 1e-12 of their value.
+    /// Any formula of T in K. Its integrals are taken numerically from `from`, which lies in the range where
+    /// the law holds, to 1e-12 of their value.
     ///
     /// # Errors
     /// [`HeatCapacityError`] when `from` is not above 0 K or the molar mass is not positive.

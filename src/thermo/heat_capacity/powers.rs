@@ -22,6 +22,8 @@ pub(super) struct Powers {
     inverse_root: f64,
     /// Every other exponent, as coefficient and exponent.
     other: Box<[(f64, f64)]>,
+    /// Whether there is nothing but T⁰ to T⁶.
+    polynomial: bool,
 }
 
 /// Coefficients of one polynomial and of its two integrals, with the number of places in use.
@@ -78,6 +80,11 @@ impl Powers {
                 other.push((coefficient, exponent));
             }
         }
+        let polynomial = falling == [0.0; FALLING]
+            && inverse == 0.0
+            && root == 0.0
+            && inverse_root == 0.0
+            && other.is_empty();
         Powers {
             rising: Three::new(rising, 0.0, 1.0),
             falling: Three::new(falling, -2.0, -1.0),
@@ -85,6 +92,7 @@ impl Powers {
             root,
             inverse_root,
             other: other.into_boxed_slice(),
+            polynomial,
         }
     }
 
@@ -92,6 +100,9 @@ impl Powers {
     #[inline]
     pub(super) fn value(&self, t: f64) -> f64 {
         let mut sum = horner(&self.rising.law, self.rising.used, t);
+        if self.polynomial {
+            return sum;
+        }
         if self.falling.used > 0 || self.inverse != 0.0 {
             let r = 1.0 / t;
             sum += r * (self.inverse + r * horner(&self.falling.law, self.falling.used, r));
@@ -110,6 +121,9 @@ impl Powers {
     #[inline]
     pub(super) fn integral(&self, t: f64) -> f64 {
         let mut sum = t * horner(&self.rising.enthalpy, self.rising.used, t);
+        if self.polynomial {
+            return sum;
+        }
         if self.falling.used > 0 {
             let r = 1.0 / t;
             sum += r * horner(&self.falling.enthalpy, self.falling.used, r);
@@ -151,13 +165,8 @@ impl Powers {
 
     /// `(a, b)` when the law is `a + b T` and nothing else.
     pub(super) fn straight_line(&self) -> Option<(f64, f64)> {
-        let alone = self.falling.used == 0
-            && self.inverse == 0.0
-            && self.root == 0.0
-            && self.inverse_root == 0.0
-            && self.other.is_empty();
         let [a, b, ..] = self.rising.law;
-        (alone && self.rising.used <= 2).then_some((a, b))
+        (self.polynomial && self.rising.used <= 2).then_some((a, b))
     }
 }
 

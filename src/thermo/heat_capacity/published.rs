@@ -4,8 +4,8 @@ use uom::si::f64::{MolarHeatCapacity, MolarMass};
 
 use super::law::{Basis, HeatCapacity, HeatCapacityError};
 
-/// Coefficients of the Maier-Kelley form `cp = a + b T + c/T² + d/√T + e T²` (C. G. Maier, K. K. Kelley, J. Am. Chem.
-/// Soc. 1932, 54, 3243, which has a, b and c; d and e as in USGS Bulletin 2131), T in K.
+/// Coefficients of the Maier-Kelley form `cp = a + b T + c/T² + d/√T + e T²` (C. G. Maier, K. K. Kelley, J.
+/// Am. Chem. Soc. 1932, 54, 3243, which has a, b and c; d and e as in USGS Bulletin 2131), T in K.
 #[derive(Debug, Clone, Copy, PartialEq, Default)]
 pub struct MaierKelley {
     /// The constant.
@@ -21,8 +21,8 @@ pub struct MaierKelley {
 }
 
 impl HeatCapacity {
-    /// The NASA 9-term form `cp/R = a1/T² + a2/T + a3 + a4 T + a5 T² + a6 T³ + a7 T⁴` (B. J. McBride, M. J. Zehe, S.
-    /// Gordon, NASA/TP-2002-211556). `gas_constant` is the one that the publication used.
+    /// The NASA 9-term form `cp/R = a1/T² + a2/T + a3 + a4 T + a5 T² + a6 T³ + a7 T⁴` (B. J. McBride, M. J.
+    /// Zehe, S. Gordon, NASA/TP-2002-211556). `gas_constant` is the one that the publication used.
     ///
     /// # Errors
     /// [`HeatCapacityError`] for a coefficient that is not finite or a factor that is not positive.
@@ -35,8 +35,8 @@ impl HeatCapacity {
         HeatCapacity::scaled_powers(&terms(a, exponents), gas_constant.value / molar_mass.value)
     }
 
-    /// The NASA 7-term form `cp/R = a1 + a2 T + a3 T² + a4 T³ + a5 T⁴` (S. Gordon, B. J. McBride, NASA SP-273, 1971).
-    /// `gas_constant` is the one that the publication used.
+    /// The NASA 7-term form `cp/R = a1 + a2 T + a3 T² + a4 T³ + a5 T⁴` (S. Gordon, B. J. McBride, NASA
+    /// SP-273, 1971). `gas_constant` is the one that the publication used.
     ///
     /// # Errors
     /// As for [`HeatCapacity::nasa9`].
@@ -49,9 +49,9 @@ impl HeatCapacity {
         HeatCapacity::scaled_powers(&terms(a, exponents), gas_constant.value / molar_mass.value)
     }
 
-    /// The Shomate form `cp = A + B t + C t² + D t³ + E/t²` in J/(mol K), `t = T/(1000 K)` (C. H. Shomate, J. Phys.
-    /// Chem. 1954, 58, 368, for the method; the form as NIST prints it). The coefficients, in the order A to E, are
-    /// turned to T in K once, which moves them by no more than their last bit.
+    /// The Shomate form `cp = A + B t + C t² + D t³ + E/t²` in J/(mol K), `t = T/(1000 K)` (C. H. Shomate, J.
+    /// Phys. Chem. 1954, 58, 368, for the method; the form as NIST prints it). The coefficients, in the order
+    /// A to E, are turned to T in K once, which moves them by no more than their last bit.
     ///
     /// # Errors
     /// As for [`HeatCapacity::nasa9`].

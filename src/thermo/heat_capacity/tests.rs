@@ -133,7 +133,8 @@ fn molar_enthalpy(intervals: &[Interval], t: f64) -> f64 {
 
 #[test]
 fn published_coefficients_give_the_published_enthalpies() {
-    // Expected: the NASA 9-term records' own enthalpies with R = 8.314510 J/(mol K), to the hundredth of a J/mol.
+    // Expected: the NASA 9-term records' own enthalpies with R = 8.314510 J/(mol K), to the hundredth of a
+    // J/mol.
     let cases: [Case; 5] = [
         (
             "O2",
@@ -157,8 +158,8 @@ fn published_coefficients_give_the_published_enthalpies() {
 
 #[test]
 fn nasa7_shomate_and_maier_kelley_are_their_polynomials() {
-    // Worked by hand at 500 K: 8 (1 + 2·0.5 + 3·0.25 + 4·0.125 + 5·0.0625) = 28.5; 2 + 1 + 1 + 1 + 20 = 25 with
-    // t = 0.5; 10 + 5 + 4 + 0.5·√500 + 25.
+    // Worked by hand at 500 K: 8 (1 + 2·0.5 + 3·0.25 + 4·0.125 + 5·0.0625) = 28.5; 2 + 1 + 1 + 1 + 20 = 25
+    // with t = 0.5; 10 + 5 + 4 + 0.5·√500 + 25.
     let eight = uom::si::f64::MolarHeatCapacity::new::<joule_per_kelvin_mole>(8.0);
     let nasa7 = HeatCapacity::nasa7([1.0, 2e-3, 3e-6, 4e-9, 5e-12], eight, unit_mass()).unwrap();
     assert!((nasa7.cp(k(500.0)).value - 28.5).abs() < 1e-12);

@@ -22,7 +22,8 @@ pub struct Part<'a> {
 pub struct Settled {
     /// The temperature.
     pub temperature: ThermodynamicTemperature,
-    /// On a plateau the mass share of the upper phase, the same in every part that changes there.
+    /// Exactly on a point transition the mass share of the upper phase, the same in every part that changes
+    /// there.
     pub upper_share: Option<f64>,
 }
 
@@ -38,7 +39,10 @@ pub enum SettleError {
     NoSuchPhase { part: usize },
     /// A part that is not a gas, or a gas without molar mass, where an ideal gas is wanted.
     NotAGas { part: usize },
-    /// The data of the parts share no temperature: the highest of their lower ends lies above the lowest upper end.
+    /// A start at which a part has no data.
+    StartOutsideRange { part: usize, lo: ThermodynamicTemperature, hi: ThermodynamicTemperature },
+    /// The data of the parts share no temperature: the highest of their lower ends lies above the lowest
+    /// upper end.
     NoCommonRange { lo: ThermodynamicTemperature, hi: ThermodynamicTemperature },
     /// The target lies outside what the parts hold between the ends of their data.
     Unreachable(Unreachable),

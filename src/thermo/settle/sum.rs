@@ -15,13 +15,21 @@ pub(super) struct Sum<'a> {
     pub(super) pressure: f64,
 }
 
-/// The temperatures that all parts share, with the totals at both ends.
+/// The temperatures that all parts share.
+#[derive(Debug, Clone, Copy)]
 struct Window {
     lo: f64,
     hi: f64,
-    at_lo: f64,
-    at_hi: f64,
+    /// Whether an end is a boiling point that does not hold at the pressure.
     boiling: bool,
+}
+
+/// An end of the bracket, with the total there as seen from inside it; none at an end of the window not yet
+/// looked at.
+#[derive(Debug, Clone, Copy)]
+struct End {
+    t: f64,
+    total: Option<f64>,
 }
 
 impl<'a> Sum<'a> {
@@ -59,36 +67,19 @@ impl<'a> Sum<'a> {
     pub(super) fn settle(&self, target: f64) -> Result<Settled, SettleError> {
         self.check()?;
         let window = self.window()?;
-        let plain = |t: f64| Settled { temperature: typed(t), upper_share: None };
-        if !(target.is_finite() && window.at_lo.is_finite() && window.at_hi.is_finite()) {
+        if !target.is_finite() {
             return Err(SettleError::NotFinite);
         }
-        let slack = ROUNDING * (window.at_lo.abs() + window.at_hi.abs());
-        if target <= window.at_lo && target >= window.at_lo - slack {
-            return Ok(plain(window.lo));
-        }
-        if target > window.at_hi && target <= window.at_hi + slack {
-            return Ok(plain(window.hi));
-        }
-        if target < window.at_lo || target > window.at_hi {
-            return Err(SettleError::Unreachable(Unreachable {
-                least: typed(window.at_lo),
-                most: typed(window.at_hi),
-                lo: typed(window.lo),
-                hi: typed(window.hi),
-                boiling: window.boiling,
-            }));
-        }
-        match self.narrow(window, target) {
+        match self.narrow(window, target)? {
             Narrowed::Met(settled) => Ok(settled),
-            Narrowed::Between { a, b, at_a, at_b } => {
-                let start = a + (b - a) * ((target - at_a) / (at_b - at_a));
+            Narrowed::Between { a, b } => {
+                let start = a.0 + (b.0 - a.0) * ((target - a.1) / (b.1 - a.1));
                 let f = |t: f64| {
                     let (total, slope) = self.total_and_slope(t);
                     (total - target, slope)
                 };
-                let root = find_rising_root(f, (a, b), start).map_err(|_| SettleError::NotFinite)?;
-                Ok(plain(root.x))
+                let root = find_rising_root(f, (a.0, b.0), start).map_err(|_| SettleError::NotFinite)?;
+                Ok(self.beside(root.x, a.0))
             }
         }
     }
@@ -122,42 +113,131 @@ impl<'a> Sum<'a> {
         if lo > hi {
             return Err(SettleError::NoCommonRange { lo: typed(lo), hi: typed(hi) });
         }
-        let at_lo = self.over_parts(|part, track| {
-            let limits = part.curve.limits(track, part.allowance, self.pressure);
-            part.curve.measure(track, self.measure, lo, limits.gas_only && limits.lo == lo)
-        });
-        let at_hi = self.over_parts(|part, track| {
-            let limits = part.curve.limits(track, part.allowance, self.pressure);
-            part.curve.measure(track, self.measure, hi, !(limits.condensed_only && limits.hi == hi))
-        });
-        Ok(Window { lo, hi, at_lo, at_hi, boiling })
+        Ok(Window { lo, hi, boiling })
     }
 
-    /// Tries every edge between the ends until the target is met or no edge is left.
-    fn narrow(&self, window: Window, target: f64) -> Narrowed {
-        let Window { lo: mut a, hi: mut b, at_lo: mut at_a, at_hi: mut at_b, .. } = window;
-        let (mut a_tried, mut b_tried) = (false, false);
+    /// Tries every edge between the ends, then the ends as far as they are still open, until the target is
+    /// met or the bracket holds no edge.
+    fn narrow(&self, window: Window, target: f64) -> Result<Narrowed, SettleError> {
+        let (mut a, mut b) = (End { t: window.lo, total: None }, End { t: window.hi, total: None });
         for (_, track) in self.tracks() {
             for edge in track.map_or(&[][..], |track| &track.pieces).iter().map(|piece| piece.hi) {
-                if edge < a || edge > b || (a_tried && edge == a) || (b_tried && edge == b) {
+                if edge <= a.t || edge >= b.t {
                     continue;
                 }
-                let (below, above) = (self.total(edge, false), self.total(edge, true));
+                let below = self.total(edge, false);
+                let above = if self.changes_at(edge) { self.total(edge, true) } else { below };
                 if target < below {
-                    (b, at_b, b_tried) = (edge, below, true);
+                    b = End { t: edge, total: Some(below) };
                 } else if target > above {
-                    (a, at_a, a_tried) = (edge, above, true);
+                    a = End { t: edge, total: Some(above) };
                 } else {
-                    let upper_share = (above > below).then(|| (target - below) / (above - below));
-                    return Narrowed::Met(Settled { temperature: typed(edge), upper_share });
+                    return Ok(met(edge, (below, above), target));
                 }
             }
         }
-        Narrowed::Between { a, b, at_a, at_b }
+        self.close(window, (a, b), target)
+    }
+
+    /// Looks at the ends of the window that no edge has replaced.
+    fn close(&self, window: Window, (a, b): (End, End), target: f64) -> Result<Narrowed, SettleError> {
+        let at_a = match a.total {
+            Some(total) => total,
+            None => {
+                let (least, top) = self.ends_at(a.t, true);
+                if target <= top || top.is_nan() {
+                    return self.met_or_missed(window, a.t, (least, top), target);
+                }
+                top
+            }
+        };
+        let at_b = match b.total {
+            Some(total) => total,
+            None => {
+                let (bottom, most) = self.ends_at(b.t, false);
+                if target >= bottom || bottom.is_nan() {
+                    return self.met_or_missed(window, b.t, (bottom, most), target);
+                }
+                bottom
+            }
+        };
+        Ok(Narrowed::Between { a: (a.t, at_a), b: (b.t, at_b) })
+    }
+
+    /// The target at an end of the window, unless it lies outside by more than rounding can bring about.
+    fn met_or_missed(
+        &self,
+        window: Window,
+        t: f64,
+        (below, above): (f64, f64),
+        target: f64,
+    ) -> Result<Narrowed, SettleError> {
+        let (_, slope) = self.total_and_slope(t);
+        let slack = ROUNDING * (below.abs() + (slope * t).abs());
+        if target >= below - slack && target <= above + slack {
+            Ok(met(t, (below, above), target))
+        } else {
+            Err(self.unreachable(window))
+        }
+    }
+
+    /// The totals on the lower and the upper side of an end of the window; a boiling point that does not hold
+    /// has but one side.
+    fn ends_at(&self, t: f64, lower_end: bool) -> (f64, f64) {
+        let side = |upper: bool| {
+            self.over_parts(|part, track| {
+                let limits = part.curve.limits(track, part.allowance, self.pressure);
+                let forced = if lower_end {
+                    limits.gas_only && limits.lo == t
+                } else {
+                    limits.condensed_only && limits.hi == t
+                };
+                let upper = if forced { lower_end } else { upper };
+                part.curve.measure(track, self.measure, t, upper)
+            })
+        };
+        let below = side(false);
+        (below, if self.changes_at(t) { side(true) } else { below })
+    }
+
+    /// A temperature found between two edges; where rounding puts it onto a transition, the side it came from
+    /// is kept.
+    fn beside(&self, t: f64, lower_edge: f64) -> Settled {
+        let share = if t == lower_edge { 1.0 } else { 0.0 };
+        Settled { temperature: typed(t), upper_share: self.changes_at(t).then_some(share) }
+    }
+
+    /// Whether any part has a transition exactly at `t`.
+    fn changes_at(&self, t: f64) -> bool {
+        self.tracks().any(|(_, track)| track.is_some_and(|track| track.changes_at(t)))
+    }
+
+    fn unreachable(&self, window: Window) -> SettleError {
+        let (least, most) = (self.ends_at(window.lo, true).0, self.ends_at(window.hi, false).1);
+        if !(least.is_finite() && most.is_finite()) {
+            return SettleError::NotFinite;
+        }
+        SettleError::Unreachable(Unreachable {
+            least: typed(least),
+            most: typed(most),
+            lo: typed(window.lo),
+            hi: typed(window.hi),
+            boiling: window.boiling,
+        })
     }
 }
 
 enum Narrowed {
     Met(Settled),
-    Between { a: f64, b: f64, at_a: f64, at_b: f64 },
+    /// Temperatures with the totals there.
+    Between {
+        a: (f64, f64),
+        b: (f64, f64),
+    },
+}
+
+/// The target is met at `t`, where the total goes from `below` to `above`.
+fn met(t: f64, (below, above): (f64, f64), target: f64) -> Narrowed {
+    let share = (above > below).then(|| ((target - below) / (above - below)).clamp(0.0, 1.0));
+    Narrowed::Met(Settled { temperature: typed(t), upper_share: share })
 }

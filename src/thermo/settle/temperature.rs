@@ -8,8 +8,8 @@ use crate::thermo::constants::{GAS_CONSTANT, STANDARD_ATMOSPHERE};
 use crate::thermo::curve::Measure;
 use crate::thermo::si::typed;
 
-/// The temperature at which the parts' enthalpies add up to `target`, at `pressure`. For a flow the masses are those of
-/// one second and the target is its power times one second.
+/// The temperature at which the parts' enthalpies add up to `target`, at `pressure`. For a flow the masses
+/// are those of one second and the target is its power times one second.
 ///
 /// # Errors
 /// [`SettleError`].
@@ -29,8 +29,8 @@ pub fn temperature_for_enthalpy(
     sum.settle(target.value)
 }
 
-/// The temperature at which the parts' internal energies add up to `target`. The pressure decides only on which side of
-/// its boiling point a species may be.
+/// The temperature at which the parts' internal energies add up to `target`. The pressure decides only on
+/// which side of its boiling point a species may be.
 ///
 /// # Errors
 /// [`SettleError`].
@@ -50,8 +50,8 @@ pub fn temperature_for_internal_energy(
     sum.settle(target.value)
 }
 
-/// The temperature to which ideal gases at `from` come when their pressure changes reversibly without heat by the factor
-/// `exp(log_pressure_ratio)`: their entropies change by `m R/M ln(p2/p1)` altogether.
+/// The temperature to which ideal gases at `from` come when their pressure changes reversibly without heat by
+/// the factor `exp(log_pressure_ratio)`: their entropies change by `m R/M ln(p2/p1)` altogether.
 ///
 /// # Errors
 /// [`SettleError`]; every part has to be pinned to a gas and to have a molar mass.
@@ -68,6 +68,11 @@ pub fn temperature_isentropic(
             Some(molar_mass) if part.curve.all_gas(track) => gain += part.mass.value / molar_mass.value,
             _ => return Err(SettleError::NotAGas { part: index }),
         }
+        let limits = part.curve.limits(track, part.allowance, STANDARD_ATMOSPHERE);
+        if !(from.value >= limits.lo && from.value <= limits.hi) {
+            let (lo, hi) = (typed(limits.lo), typed(limits.hi));
+            return Err(SettleError::StartOutsideRange { part: index, lo, hi });
+        }
     }
     let target = sum.total(from.value, false) + GAS_CONSTANT * gain * log_pressure_ratio;
     sum.settle(target).map_err(|error| match error {
@@ -76,7 +81,8 @@ pub fn temperature_isentropic(
     })
 }
 
-/// One part whose enthalpy pressure does not touch, inside its own data: the piece is read off, no sum is needed.
+/// One part whose enthalpy pressure does not touch, inside its own data: the piece is read off, no sum is
+/// needed.
 #[inline]
 fn settle_alone(part: &Part<'_>, target: f64, pressure: f64) -> Option<Settled> {
     let curve = part.curve;
@@ -94,10 +100,12 @@ fn settle_alone(part: &Part<'_>, target: f64, pressure: f64) -> Option<Settled> 
     if cut || piece.lo < limits.lo || piece.hi > limits.hi {
         return None;
     }
-    if curve.is_plateau(piece) {
+    if piece.plateau {
         let share = (h - piece.h_lo) / (piece.h_hi - piece.h_lo);
         return Some(Settled { temperature: typed(piece.lo), upper_share: Some(share) });
     }
     let t = curve.temperature_on(piece, h);
-    t.is_finite().then_some(Settled { temperature: typed(t), upper_share: None })
+    let side = if t == piece.lo { 1.0 } else { 0.0 };
+    let upper_share = track.changes_at(t).then_some(side);
+    t.is_finite().then_some(Settled { temperature: typed(t), upper_share })
 }

@@ -32,7 +32,8 @@ fn ice() -> HeatingCurve {
 
 #[test]
 fn a_heat_that_ends_on_the_plateau_gives_its_share() {
-    // 450 kg from 291.15 K with sensible heat up to the melting point and 40 % of 7322 J/mol over 65.38 g/mol.
+    // 450 kg from 291.15 K with sensible heat up to the melting point and 40 % of 7322 J/mol over 65.38
+    // g/mol.
     let zinc = zinc();
     let sensible = 22.40 * (692.68 - 291.15) + 0.5 * 10.05e-3 * (692.68 * 692.68 - 291.15 * 291.15);
     let heat = 450.0 * (sensible + 0.4 * 7322.0) / 0.065_38;
@@ -67,8 +68,8 @@ fn quenching_ends_at_the_mean_weighted_by_heat_capacity() {
 
 #[test]
 fn ice_in_warm_water_melts_by_the_balance() {
-    // 10 kg of ice at 263.15 K in 30 kg of water at 290 K: cooling to 273.15 K gives 30·4200·16.85 = 2.1231 MJ, warming
-    // the ice takes 0.21 MJ, 1.9131 MJ melts 5.745 kg: of all 40 kg, 35.745/40 are liquid.
+    // 10 kg of ice at 263.15 K in 30 kg of water at 290 K: cooling to 273.15 K gives 30·4200·16.85 = 2.1231
+    // MJ, warming the ice takes 0.21 MJ, 1.9131 MJ melts 5.745 kg: of all 40 kg, 35.745/40 are liquid.
     let ice = ice();
     let parts = [part(&ice, Pin::Stable, 10.0), part(&ice, Pin::Stable, 30.0)];
     let target = 10.0 * h(&ice, 263.15) + 30.0 * h(&ice, 290.0);
@@ -174,6 +175,8 @@ fn isentropic_compression_follows_the_poisson_law() {
         temperature_isentropic(&parts, k(300.0), 100.0),
         Err(SettleError::RatioUnreachable { hi, .. }) if hi == k(3000.0)
     ));
+    let outside = temperature_isentropic(&parts, k(90.0), 1.0);
+    assert_eq!(outside, Err(SettleError::StartOutsideRange { part: 0, lo: k(100.0), hi: k(3000.0) }));
     let ice = ice();
     let refused = temperature_isentropic(&[part(&ice, Pin::Stable, 1.0)], k(250.0), 1.0);
     assert_eq!(refused, Err(SettleError::NotAGas { part: 0 }));
@@ -206,7 +209,48 @@ fn a_settled_temperature_near_a_transition_has_a_place() {
     assert_eq!(zinc.phases_at(place.unwrap()).lower, (1, 1.0));
 }
 
+/// What parts of 1 kg in all hold at a settled temperature, at the places that it names.
+fn held(parts: &[Part<'_>], settled: Settled, pressure: f64) -> f64 {
+    let hold = |part: &Part<'_>| {
+        let (t, share) = (settled.temperature, settled.upper_share);
+        let place = part.curve.place(t, typed(pressure), part.pin, share, part.allowance).unwrap();
+        part.mass.value * part.curve.enthalpy(place).value
+    };
+    parts.iter().map(hold).sum()
+}
+
 proptest! {
+    #[test]
+    fn the_settled_place_holds_the_target(
+        part_of_span in 0.0_f64..=1.0,
+        edge in 0_usize..12,
+        nudge in -3_i32..=3,
+        at_edge in any::<bool>(),
+        pressure in prop_oneof![Just(101_325.0), Just(50e3), Just(5e5)],
+    ) {
+        // Anywhere between the ends of the curve, or some last digits beside one of its edges.
+        let rich = rich();
+        let edges: Vec<_> = rich.edges(Pin::Stable).flat_map(|edge| [edge.below.value, edge.above.value]).collect();
+        let (least, most) = (edges[0], edges[edges.len() - 1]);
+        let spread = least + (most - least) * part_of_span;
+        let beside = edges[edge % edges.len()] * (1.0 + f64::from(nudge) * f64::EPSILON);
+        let target = if at_edge { beside } else { spread };
+        let alone = [part(&rich, Pin::Stable, 1.0)];
+        let halves = [part(&rich, Pin::Stable, 0.25), part(&rich, Pin::Stable, 0.75)];
+        for parts in [&alone[..], &halves[..]] {
+            match temperature_for_enthalpy(parts, energy(target), typed(pressure)) {
+                Ok(settled) => {
+                    let found = held(parts, settled, pressure);
+                    prop_assert!((found - target).abs() < 1e-8, "{found} for {target}: {settled:?}");
+                }
+                Err(SettleError::Unreachable(reach)) => {
+                    prop_assert!(target < reach.least.value || target > reach.most.value, "{reach:?}");
+                }
+                Err(other) => prop_assert!(false, "{other:?}"),
+            }
+        }
+    }
+
     #[test]
     fn settling_undoes_enthalpy(t in 250.0_f64..2000.0, mass in 0.001_f64..1e6) {
         let rich = rich();

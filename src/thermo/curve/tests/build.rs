@@ -4,8 +4,8 @@ use super::*;
 
 #[test]
 fn latent_heat_follows_from_two_formation_enthalpies() {
-    // Liquid cp 4180, gas cp 1865, formations -15.866e6 and -13.423e6 J/kg at 298.15 K; at 373.15 K the gas lies higher
-    // by 2.443e6 + 75 (1865 - 4180) = 2 269 375 J/kg.
+    // Liquid cp 4180, gas cp 1865, formations -15.866e6 and -13.423e6 J/kg at 298.15 K; at 373.15 K the gas
+    // lies higher by 2.443e6 + 75 (1865 - 4180) = 2 269 375 J/kg.
     let mut liquid = phase("liquid", PhaseClass::Liquid, &[(273.15, 500.0, &[(4180.0, 0.0)])]);
     let mut gas = phase("gas", PhaseClass::Gas, &[(298.15, 1000.0, &[(1865.0, 0.0)])]);
     gas.formation = Some(j(-13.423e6));
@@ -116,4 +116,42 @@ fn a_table_must_cover_its_range_and_is_not_stretched_by_leave() {
     let curve = build(table(300.0, 500.0)).unwrap();
     let allowed = Allowance::default().allow(0, k(300.0), k(600.0));
     assert!(curve.locate(k(550.0), atmosphere(), Pin::Stable, None, &allowed).is_err());
+}
+
+#[test]
+fn published_records_give_their_published_enthalpies_through_melting() {
+    // NASA/TP-2002-211556 (McBride, Zehe, Gordon 2002), records Zn(cr), Zn(L), AL(cr), AL(L): coefficients,
+    // melting points and the jump between the records as latent heat; expected H(T) - H(298.15 K) in J/mol
+    // from the records' own enthalpy constants.
+    type Record = ([f64; 7], [f64; 7], f64, f64, [(f64, f64); 4]);
+    let liquid = |a3: f64| [0.0, 0.0, a3, 0.0, 0.0, 0.0, 0.0];
+    let zinc: Record = (
+        [370208.038, -5915.4755, 39.5950036, -0.1143735885, 0.0001934363797, -1.675385126e-7, 6.07818994e-11],
+        liquid(3.776530427),
+        692.73,
+        7300.0,
+        [(500.0, 5299.21), (800.0, 21530.34), (900.0, 24670.34), (1100.0, 30950.34)],
+    );
+    let aluminium: Record = (
+        [-62518.1143, 634.393435, -0.713188382, 0.0108872528, -1.45874182e-5, 9.96116088e-9, -1.77492801e-12],
+        liquid(3.81862551),
+        933.61,
+        10700.0,
+        [(800.0, 13809.3), (1300.0, 40478.78), (1700.0, 53178.78), (2700.0, 84928.78)],
+    );
+    for (solid_a, liquid_a, melts, latent, points) in [zinc, aluminium] {
+        // A molar mass of 1 kg/mol makes per mass and per mole the same number.
+        let law = |a| HeatCapacity::nasa9(a, typed(8.314_51), typed(1.0)).unwrap();
+        let mut solid = phase("solid", PhaseClass::Solid, &[(200.0, melts, &[(1.0, 0.0)])]);
+        let mut liquid = phase("liquid", PhaseClass::Liquid, &[(melts, 6000.0, &[(1.0, 0.0)])]);
+        (solid.ranges[0].law, liquid.ranges[0].law) = (law(solid_a), law(liquid_a));
+        let melting = Link::At { temperature: k(melts), latent: j(latent) };
+        let mut data = data(vec![solid, liquid], vec![melting]);
+        data.formation = Some(j(0.0));
+        let curve = HeatingCurve::build(data).unwrap();
+        for (t, expected) in points {
+            let found = h(&curve, t);
+            assert!((found - expected).abs() < 0.006, "{t} K: {found} for {expected}");
+        }
+    }
 }

@@ -70,8 +70,8 @@ fn alloy_data() -> CurveData {
     )
 }
 
-/// A species with everything: two solids, the second with two ranges, a melting range, a boiling point, and a second gas
-/// that stands apart; invented numbers.
+/// A species with everything: two solids, the second with two ranges, a melting range, a boiling point, and a
+/// second gas that stands apart; invented numbers.
 pub(in crate::thermo) fn rich_data() -> CurveData {
     let mut vapour = phase("dimer", PhaseClass::Gas, &[(250.0, 900.0, &[(700.0, 0.0)])]);
     vapour.formation = Some(j(2.0e6));
