@@ -10,6 +10,7 @@ mod model;
 pub mod number;
 #[cfg(test)]
 mod sample;
+mod text;
 
 pub use diagnostics_json::render_diagnostics_json;
 pub use json::render_json;
@@ -18,3 +19,4 @@ pub use model::{
     Quantity, Report, RequirementRow, ResultRow, Side, SiteRow, SpeciesRow, StateRow, StepRow, TableColumn,
     TableRow, TableRows,
 };
+pub use text::{Style, render_text};
