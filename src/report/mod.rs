@@ -4,6 +4,7 @@
 //! they are to be shown; out come text and JSON. A renderer reads the model and nothing else. `number.rs` is the only
 //! place that formats numbers.
 
+mod conventions;
 mod diagnostics_json;
 mod json;
 mod model;
@@ -12,6 +13,7 @@ pub mod number;
 mod sample;
 mod text;
 
+pub use conventions::standing_conventions;
 pub use diagnostics_json::render_diagnostics_json;
 pub use json::render_json;
 pub use model::{

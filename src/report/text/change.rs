@@ -4,8 +4,8 @@ use super::given::worked;
 use super::grid::Grid;
 use super::ground::datum_mark;
 use super::page::{BODY, Page};
-use crate::report::model::{DataRow, LegRow, Quantity, StateRow, StepRow};
-use crate::report::number::{fixed, shown, shown_column, shown_number};
+use crate::report::model::{DataRow, LegRow, StateRow, StepRow};
+use crate::report::number::{shown, shown_column, shown_number, shown_share};
 use crate::units::{Dimension, Unit, engineering_unit};
 
 pub(super) fn write_state(page: &mut Page, row: &StateRow) {
@@ -27,10 +27,10 @@ fn conditions(row: &StateRow) -> String {
 
 fn amounts(row: &StateRow) -> String {
     let by = if row.phases_by_mole { "by mole" } else { "by mass" };
-    let share = |(phase, share): &(String, f64)| format!("{phase} {} %", fixed(share * 100.0, 2));
+    let share = |(phase, share): &(String, f64)| format!("{phase} {}", shown_share(*share));
     let phases: Vec<_> = row.phases.iter().map(share).collect();
-    let amounts: Vec<_> = [Some(&row.mass), row.amount.as_ref()].into_iter().flatten().map(shown).collect();
-    format!("{}; {} {by}", amounts.join(" or "), phases.join(", "))
+    let amount = row.amount.as_ref().map(|amount| format!(" ({})", shown(amount))).unwrap_or_default();
+    format!("{}{amount}; {} {by}", shown(&row.mass), phases.join(", "))
 }
 
 fn kelvin(value: f64) -> String {
@@ -71,12 +71,13 @@ fn write_legs(page: &mut Page, row: &StepRow, mark: &str, data: &[DataRow]) {
         grid.row([number, leg.kind.as_str().into(), matter.trim().into(), temperatures(leg), value]);
     }
     let lines = grid.lines(usize::from(u16::MAX));
+    let column = BODY + mark.len() + 4;
     for (line, leg) in lines.iter().zip(&row.legs) {
         page.text(BODY, line);
         if !leg.datum.is_empty() {
             page.hanging(
-                &" ".repeat(BODY + 7),
-                BODY + 9,
+                &" ".repeat(column),
+                column + 3,
                 &format!("by {}{}", leg.datum, datum_mark(leg, data)),
             );
         }
@@ -101,7 +102,6 @@ fn leg_unit(row: &StepRow) -> Unit {
 fn write_sides(page: &mut Page, row: &StepRow) {
     let mut grid = Grid::new();
     for side in &row.sides {
-        let Quantity { .. } = side.value;
         let value = shown(&side.value);
         let sides = worked(&side.formula, None, &value).into_iter().filter(|text| !text.is_empty());
         let text = sides.map(|text| format!("= {text}")).collect::<Vec<_>>();

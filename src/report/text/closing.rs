@@ -8,16 +8,26 @@ use crate::report::model::Report;
 const GENERAL_CAUTION: &str = "These figures follow from the inputs and data above. They do not replace local codes, \
     the makers' limits or a licensed engineer's judgement.";
 
+/// How numbers are printed.
+const NUMBERS: &str = "Numbers are printed to five significant digits, temperatures and percentages to 0.01; the \
+    working uses the unrounded values.";
+
 /// How intervals are read.
-const INTERVALS: &str = "u is the standard uncertainty that an input's interval stands for (JCGM 100:2008): an \
+const INTERVALS: &str = "u is the standard uncertainty that an input's interval stands for (JCGM 100:2008); an \
     interval without a mark is rectangular. Inputs marked exact have no interval. This version prints intervals \
     but does not propagate them: the results carry no uncertainty and the verdicts no odds.";
+
+/// The same where there are none.
+const NO_INTERVALS: &str =
+    "No input has an interval: all count as exact, and the results carry no uncertainty.";
 
 pub(super) fn write_closing(page: &mut Page, report: &Report) {
     write_warnings(page, report);
     write_cautions(page, report);
     page.section("Conventions");
-    for sentence in report.conventions.iter().map(String::as_str).chain([INTERVALS]) {
+    let any = report.inputs.iter().any(|row| row.interval.is_some());
+    let intervals = if any { INTERVALS } else { NO_INTERVALS };
+    for sentence in report.conventions.iter().map(String::as_str).chain([intervals, NUMBERS]) {
         page.hanging("– ", 2, sentence);
     }
     write_signatures(page);

@@ -28,14 +28,14 @@ fn site_cells(site: &SiteRow) -> [String; 5] {
     let value = format!("{} {}", exact(atmosphere.value), shown_unit(&atmosphere.unit, atmosphere.pressure));
     let (role, unsaid) = match site.written {
         Some(_) => ("site", NO_SOURCE),
-        None => ("assume", "the sheet does not say: standard atmosphere"),
+        None => ("assume", "standard atmosphere, assumed"),
     };
     let source = site.source.as_deref().unwrap_or(unsaid);
     [role.into(), "site atmosphere".into(), value, "exact".into(), source.into()]
 }
 
 fn input_cells(row: &InputRow) -> [String; 5] {
-    let written = if row.written.is_empty() { shown(&row.value) } else { with_basis(row) };
+    let written = if row.written.is_empty() { shown(&row.value) } else { as_written(row) };
     let value = match &row.interval {
         Some(interval) if !written.contains(interval.as_str()) => format!("{written} {interval}"),
         _ => written,
@@ -46,14 +46,15 @@ fn input_cells(row: &InputRow) -> [String; 5] {
     [row.role.into(), row.name.clone(), value, uncertainty.unwrap_or_else(|| "exact".into()), source.into()]
 }
 
-/// The value as written; behind a pressure stands `abs` or `gauge`.
-fn with_basis(row: &InputRow) -> String {
+/// The value as written; behind a pressure stands `abs` or `gauge`, behind a value that is shown in another unit than it
+/// is written in, that value.
+fn as_written(row: &InputRow) -> String {
     let symbol = row.value.unit.text.as_str();
     let unit = shown_unit(&row.value.unit, row.value.pressure);
-    match (row.value.pressure, row.written.strip_suffix(symbol)) {
-        (Some(_), Some(number)) => format!("{number}{unit}"),
-        (Some(_), None) => format!("{} ({})", row.written, shown(&row.value)),
-        (None, _) => row.written.clone(),
+    match row.written.strip_suffix(symbol) {
+        Some(number) => format!("{number}{unit}"),
+        None if unit.is_empty() => row.written.clone(),
+        None => format!("{} = {}", row.written, shown(&row.value)),
     }
 }
 

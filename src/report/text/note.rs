@@ -99,22 +99,20 @@ fn write_section(page: &mut Page, report: &Report, chunk: &[(Section, Item)]) {
     }
 }
 
-fn write_item(page: &mut Page, report: &Report, item: Item) {
-    let written = match item {
-        Item::Remark(index) => report.remarks.get(index).map(|text| page.text(0, text)),
-        Item::Species(index) => report.species.get(index).map(|row| write_species(page, row)),
-        Item::Mixture(index) => report.mixtures.get(index).map(|row| write_mixture(page, row)),
-        Item::Input(index) => report.inputs.get(index).map(|row| write_derived(page, row)),
-        Item::State(index) => report.states.get(index).map(|row| write_state(page, row)),
-        Item::Step(index) => report.steps.get(index).map(|row| write_step(page, row, &report.data)),
-        Item::Duty(index) => report.duties.get(index).map(|row| write_duty(page, row)),
-        Item::Result(index) => report.results.get(index).map(|row| write_result(page, row)),
-        Item::Requirement(index) => report.requirements.get(index).map(|row| write_requirement(page, row)),
-        Item::Table(index) => report.tables.get(index).map(|row| write_table(page, row)),
-        Item::Site => None,
-    };
-    debug_assert!(
-        written.is_some() || item == Item::Site,
-        "the order names a row that is not there: {item:?}"
-    );
+/// Writes what the item names; `None` where the report has no such row.
+fn write_item(page: &mut Page, report: &Report, item: Item) -> Option<()> {
+    match item {
+        Item::Remark(index) => page.text(0, report.remarks.get(index)?),
+        Item::Species(index) => write_species(page, report.species.get(index)?),
+        Item::Mixture(index) => write_mixture(page, report.mixtures.get(index)?),
+        Item::Site => write_inputs(page, report, std::iter::once(item)),
+        Item::Input(index) => write_derived(page, report.inputs.get(index)?),
+        Item::State(index) => write_state(page, report.states.get(index)?),
+        Item::Step(index) => write_step(page, report.steps.get(index)?, &report.data),
+        Item::Duty(index) => write_duty(page, report.duties.get(index)?),
+        Item::Result(index) => write_result(page, report.results.get(index)?),
+        Item::Requirement(index) => write_requirement(page, report.requirements.get(index)?),
+        Item::Table(index) => write_table(page, report.tables.get(index)?),
+    }
+    Some(())
 }

@@ -4,7 +4,7 @@ use super::page::Page;
 use super::style::Ink;
 use crate::diagnostic::{and_list, count};
 use crate::report::model::{Report, RequirementRow};
-use crate::report::number::{shown, shown_apart, significant};
+use crate::report::number::{shown, shown_apart};
 use textwrap::core::display_width;
 
 /// How many results are named in the answer in short.
@@ -15,9 +15,10 @@ pub(super) fn write_opening(page: &mut Page, report: &Report) {
     page.hairline();
     let file = ("file".to_owned(), report.file.clone());
     let entries: Vec<_> = report.head.iter().chain([&file]).collect();
-    let widest = entries.iter().map(|(word, _)| display_width(word)).max().unwrap_or(0);
+    let widest =
+        entries.iter().map(|(word, _)| display_width(word)).max().unwrap_or(0).min(page.columns() / 3);
     for (word, text) in entries {
-        let blanks = " ".repeat(widest - display_width(word) + 2);
+        let blanks = " ".repeat(widest.saturating_sub(display_width(word)) + 2);
         page.hanging(&format!("{word}{blanks}"), widest + 2, text);
     }
     page.section("Answer in short");
@@ -62,7 +63,7 @@ fn write_results(page: &mut Page, report: &Report) {
     let mut texts: Vec<_> = named.collect();
     let more = report.results.len() - texts.len();
     if more > 0 {
-        texts.push(format!("and {} more", significant(more as f64, 12)));
+        texts.push(format!("and {more} more"));
     }
     page.text(0, &format!("{}.", texts.join("; ")));
 }

@@ -5,6 +5,7 @@ use super::grid::Grid;
 use super::opening::found;
 use super::page::{BODY, Page};
 use super::style::Ink;
+use crate::diagnostic::and_list;
 use crate::report::model::{DutyRow, RequirementRow, ResultRow, TableColumn, TableRows};
 use crate::report::number::{shown, shown_apart, shown_column, shown_unit};
 
@@ -12,7 +13,7 @@ pub(super) fn write_duty(page: &mut Page, row: &DutyRow) {
     let mark = page.tick();
     page.item(&mark, &format!("{}: {}", row.name, row.written));
     let (useful, supplied) = (shown(&row.useful), shown(&row.supplied));
-    page.equation("", "useful", &worked(&row.put_in, None, &useful));
+    page.equation("", "useful  ", &worked(&row.put_in, None, &useful));
     page.equation("", "supplied", &[&supplied]);
 }
 
@@ -26,8 +27,12 @@ pub(super) fn write_requirement(page: &mut Page, row: &RequirementRow) {
     let word = if row.met { "met" } else { "not met" };
     page.inked_item(&mark, Ink::of_verdict(row.met), word, &row.written);
     let limits: Vec<_> = row.limits.iter().map(|limit| shown_apart(&row.found, limit).1).collect();
-    let noun = if limits.len() == 1 { "limit" } else { "limits" };
-    page.text(BODY, &format!("found {}; {noun} {}", found(row), limits.join(" and ")));
+    let limits = match limits.as_slice() {
+        [] => String::new(),
+        [limit] => format!("; limit {limit}"),
+        limits => format!("; limits {}", and_list(limits)),
+    };
+    page.text(BODY, &format!("found {}{limits}", found(row)));
     if let Some(because) = &row.because {
         page.text(BODY, &format!("required because: {because}"));
     }

@@ -9,6 +9,12 @@ use super::style::{Ink, Style};
 /// The column in which the text of a numbered line begins.
 pub(super) const BODY: usize = 6;
 
+/// The columns that a lead leaves to its text at the least.
+const ROOM: usize = 20;
+
+/// A blank at which no line ends.
+const BOUND: char = '\u{a0}';
+
 /// A page in the making.
 pub(super) struct Page {
     out: String,
@@ -110,13 +116,24 @@ impl Page {
         self.inked(0, Ink::Title, text);
     }
 
+    /// The lines of a text behind a lead. A lead that leaves no room for text stands on a line of its own.
     fn wrapped(&self, lead: &str, column: usize, text: &str) -> Vec<String> {
+        let (lead, text) = (clean(lead), bound(&clean(text)));
         let indent = " ".repeat(column);
+        if display_width(&lead) + ROOM > self.columns() {
+            let mut lines = self.filled("", &indent, lead.trim_end());
+            lines.extend(self.filled(&indent, &indent, &text));
+            return lines;
+        }
+        self.filled(&lead, &indent, &text)
+    }
+
+    fn filled(&self, first: &str, indent: &str, text: &str) -> Vec<String> {
         let options = Options::new(self.columns())
-            .initial_indent(lead)
-            .subsequent_indent(&indent)
+            .initial_indent(first)
+            .subsequent_indent(indent)
             .word_splitter(WordSplitter::NoHyphenation);
-        textwrap::wrap(&clean(text), options).into_iter().map(|line| line.into_owned()).collect()
+        textwrap::wrap(text, options).into_iter().map(|line| line.replace(BOUND, " ")).collect()
     }
 
     fn push(&mut self, line: &str) {
@@ -127,6 +144,16 @@ impl Page {
 
 fn lead(mark: &str) -> String {
     format!("{mark:<width$} ", width = BODY - 1)
+}
+
+/// The blanks between a number and its unit, bound so that no line ends there.
+fn bound(text: &str) -> String {
+    let chars: Vec<char> = text.chars().collect();
+    let joins = |at: usize| {
+        let before = at.checked_sub(1).and_then(|at| chars.get(at)).is_some_and(char::is_ascii_digit);
+        before && chars.get(at + 1).is_some_and(|c| c.is_alphabetic() || matches!(c, '%' | '°'))
+    };
+    chars.iter().enumerate().map(|(at, c)| if *c == ' ' && joins(at) { BOUND } else { *c }).collect()
 }
 
 /// A text without control characters and without marks that turn the direction of writing; a line end becomes a blank.
@@ -168,10 +195,19 @@ mod tests {
     }
 
     #[test]
-    fn a_number_with_an_exponent_is_not_broken() {
+    fn a_number_is_not_parted_from_its_unit() {
         let mut page = page();
-        page.text(70, "10.05e-3 J/(mol K)");
-        assert!(page.finish().lines().any(|line| line.trim() == "10.05e-3"));
+        page.text(64, "about 10.05e-3 J/(mol K)");
+        assert!(page.finish().lines().any(|line| line.trim().starts_with("10.05e-3 J")));
+    }
+
+    #[test]
+    fn a_name_wider_than_the_page_is_broken() {
+        let mut page = page();
+        page.equation("[1]", &"n".repeat(200), &["1 kg", "2 kg"]);
+        let text = page.finish();
+        assert!(text.lines().all(|line| line.chars().count() <= 80), "{text}");
+        assert_eq!(text.matches('n').count(), 200);
     }
 
     #[test]
