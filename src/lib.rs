@@ -1,8 +1,10 @@
 //! heatpath: a language and interpreter for thermal process sheets.
 
+pub mod cli;
 pub mod diagnostic;
 pub mod library;
 pub mod report;
+pub mod session;
 pub mod source;
 pub mod span;
 pub mod syntax;
