@@ -4,9 +4,17 @@
 //! they are to be shown; out come text and JSON. A renderer reads the model and nothing else. `number.rs` is the only
 //! place that formats numbers.
 
+mod diagnostics_json;
+mod json;
 mod model;
+pub mod number;
+#[cfg(test)]
+mod sample;
 
+pub use diagnostics_json::render_diagnostics_json;
+pub use json::render_json;
 pub use model::{
-    Caution, DataRow, DutyRow, Finding, InputRow, Item, LegKind, LegRow, MixtureRow, Path, PressureBasis, Quantity,
-    Report, RequirementRow, ResultRow, Side, SiteRow, SpeciesRow, StateRow, StepRow, TableColumn, TableRow, TableRows,
+    Caution, DataRow, DutyRow, Finding, InputRow, Item, LegKind, LegRow, MixtureRow, Path, PressureBasis,
+    Quantity, Report, RequirementRow, ResultRow, Side, SiteRow, SpeciesRow, StateRow, StepRow, TableColumn,
+    TableRow, TableRows,
 };
