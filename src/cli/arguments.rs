@@ -6,13 +6,19 @@ use clap::{ColorChoice, Parser, Subcommand, ValueEnum};
 const STATUS: &str = "\
 Exit status: 0 all well; 1 a requirement is not met; 2 the sheet or the call is wrong.";
 
-/// Works thermal process sheets: unit-checked heat, work and duties, reviewable line by line.
+/// Works thermal process sheets: unit-checked heat, work and duties, reviewable line by line
 #[derive(Debug, Parser)]
-#[command(name = "heatpath", version, about, after_help = STATUS, color = ColorChoice::Never)]
-#[command(arg_required_else_help = true, max_term_width = 100)]
+#[command(name = "heatpath", version, after_help = STATUS, color = ColorChoice::Never)]
+#[command(arg_required_else_help = true)]
 pub(super) struct Arguments {
     /// Whether to colour what is printed; `auto` colours on a terminal unless NO_COLOR is set
-    #[arg(long, global = true, value_name = "WHEN", default_value = "auto")]
+    #[arg(
+        long,
+        global = true,
+        value_name = "auto|always|never",
+        default_value = "auto",
+        hide_possible_values = true
+    )]
     pub(super) color: When,
     /// What to do
     #[command(subcommand)]
@@ -38,10 +44,10 @@ pub(super) struct RunArguments {
     /// The sheet; `-` reads standard input
     pub(super) sheet: std::path::PathBuf,
     /// How to print the report
-    #[arg(long, value_name = "FORMAT", default_value = "text")]
+    #[arg(long, value_name = "text|json", default_value = "text", hide_possible_values = true)]
     pub(super) format: Format,
     /// How to print diagnostics on standard error; `json` prints all of them, warnings and cautions included
-    #[arg(long, value_name = "FORMAT", default_value = "text")]
+    #[arg(long, value_name = "text|json", default_value = "text", hide_possible_values = true)]
     pub(super) diagnostics: Format,
 }
 
@@ -51,7 +57,7 @@ pub(super) struct CheckArguments {
     /// The sheet; `-` reads standard input
     pub(super) sheet: std::path::PathBuf,
     /// How to print what is found: drawn on standard error, or as JSON on standard output
-    #[arg(long, value_name = "FORMAT", default_value = "text")]
+    #[arg(long, value_name = "text|json", default_value = "text", hide_possible_values = true)]
     pub(super) format: Format,
 }
 
@@ -61,7 +67,7 @@ pub(super) struct UnitsArguments {
     /// A symbol, a part of a name or a dimension; without it all units are listed
     pub(super) word: Option<String>,
     /// How to print the list
-    #[arg(long, value_name = "FORMAT", default_value = "text")]
+    #[arg(long, value_name = "text|json", default_value = "text", hide_possible_values = true)]
     pub(super) format: Format,
 }
 

@@ -3,7 +3,7 @@
 use super::arguments::{CheckArguments, Format, When};
 use super::colour::look;
 use super::draw::draw;
-use super::sheet::worked;
+use super::sheet::{name_of, worked};
 use super::status::Status;
 use super::streams::{print, print_error};
 use crate::diagnostic::Diagnostic;
@@ -23,5 +23,5 @@ pub(super) fn check(arguments: &CheckArguments, when: When) -> Status {
     if wrong {
         return status;
     }
-    print(&format!("{}: no errors\n", arguments.sheet.display()), status)
+    print(&format!("{}: no errors\n", name_of(&arguments.sheet)), status)
 }

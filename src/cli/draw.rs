@@ -26,7 +26,10 @@ pub(super) fn draw(diagnostics: &[Diagnostic], sources: &Sources, look: Look) ->
 
 fn handler(look: Look) -> GraphicalReportHandler {
     let theme = if look.colour { GraphicalTheme::unicode() } else { GraphicalTheme::unicode_nocolor() };
-    GraphicalReportHandler::new_themed(theme).with_width(look.width).with_links(false).without_primary_span_start()
+    GraphicalReportHandler::new_themed(theme)
+        .with_width(look.width)
+        .with_links(false)
+        .without_primary_span_start()
 }
 
 fn draw_one(diagnostic: &Diagnostic, sources: &Sources, handler: &GraphicalReportHandler) -> String {
@@ -38,7 +41,11 @@ fn draw_one(diagnostic: &Diagnostic, sources: &Sources, handler: &GraphicalRepor
     if handler.render_report(&mut text, &drawing).is_err() {
         text = format!("{}\n\n  {}\n", heading(diagnostic), plain(&diagnostic.message));
     }
-    text.extend(elsewhere.iter().map(|label| format!("  also: {}: {}\n", place(label.span, sources), plain(&label.text))));
+    text.extend(
+        elsewhere
+            .iter()
+            .map(|label| format!("  also: {}: {}\n", place(label.span, sources), plain(&label.text))),
+    );
     text + "\n"
 }
 
@@ -148,7 +155,10 @@ mod tests {
             .help("leave it out");
         let text = draw(&[diagnostic], &sources, LOOK);
         assert!(text.starts_with("error K301\n\n  × `ΔT` is a temperature\n"), "{text}");
-        assert!(text.contains("─[pot.heat:2:16]\n 1 │ basis ΔT = 3 K\n 2 │ let spare = ΔT + 4 kg\n"), "{text}");
+        assert!(
+            text.contains("─[pot.heat:2:16]\n 1 │ basis ΔT = 3 K\n 2 │ let spare = ΔT + 4 kg\n"),
+            "{text}"
+        );
         assert!(text.contains("added here") && text.contains("  help: leave it out\n"), "{text}");
         assert!(text.ends_with("1 error; `heatpath explain CODE` says more\n"), "{text}");
     }
@@ -167,13 +177,18 @@ mod tests {
     #[test]
     fn errors_come_first_and_the_rest_is_counted() {
         let (sources, file) = sheet();
-        let warning = Diagnostic::new(Code::FractionOfUnit, "read as a fraction").label(Span::new(file, 0, 1), "");
+        let warning =
+            Diagnostic::new(Code::FractionOfUnit, "read as a fraction").label(Span::new(file, 0, 1), "");
         let error = Diagnostic::new(Code::Unreadable, "cannot be read").label(Span::new(file, 0, 1), "");
         let all: Vec<_> = std::iter::once(warning).chain(std::iter::repeat_n(error, 60)).collect();
         let text = draw(&all, &sources, LOOK);
         assert_eq!(text.matches("error S101").count(), 50);
         assert!(!text.contains("read as a fraction"));
-        assert!(text.ends_with("60 errors and 1 warning, the first 50 shown; `heatpath explain CODE` says more\n"));
+        assert!(
+            text.ends_with(
+                "60 errors and 1 warning, the first 50 shown; `heatpath explain CODE` says more\n"
+            )
+        );
     }
 
     #[test]

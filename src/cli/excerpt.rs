@@ -58,7 +58,8 @@ impl Excerpt {
         for range in &clamped {
             show_around(text, range, number(range), &mut shown);
         }
-        let mut excerpt = Excerpt { name: source.name.clone(), text: String::new(), lines: Vec::new(), places: vec![] };
+        let mut excerpt =
+            Excerpt { name: source.name.clone(), text: String::new(), lines: Vec::new(), places: vec![] };
         for (number, line) in shown {
             excerpt.push(text, number, &line, &clamped);
         }
@@ -96,7 +97,8 @@ impl Excerpt {
     fn position(&self, text: &str, at: usize) -> usize {
         let line = self.lines.iter().rev().find(|line| line.source.start <= at).or(self.lines.first());
         let Some(line) = line else { return 0 };
-        let before = text.get(line.source.start..at.clamp(line.source.start, line.source.end)).unwrap_or_default();
+        let before =
+            text.get(line.source.start..at.clamp(line.source.start, line.source.end)).unwrap_or_default();
         line.start + before.chars().map(|c| shown_char(c).len_utf8()).sum::<usize>()
     }
 

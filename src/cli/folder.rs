@@ -21,7 +21,8 @@ impl FolderLoader {
     pub(super) fn beside(path: &Path) -> (FolderLoader, String) {
         let shown = path.parent().unwrap_or(Path::new("")).to_path_buf();
         let canonical = path.canonicalize().unwrap_or_else(|_| path.to_path_buf());
-        let identity = canonical.file_name().map(|name| name.to_string_lossy().into_owned()).unwrap_or_default();
+        let identity =
+            canonical.file_name().map(|name| name.to_string_lossy().into_owned()).unwrap_or_default();
         let parent = canonical.parent().filter(|parent| !parent.as_os_str().is_empty());
         let project = canonical_folder(parent.unwrap_or(Path::new(".")));
         (FolderLoader { project, shown }, identity)
@@ -40,9 +41,15 @@ impl Loader for FolderLoader {
         let canonical = self.project.join(below).canonicalize();
         let canonical = canonical.map_err(|error| LoadError::Unreadable(reason(&error)))?;
         let inside = canonical.strip_prefix(&self.project).map_err(|_| LoadError::Outside)?;
-        let identity = inside.to_str().ok_or_else(|| LoadError::Unreadable("its name is not UTF-8".to_owned()))?;
-        let text = read_text(&canonical, Admitted::FilesOnly).map_err(|fault| LoadError::Unreadable(words(&fault)))?;
-        Ok(Loaded { name: self.shown.join(inside).to_string_lossy().into_owned(), identity: identity.to_owned(), text })
+        let identity =
+            inside.to_str().ok_or_else(|| LoadError::Unreadable("its name is not UTF-8".to_owned()))?;
+        let text = read_text(&canonical, Admitted::FilesOnly)
+            .map_err(|fault| LoadError::Unreadable(words(&fault)))?;
+        Ok(Loaded {
+            name: self.shown.join(inside).to_string_lossy().into_owned(),
+            identity: identity.to_owned(),
+            text,
+        })
     }
 }
 
@@ -54,7 +61,9 @@ fn below(folder: &Path, path: &Path) -> Result<PathBuf, LoadError> {
             Component::Normal(name) => below.push(name),
             Component::CurDir => {}
             Component::ParentDir if below.pop() => {}
-            Component::ParentDir | Component::RootDir | Component::Prefix(_) => return Err(LoadError::Outside),
+            Component::ParentDir | Component::RootDir | Component::Prefix(_) => {
+                return Err(LoadError::Outside);
+            }
         }
     }
     Ok(below)

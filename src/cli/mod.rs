@@ -19,6 +19,7 @@ mod folder;
 mod front;
 mod run;
 mod sheet;
+mod stand_in;
 mod status;
 mod streams;
 mod units;

@@ -12,21 +12,33 @@ use std::path::Path;
 /// How standard input is called in messages.
 const STANDARD_INPUT: &str = "standard input";
 
+/// The name of a sheet in messages.
+pub(super) fn name_of(path: &Path) -> String {
+    if path == Path::new("-") { STANDARD_INPUT.to_owned() } else { path.to_string_lossy().into_owned() }
+}
+
 /// A pass over a sheet: name, identity, text and loader in, what came of it out.
 type Pass = fn(&str, &str, &str, &dyn Loader) -> Worked;
 
 /// Reads the sheet at `path` (`-`: standard input) and hands it to `pass`. A sheet that cannot be read comes back
 /// with the reason as its one diagnostic.
 pub(super) fn worked(path: &Path, pass: Pass) -> Worked {
+    let name = name_of(path);
     if path == Path::new("-") {
         let (loader, identity) = FolderLoader::here();
-        return hand_on(STANDARD_INPUT, &identity, text_of(std::io::stdin().lock()), &loader, pass);
+        return hand_on(&name, &identity, text_of(std::io::stdin().lock()), &loader, pass);
     }
     let (loader, identity) = FolderLoader::beside(path);
-    hand_on(&path.to_string_lossy(), &identity, read_text(path, Admitted::Any), &loader, pass)
+    hand_on(&name, &identity, read_text(path, Admitted::Any), &loader, pass)
 }
 
-fn hand_on(name: &str, identity: &str, text: Result<String, Fault>, loader: &dyn Loader, pass: Pass) -> Worked {
+fn hand_on(
+    name: &str,
+    identity: &str,
+    text: Result<String, Fault>,
+    loader: &dyn Loader,
+    pass: Pass,
+) -> Worked {
     match text {
         Ok(text) => pass(name, identity, &text, loader),
         Err(fault) => refused(name, fault),
