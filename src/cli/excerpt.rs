@@ -168,12 +168,22 @@ fn shown_char(c: char) -> char {
 /// the first one. `None` for an empty text.
 fn clamp(text: &str, range: Range<usize>) -> Option<Range<usize>> {
     let (last, last_char) = text.trim_end_matches(['\n', '\r']).char_indices().next_back()?;
-    let start = text.floor_char_boundary(range.start.min(last));
+    let start = floor(text, range.start.min(last));
     let most = last + last_char.len_utf8();
-    let end = text.ceil_char_boundary(range.end.clamp(start + 1, most.max(start + 1)));
+    let end = ceil(text, range.end.clamp(start + 1, most.max(start + 1)));
     let many = text.get(start..end).is_some_and(|covered| covered.matches('\n').nth(LINES - 1).is_some());
     let end = if many { line_of(text, start).end.max(start + 1) } else { end };
-    Some(start..text.ceil_char_boundary(end))
+    Some(start..ceil(text, end))
+}
+
+/// The character border at or before an offset.
+fn floor(text: &str, at: usize) -> usize {
+    (0..=at.min(text.len())).rev().find(|at| text.is_char_boundary(*at)).unwrap_or(0)
+}
+
+/// The character border at or after an offset.
+fn ceil(text: &str, at: usize) -> usize {
+    (at..text.len()).find(|at| text.is_char_boundary(*at)).unwrap_or(text.len())
 }
 
 /// The line around an offset, without its line end.
@@ -212,8 +222,8 @@ fn shown_part(text: &str, line: &Range<usize>, labels: &[Range<usize>]) -> Range
     }
     let focus = labels.iter().map(|label| label.start).filter(|start| line.contains(start)).min();
     let from = focus.map_or(line.start, |focus| focus.saturating_sub(LEAD).max(line.start));
-    let from = if from - line.start < '…'.len_utf8() { line.start } else { text.floor_char_boundary(from) };
-    let to = text.floor_char_boundary((from + LONG).min(line.end));
+    let from = if from - line.start < '…'.len_utf8() { line.start } else { floor(text, from) };
+    let to = floor(text, (from + LONG).min(line.end));
     from..to
 }
 
