@@ -4,13 +4,16 @@
 //! they are to be shown; out come text and JSON. A renderer reads the model and nothing else. `number.rs` is the only
 //! place that formats numbers.
 
+mod conventions;
 mod diagnostics_json;
 mod json;
 mod model;
 pub mod number;
 #[cfg(test)]
 mod sample;
+mod text;
 
+pub use conventions::standing_conventions;
 pub use diagnostics_json::render_diagnostics_json;
 pub use json::render_json;
 pub use model::{
@@ -18,3 +21,4 @@ pub use model::{
     Quantity, Report, RequirementRow, ResultRow, Side, SiteRow, SpeciesRow, StateRow, StepRow, TableColumn,
     TableRow, TableRows,
 };
+pub use text::{Style, render_text};

@@ -5,7 +5,7 @@
 //! Zeros at the end of a fraction are dropped, a negative zero is `0`.
 
 use super::model::{PressureBasis, Quantity};
-use crate::units::{Dimension, Unit};
+use crate::units::{Dimension, Kind, Unit};
 
 /// The significant digits of a number for which nothing else is said.
 pub const DIGITS: usize = 5;
@@ -75,6 +75,11 @@ pub fn shown_apart(first: &Quantity, second: &Quantity) -> (String, String) {
     (DIGITS..MOST_DIGITS).map(pair).find(|(a, b)| a != b).unwrap_or_else(|| pair(MOST_DIGITS))
 }
 
+/// A share of 0 to 1 in per cent: `95.5 %`.
+pub fn shown_share(share: f64) -> String {
+    format!("{} %", to_hundredths(share * 100.0, DIGITS, false))
+}
+
 /// A unit as it stands beside a number: its symbol and, of a pressure, `abs` or `gauge`; empty for a pure number.
 /// Where the symbol says so itself the word stands in parentheses: `barg (gauge)`.
 pub fn shown_unit(unit: &Unit, pressure: Option<PressureBasis>) -> String {
@@ -123,17 +128,24 @@ fn shown_to(quantity: &Quantity, digits: usize) -> String {
     }
 }
 
-/// Digits beyond the usual ones are added to the hundredths as well.
 fn with_digits(value: f64, unit: &Unit, digits: usize) -> String {
-    let reading = unit.dimension == Dimension::TEMPERATURE && unit.kind() == crate::units::Kind::Point;
-    let hundredths = unit.dimension == Dimension::TEMPERATURE || unit.is_percent();
-    let small = value != 0.0 && value.abs() < 0.1 && !reading;
-    if hundredths && !small && value.abs() < 1e6 {
-        let decimals = HUNDREDTHS + digits.saturating_sub(DIGITS);
-        let whole = fixed(value.abs().trunc(), 0).len();
-        return trimmed(&fixed(value, decimals.min(MOST_DIGITS.saturating_sub(whole))));
+    let temperature = unit.dimension == Dimension::TEMPERATURE;
+    if temperature || unit.is_percent() {
+        return to_hundredths(value, digits, temperature && unit.kind() == Kind::Point);
     }
     significant(value, digits)
+}
+
+/// A value to 0.01, and so much finer as the digits exceed the usual ones. Below 0.1 a value keeps its significant
+/// digits, unless it is a reading on a scale, whose zero is a mark like any other.
+fn to_hundredths(value: f64, digits: usize, reading: bool) -> String {
+    let small = value.abs() < 0.1 && !reading;
+    if small || value.abs() >= 1e6 {
+        return significant(value, digits);
+    }
+    let decimals = HUNDREDTHS + digits.saturating_sub(DIGITS);
+    let whole = fixed(value.abs().trunc(), 0).len();
+    trimmed(&fixed(value, decimals.min(MOST_DIGITS.saturating_sub(whole))))
 }
 
 fn plain(value: f64, digits: usize, exponent: i32) -> String {
@@ -244,6 +256,9 @@ mod tests {
         assert_eq!(plain_shown(99.999, "%"), "100 %");
         assert_eq!(plain_shown(0.004_21, "%"), "0.00421 %");
         assert_eq!(plain_shown(0.004_21, "K"), "0.00421 K");
+        assert_eq!(shown_share(1.0), "100 %");
+        assert_eq!(shown_share(2.0 / 3.0), "66.67 %");
+        assert_eq!(shown_share(4.21e-5), "0.00421 %");
     }
 
     #[test]

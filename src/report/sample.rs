@@ -258,6 +258,6 @@ pub(super) fn report() -> Report {
             finding: "water stands beside metal at 460 degC".into(),
             advice: "Keep the charge dry.".into(),
         }],
-        conventions: vec!["Gases are ideal.".into()],
+        conventions: crate::report::standing_conventions(),
     }
 }
