@@ -19,7 +19,6 @@ mod folder;
 mod front;
 mod run;
 mod sheet;
-mod stand_in;
 mod status;
 mod streams;
 mod units;

@@ -4,10 +4,9 @@ use super::arguments::{Format, RunArguments, When};
 use super::colour::look;
 use super::draw::draw;
 use super::sheet::worked;
-use super::stand_in::{Style, render_text};
 use super::status::Status;
 use super::streams::{print, print_error};
-use crate::report::{Report, render_diagnostics_json, render_json};
+use crate::report::{Report, Style, render_diagnostics_json, render_json, render_text};
 use crate::session::{self, Worked};
 use std::io;
 
