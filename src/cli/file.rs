@@ -42,9 +42,13 @@ pub(super) fn read_text(path: &Path, admitted: Admitted) -> Result<String, Fault
 
 /// The text that a stream brings.
 pub(super) fn text_of(stream: impl Read) -> Result<String, Fault> {
+    text_up_to(stream, LIMIT)
+}
+
+fn text_up_to(stream: impl Read, limit: u64) -> Result<String, Fault> {
     let mut bytes = Vec::new();
-    stream.take(LIMIT + 1).read_to_end(&mut bytes).map_err(|error| unreadable(&error))?;
-    if u64::try_from(bytes.len()).is_ok_and(|length| length > LIMIT) {
+    stream.take(limit + 1).read_to_end(&mut bytes).map_err(|error| unreadable(&error))?;
+    if u64::try_from(bytes.len()).is_ok_and(|length| length > limit) {
         return Err(Fault::TooLarge);
     }
     match String::from_utf8(bytes) {
@@ -97,7 +101,8 @@ mod tests {
 
     #[test]
     fn a_stream_without_end_is_refused_by_its_size() {
-        assert!(matches!(text_of(io::repeat(b'#')), Err(Fault::TooLarge)));
+        assert!(matches!(text_up_to(io::repeat(b'#'), 5000), Err(Fault::TooLarge)));
+        assert_eq!(text_up_to(&b"#####"[..], 5).expect("a text"), "#####");
     }
 
     #[test]
