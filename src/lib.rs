@@ -1,6 +1,7 @@
 //! heatpath: a language and interpreter for thermal process sheets.
 
 pub mod check;
+pub mod cli;
 pub mod diagnostic;
 pub mod eval;
 pub mod library;
@@ -8,6 +9,7 @@ pub mod numeric;
 pub mod plan;
 pub mod program;
 pub mod report;
+pub mod session;
 pub mod source;
 pub mod span;
 pub mod syntax;

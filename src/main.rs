@@ -1,3 +1,7 @@
 //! The `heatpath` program: hands its arguments on.
 
-fn main() {}
+use std::process::ExitCode;
+
+fn main() -> ExitCode {
+    heatpath::cli::main(std::env::args_os())
+}

@@ -1,0 +1,239 @@
+//! The command line: what it prints where, and its exit status.
+
+use crate::program::{Ran, command, heatpath, heatpath_reading, scratch};
+use serde_json::Value;
+
+const GOOD: &str = "basis charge = 450 kg\n";
+const BAD: &str = "basis charge = 0,5 t\n";
+
+fn called(ran: &Ran) -> (Option<i32>, &str, &str) {
+    (ran.status, &ran.stdout, &ran.stderr)
+}
+
+#[test]
+fn help_names_the_commands_and_the_exit_status() {
+    let ran = heatpath(&["--help"]);
+    assert_eq!((ran.status, ran.stderr.as_str()), (Some(0), ""));
+    for word in ["run ", "check ", "units ", "explain ", "--color", "Exit status: 0"] {
+        assert!(ran.stdout.contains(word), "{word}");
+    }
+    for later in ["species", "why", "tidy", "record", "audit", "compare"] {
+        assert!(!ran.stdout.contains(&format!("  {later} ")), "{later}");
+        assert_eq!(heatpath(&[later, "sheet.heat"]).status, Some(2), "{later}");
+    }
+}
+
+#[test]
+fn a_call_without_a_command_shows_the_help() {
+    let ran = heatpath::<&str>(&[]);
+    assert_eq!((ran.status, ran.stdout.as_str()), (Some(2), ""));
+    assert!(ran.stderr.contains("Usage: heatpath"), "{}", ran.stderr);
+}
+
+#[test]
+fn the_version_is_that_of_the_package() {
+    let ran = heatpath(&["--version"]);
+    assert_eq!(called(&ran), (Some(0), concat!("heatpath ", env!("CARGO_PKG_VERSION"), "\n"), ""));
+}
+
+#[test]
+fn a_wrong_call_is_told_on_standard_error() {
+    for call in [&["run"][..], &["run", "a", "b"], &["check", "a", "--format", "xml"], &["units", "--colour"]]
+    {
+        let ran = heatpath(call);
+        assert_eq!((ran.status, ran.stdout.as_str()), (Some(2), ""), "{call:?}");
+        assert!(ran.stderr.starts_with("error: "), "{call:?}: {}", ran.stderr);
+    }
+}
+
+#[test]
+fn units_are_listed_one_a_line() {
+    let ran = heatpath(&["units"]);
+    assert_eq!((ran.status, ran.stderr.as_str()), (Some(0), ""));
+    let heading: Vec<_> = ran.stdout.lines().next().unwrap_or_default().split_whitespace().collect();
+    assert_eq!(heading, ["unit", "name", "dimension", "factor", "standard"]);
+    assert_eq!(ran.stdout.lines().count(), heatpath::units::listing().len() + 1);
+    let pound = ran.stdout.lines().find(|line| line.starts_with("lb ")).unwrap_or_default();
+    assert!(pound.contains("0.45359237 kg"), "{pound}");
+}
+
+#[test]
+fn a_word_picks_units() {
+    let ran = heatpath(&["units", "kW", "--format", "json"]);
+    let listed: Value = serde_json::from_str(&ran.stdout).expect("JSON");
+    assert_eq!(listed.pointer("/units/0/unit").and_then(Value::as_str), Some("W"));
+    assert_eq!(listed.get("units").and_then(Value::as_array).map(Vec::len), Some(1));
+}
+
+#[test]
+fn a_word_that_finds_no_unit_gets_the_nearest() {
+    let ran = heatpath(&["units", "kelvim"]);
+    assert_eq!((ran.status, ran.stdout.as_str()), (Some(2), ""));
+    assert!(
+        ran.stderr.contains("`kelvim`") && ran.stderr.contains("`kelvin` is the nearest"),
+        "{}",
+        ran.stderr
+    );
+}
+
+#[test]
+fn a_code_is_explained_whatever_the_case_of_its_letter() {
+    let ran = heatpath(&["explain", "k301"]);
+    assert_eq!(called(&ran), (Some(0), heatpath::diagnostic::Code::UnlikeSum.explanation(), ""));
+}
+
+#[test]
+fn an_unknown_code_gets_the_nearest() {
+    let ran = heatpath(&["explain", "K3001"]);
+    assert_eq!((ran.status, ran.stdout.as_str()), (Some(2), ""));
+    assert!(ran.stderr.contains("`K3001`") && ran.stderr.contains("`K301` is the nearest"), "{}", ran.stderr);
+}
+
+#[test]
+fn codes_are_listed_by_area() {
+    let ran = heatpath(&["explain"]);
+    let heads: Vec<_> =
+        ran.stdout.lines().filter(|line| !line.is_empty() && !line.starts_with(' ')).collect();
+    assert_eq!((ran.status, heads.len(), heads.first().copied()), (Some(0), 10, Some("Syntax")));
+}
+
+#[test]
+fn a_sheet_comes_from_standard_input() {
+    let ran = heatpath_reading(&["check", "-"], GOOD.as_bytes());
+    assert_eq!(called(&ran), (Some(0), "standard input: no errors\n", ""));
+    let ran = heatpath_reading(&["check", "-"], BAD.as_bytes());
+    assert_eq!((ran.status, ran.stdout.as_str()), (Some(2), ""));
+    assert!(
+        ran.stderr.starts_with("error S103\n") && ran.stderr.contains("standard input:1:"),
+        "{}",
+        ran.stderr
+    );
+}
+
+#[test]
+fn a_file_with_a_byte_order_mark_is_a_sheet() {
+    let ran = heatpath_reading(&["check", "-"], format!("\u{feff}{GOOD}").as_bytes());
+    assert_eq!(ran.status, Some(0), "{}", ran.stderr);
+}
+
+#[test]
+fn check_prints_json_on_standard_output() {
+    let ran = heatpath_reading(&["check", "--format", "json", "-"], BAD.as_bytes());
+    assert_eq!((ran.status, ran.stderr.as_str()), (Some(2), ""));
+    let printed: Value = serde_json::from_str(&ran.stdout).expect("JSON");
+    assert_eq!(printed.pointer("/diagnostics/0/code").and_then(Value::as_str), Some("S103"));
+    let ran = heatpath_reading(&["check", "--format", "json", "-"], GOOD.as_bytes());
+    assert_eq!(
+        serde_json::from_str::<Value>(&ran.stdout).expect("JSON"),
+        serde_json::json!({ "diagnostics": [] })
+    );
+}
+
+#[test]
+fn a_sheet_with_errors_prints_no_report() {
+    for format in ["text", "json"] {
+        let ran = heatpath_reading(&["run", "--format", format, "-"], BAD.as_bytes());
+        assert_eq!((ran.status, ran.stdout.as_str()), (Some(2), ""), "{format}");
+        assert!(ran.stderr.starts_with("error S103\n"), "{format}: {}", ran.stderr);
+    }
+}
+
+#[test]
+fn a_requirement_decides_the_exit_status() {
+    for (limit, status) in [("400", 1), ("500", 0)] {
+        let sheet = format!("basis charge = 450 kg\nresult mass = charge\nrequire mass <= {limit} kg\n");
+        for format in ["text", "json"] {
+            let ran = heatpath_reading(&["run", "--format", format, "-"], sheet.as_bytes());
+            assert_eq!((ran.status, ran.stderr.as_str()), (Some(status), ""), "{limit} {format}");
+            assert!(ran.stdout.contains("mass"), "{}", ran.stdout);
+        }
+    }
+}
+
+#[test]
+fn warnings_stand_in_the_report_and_not_beside_it() {
+    let sheet = "let half = 1/2 kg\nresult x = half * 3 kg\n";
+    let ran = heatpath_reading(&["run", "-"], sheet.as_bytes());
+    assert_eq!((ran.status, ran.stderr.as_str()), (Some(0), ""));
+    assert!(ran.stdout.contains("W102"), "{}", ran.stdout);
+    let ran = heatpath_reading(&["run", "--diagnostics", "json", "-"], sheet.as_bytes());
+    let printed: Value = serde_json::from_str(&ran.stderr).expect("JSON");
+    assert_eq!(printed.pointer("/diagnostics/0/code").and_then(Value::as_str), Some("W102"));
+}
+
+#[test]
+fn what_is_piped_is_plain_unless_colour_is_asked_for() {
+    let escape = '\u{1b}';
+    for call in [&["check", "-"][..], &["check", "-", "--color", "never"], &["--color", "auto", "check", "-"]]
+    {
+        assert!(!heatpath_reading(call, BAD.as_bytes()).stderr.contains(escape), "{call:?}");
+    }
+    let ran = heatpath_reading(&["check", "-", "--color", "always"], BAD.as_bytes());
+    assert!(ran.stderr.contains(escape));
+    assert!(!ran.stderr.contains("\u{1b}]8;"), "no links");
+}
+
+#[test]
+fn the_environment_does_not_colour_what_is_piped() {
+    let folder = scratch("environment");
+    std::fs::write(folder.join("sheet.heat"), BAD).expect("the folder is ours");
+    let mut call = command(&["check", "sheet.heat"]);
+    call.current_dir(&folder).env("FORCE_COLOR", "1").env("CLICOLOR_FORCE", "1").env("COLUMNS", "20");
+    let stderr = call.output().expect("the program starts").stderr;
+    assert_eq!(String::from_utf8_lossy(&stderr), {
+        let mut plain = command(&["check", "sheet.heat"]);
+        String::from_utf8_lossy(&plain.current_dir(&folder).output().expect("the program starts").stderr)
+            .into_owned()
+    });
+    assert!(!stderr.contains(&0x1b));
+}
+
+/// A pipe whose reader is gone, as behind `| head -1`.
+fn closed_pipe() -> std::io::PipeWriter {
+    let (reader, writer) = std::io::pipe().expect("a pipe");
+    drop(reader);
+    writer
+}
+
+#[test]
+fn a_reader_that_has_read_enough_is_no_fault() {
+    for call in
+        [&["units"][..], &["explain"], &["--help"], &["check", "tests/corpus/kinds/points_added.heat"]]
+    {
+        let status = heatpath(call).status;
+        let output = command(call).stdout(closed_pipe()).output().expect("it starts");
+        assert_eq!(output.status.code(), status, "{call:?}");
+        assert!(!String::from_utf8_lossy(&output.stderr).contains("standard output"), "{call:?}");
+    }
+}
+
+#[test]
+fn a_closed_pipe_keeps_the_status_that_the_sheet_earned() {
+    let call = ["check", "--format", "json", "tests/corpus/syntax/decimal_comma.heat"];
+    let output = command(&call).stdout(closed_pipe()).output().expect("it starts");
+    assert_eq!((output.status.code(), output.stderr.as_slice()), (Some(2), &b""[..]));
+    let output =
+        command(&call[..1]).arg("no-such-sheet.heat").stderr(closed_pipe()).output().expect("it starts");
+    assert_eq!((output.status.code(), output.stdout.as_slice()), (Some(2), &b""[..]));
+}
+
+#[cfg(target_os = "linux")]
+#[test]
+fn a_full_disk_is_told() {
+    let full = std::fs::OpenOptions::new().write(true).open("/dev/full").expect("the device is there");
+    let output = command(&["units"]).stdout(full).output().expect("it starts");
+    let stderr = String::from_utf8_lossy(&output.stderr);
+    assert_eq!(output.status.code(), Some(2));
+    assert!(stderr.contains("standard output cannot be written"), "{stderr}");
+}
+
+#[test]
+fn a_file_beyond_the_limit_is_refused_by_its_size() {
+    let path = scratch("too_large").join("sheet.heat");
+    let file = std::fs::File::create(&path).expect("the folder is ours");
+    // No byte is written: the file is one hole.
+    file.set_len(256_000_001).expect("the file is ours");
+    let ran = heatpath(&["check".as_ref(), path.as_os_str()]);
+    assert_eq!(ran.status, Some(2));
+    assert!(ran.stderr.starts_with("error S110\n"), "{}", ran.stderr);
+}
