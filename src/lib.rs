@@ -12,6 +12,7 @@ pub mod report;
 pub mod session;
 pub mod source;
 pub mod span;
+pub mod study;
 pub mod syntax;
 pub mod thermo;
 pub mod units;

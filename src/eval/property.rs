@@ -2,7 +2,7 @@
 
 use super::frame::{Fault, Frame};
 use crate::plan::{Material, PhaseSet, PlaceSlot, Plan, Slot};
-use crate::thermo::{Place, Side};
+use crate::thermo::{PhaseClass, Place, Side};
 use crate::units::quantity;
 
 /// The material of an operation; a Plan names only materials it holds.
@@ -161,10 +161,17 @@ pub(super) fn volume<const N: usize>(
 ) {
     let curve = &material(plan, which).curve;
     let p = frame.slots[p.0 as usize];
-    let fault = (!neglect).then_some((at, Fault::NoVolume));
-    each(frame, place, to, fault, |place, lane| match curve.specific_volume(place, quantity(p[lane])) {
-        Some(volume) => Some(volume.value),
-        None => neglect.then_some(0.0),
+    let has_gas = |place: Place| {
+        let present = curve.phases_at(place);
+        std::iter::once(present.lower).chain(present.upper).any(|(phase, share)| {
+            share > 0.0 && curve.phase_class(phase) == Some(PhaseClass::Gas)
+        })
+    };
+    each(frame, place, to, Some((at, Fault::NoVolume)), |place, lane| {
+        match curve.specific_volume(place, quantity(p[lane])) {
+            Some(volume) => Some(volume.value),
+            None => (neglect && !has_gas(place)).then_some(0.0),
+        }
     });
 }
 
@@ -200,7 +207,7 @@ pub(super) fn gas_only<const N: usize>(
     let value = frame.slots[value.0 as usize];
     each(frame, place, to, Some((at, Fault::NoGas)), |place, lane| {
         let present = curve.phases_at(place);
-        let gas = |phase: usize| curve.phase_class(phase) == Some(crate::thermo::PhaseClass::Gas);
+        let gas = |phase: usize| curve.phase_class(phase) == Some(PhaseClass::Gas);
         let all = gas(present.lower.0) && present.upper.is_none_or(|(phase, _)| gas(phase));
         all.then_some(value[lane])
     });

@@ -98,6 +98,17 @@ impl Plan {
     /// The operations that these outputs need, in order, as a Plan with the same slots.
     #[must_use]
     pub fn pruned(&self, outputs: &[Slot]) -> Plan {
+        let kept = self.needed(outputs);
+        let keep = |at: usize| kept[at];
+        Plan {
+            ops: (0..self.ops.len()).filter(|at| keep(*at)).map(|at| self.ops[at]).collect(),
+            origins: (0..self.ops.len()).filter(|at| keep(*at)).map(|at| self.origins[at]).collect(),
+            ..self.clone()
+        }
+    }
+
+    /// Which operations these outputs need.
+    pub fn needed(&self, outputs: &[Slot]) -> Vec<bool> {
         let mut slots = vec![false; self.slots as usize];
         let mut places = vec![false; self.places as usize];
         for output in outputs {
@@ -113,12 +124,20 @@ impl Plan {
                 reads(op, self, &mut |slot| slots[slot.0 as usize] = true, &mut |place| places[place as usize] = true);
             }
         }
-        let keep = |at: usize| kept[at];
-        Plan {
-            ops: (0..self.ops.len()).filter(|at| keep(*at)).map(|at| self.ops[at]).collect(),
-            origins: (0..self.ops.len()).filter(|at| keep(*at)).map(|at| self.origins[at]).collect(),
-            ..self.clone()
-        }
+        kept
+    }
+
+    /// The numbers that the operations of a part of this Plan have in it.
+    pub fn numbers_of(&self, part: &Plan) -> Vec<usize> {
+        let mut from = 0;
+        part.ops
+            .iter()
+            .filter_map(|op| {
+                let at = from + self.ops.get(from..)?.iter().position(|known| known == op)?;
+                from = at + 1;
+                Some(at)
+            })
+            .collect()
     }
 
     /// The operations on which these inputs have no bearing, evaluated beforehand, and the rest: what a sweep over the

@@ -6,6 +6,7 @@
 
 mod conventions;
 mod diagnostics_json;
+mod gather;
 mod json;
 mod model;
 pub mod number;
@@ -15,6 +16,7 @@ mod text;
 
 pub use conventions::standing_conventions;
 pub use diagnostics_json::render_diagnostics_json;
+pub use gather::{TableValues, WorkedSheet, find_cautions, gather};
 pub use json::render_json;
 pub use model::{
     Caution, DataRow, DutyRow, Finding, InputRow, Item, LegKind, LegRow, MixtureRow, Path, PressureBasis,

@@ -45,6 +45,13 @@ pub(super) fn unknown_entry(text: &str, word: &str, table: &[Opening], place: &s
     }
 }
 
+/// A statement whose parts do not make one.
+pub(super) fn not_understood(opening: &Opening, span: Span) -> Diagnostic {
+    Diagnostic::new(Code::Unreadable, format!("this `{}` line cannot be read", opening.word))
+        .label(span, "its parts do not make a statement")
+        .help(format!("the form is `{}`", opening.form))
+}
+
 /// A statement that wants a block and has none.
 pub(super) fn block_missing(opening: &Opening, span: Span) -> Diagnostic {
     Diagnostic::new(Code::Unreadable, format!("`{}` wants a block in braces", opening.word))

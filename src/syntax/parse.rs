@@ -57,6 +57,7 @@ impl<'a> Reader<'a> {
             self.give_up(piece);
             return None;
         };
+        let before = self.diagnostics.len();
         let statement = match (opening.rule, &piece.block) {
             (Rule::sheet_head, block) => self.head(piece, opening, block.as_deref()),
             (Rule::species_head, Some(block)) => self.species(piece, opening, block),
@@ -70,6 +71,10 @@ impl<'a> Reader<'a> {
                 self.builder(piece).statement(pair)
             }
         };
+        if statement.is_none() && self.diagnostics.len() == before {
+            // nothing is ever dropped in silence
+            self.diagnostics.push(complaint::not_understood(opening, span));
+        }
         if statement.is_none() {
             self.give_up(piece);
         }

@@ -14,9 +14,9 @@ pub(in crate::syntax) struct Builder<'a> {
     pub(in crate::syntax) diagnostics: &'a mut Vec<Diagnostic>,
 }
 
-/// The parts of a pair, keywords passed over.
+/// The parts of a pair, keywords and the end of the text passed over.
 pub(super) fn parts<'i>(pair: Pair<'i, Rule>) -> impl Iterator<Item = Pair<'i, Rule>> {
-    pair.into_inner().filter(|part| !is_keyword(part.as_rule()))
+    pair.into_inner().filter(|part| !is_keyword(part.as_rule()) && part.as_rule() != Rule::EOI)
 }
 
 impl Builder<'_> {

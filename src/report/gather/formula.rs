@@ -1,0 +1,127 @@
+//! Formulas with numbers put in.
+
+use super::display::is_difference;
+use super::worked::WorkedSheet;
+use crate::plan::Slot;
+use crate::program::{DutyMember, Expr, Node, StateMember, StepMember};
+use crate::report::number::{shown, significant};
+use crate::units::Unit;
+
+/// How tightly an expression binds, for the parentheses around it.
+#[derive(Clone, Copy, PartialEq, Eq, PartialOrd, Ord)]
+enum Tightness {
+    Sum,
+    Product,
+    Power,
+    Atom,
+}
+
+impl WorkedSheet<'_> {
+    /// The expression with every name replaced by its value.
+    pub(super) fn put_in(&self, expr: &Expr) -> String {
+        self.text(expr).0
+    }
+
+    fn inside(&self, expr: &Expr, around: Tightness) -> String {
+        let (text, tightness) = self.text(expr);
+        if tightness < around { format!("({text})") } else { text }
+    }
+
+    fn text(&self, expr: &Expr) -> (String, Tightness) {
+        match &expr.node {
+            Node::Constant(_) | Node::Gauge(_) => (self.literal(expr), Tightness::Atom),
+            Node::Variable => ("T".to_owned(), Tightness::Atom),
+            Node::Quantity(id) => {
+                let slot = self.map.quantities.get(id.0).copied();
+                (self.named(expr, slot, self.unit_of(*id).as_ref()), Tightness::Atom)
+            }
+            Node::State(id, member) => (self.state_member(expr, id.0, member), Tightness::Atom),
+            Node::Step(id, member) => (self.step_member(expr, id.0, *member), Tightness::Atom),
+            Node::Duty(id, member) => {
+                let slot = self.map.duties.get(id.0).map(|duty| match member {
+                    DutyMember::Useful => duty.useful,
+                    DutyMember::Supplied => duty.supplied,
+                });
+                (self.named(expr, slot, None), Tightness::Atom)
+            }
+            Node::Negative(inner) => (format!("-{}", self.inside(inner, Tightness::Power)), Tightness::Product),
+            Node::Sum(terms) => (self.chain(terms, [" + ", " - "], Tightness::Sum), Tightness::Sum),
+            Node::Product(factors) => (self.chain(factors, [" * ", " / "], Tightness::Product), Tightness::Product),
+            Node::PowerInteger(base, exponent) => {
+                (format!("{} ^ {exponent}", self.inside(base, Tightness::Atom)), Tightness::Power)
+            }
+            Node::Power(base, exponent) => {
+                let (base, exponent) = (self.inside(base, Tightness::Atom), self.inside(exponent, Tightness::Atom));
+                (format!("{base} ^ {exponent}"), Tightness::Power)
+            }
+            Node::Call(function, arguments) => {
+                let arguments: Vec<String> = arguments.iter().map(|argument| self.put_in(argument)).collect();
+                (format!("{}({})", function.name(), arguments.join(", ")), Tightness::Atom)
+            }
+        }
+    }
+
+    fn chain(&self, parts: &[(bool, Expr)], signs: [&str; 2], tightness: Tightness) -> String {
+        let mut text = String::new();
+        for (at, (reversed, part)) in parts.iter().enumerate() {
+            if at > 0 {
+                text.push_str(signs[usize::from(*reversed)]);
+            }
+            // behind a minus or a solidus an equal must stand in parentheses
+            let around = if *reversed { next_tighter(tightness) } else { tightness };
+            text.push_str(&self.inside(part, around));
+        }
+        text
+    }
+
+    /// A literal as its author wrote it; a constant with a name, or a molar mass, as its value.
+    fn literal(&self, expr: &Expr) -> String {
+        let written = self.sources.line_of(expr.span);
+        let digit = |c: char| c.is_ascii_digit() || c == '-' || c == '−';
+        if written.starts_with(digit) {
+            return written;
+        }
+        let Node::Constant(value) = expr.node else { return written };
+        let shown_value = self.shown(value, expr.dimension, None, false);
+        format!("{} {}", significant(shown_value.value, 9), shown_value.unit.text).trim_end_matches(" 1").to_owned()
+    }
+
+    fn named(&self, expr: &Expr, slot: Option<Slot>, unit: Option<&Unit>) -> String {
+        let Some(slot) = slot else { return self.sources.line_of(expr.span) };
+        shown(&self.shown(self.value(slot), expr.dimension, unit, is_difference(expr)))
+    }
+
+    fn state_member(&self, expr: &Expr, id: usize, member: &StateMember) -> String {
+        let Some(state) = self.map.states.get(id) else { return self.sources.line_of(expr.span) };
+        let slot = match member {
+            StateMember::Temperature => Some(state.temperature),
+            StateMember::Pressure => Some(state.pressure),
+            StateMember::Mass => Some(state.mass),
+            StateMember::Amount => state.amount,
+            StateMember::Enthalpy => Some(state.enthalpy),
+            _ => None,
+        };
+        self.named(expr, slot, None)
+    }
+
+    fn step_member(&self, expr: &Expr, id: usize, member: StepMember) -> String {
+        let Some(step) = self.map.steps.get(id) else { return self.sources.line_of(expr.span) };
+        let slot = match member {
+            StepMember::EnthalpyChange => Some(step.enthalpy_change),
+            StepMember::InternalEnergyChange => Some(step.internal_energy_change),
+            StepMember::Heat => step.heat,
+            StepMember::Work => step.work,
+            StepMember::Supply => step.supply,
+            StepMember::VolumeChange | StepMember::Sensible | StepMember::Latent | StepMember::Reaction => None,
+        };
+        self.named(expr, slot, None)
+    }
+}
+
+fn next_tighter(tightness: Tightness) -> Tightness {
+    match tightness {
+        Tightness::Sum => Tightness::Product,
+        Tightness::Product => Tightness::Power,
+        Tightness::Power | Tightness::Atom => Tightness::Atom,
+    }
+}
