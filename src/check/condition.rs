@@ -3,11 +3,12 @@
 use super::checker::Checker;
 use super::matter::Gathered;
 use crate::diagnostic::{Code, Diagnostic};
-use crate::program::{Condition, Expr, State, StateId};
+use crate::program::{Condition, Expr, Node, State, StateId};
 use crate::span::Span;
 use crate::syntax::tree::{self, ConditionKind, Expression, Word};
 use crate::thermo::{PhaseClass, Pin};
 use crate::units::Dimension;
+use crate::units::constants::STANDARD_ATMOSPHERE;
 
 /// The conditions of a state.
 pub(super) struct Conditions {
@@ -22,6 +23,7 @@ struct Read {
     temperature: Option<(Condition, Span)>,
     pressure: Option<(Condition, Span)>,
     share: Option<((usize, Expr), Span)>,
+    saturated: Option<Span>,
     failed: bool,
 }
 
@@ -41,6 +43,7 @@ impl Checker<'_> {
         for condition in conditions.iter().filter(|condition| condition.kind == ConditionKind::Unknown) {
             self.unknown_condition(condition.span, &mut read);
         }
+        self.refuse_other_saturation(&mut read);
         if read.failed {
             return None;
         }
@@ -126,8 +129,23 @@ impl Checker<'_> {
         read.share = Some(((at, value), span));
         if matches!(phase.text.as_str(), "vapour" | "vapor") && read.temperature.is_none() {
             read.temperature = Some((Condition::Boiling, span));
+            read.saturated = Some(span);
         }
         Some(())
+    }
+
+    /// Saturation is known at 101.325 kPa only: another pressure wants a vapour-pressure law.
+    fn refuse_other_saturation(&mut self, read: &mut Read) {
+        let (Some(span), Some((Condition::Value(pressure), _))) = (read.saturated, &read.pressure) else { return };
+        let absolute = match pressure.node {
+            Node::Constant(value) => value,
+            Node::Gauge(value) => value + self.program.site.atmosphere,
+            _ => return,
+        };
+        if (absolute / STANDARD_ATMOSPHERE - 1.0).abs() > 0.02 {
+            self.later_saturated(span);
+            read.failed = true;
+        }
     }
 
     /// The phase of the one species that a share is said of.
@@ -169,21 +187,16 @@ impl Checker<'_> {
             self.share_unplaced(span, "a saturated state of a species that does not boil", "add `boiling at ... takes ...` to its block");
             return None;
         }
-        if let Some((_, first)) = &read.temperature {
-            let first = *first;
-            self.report(
-                Diagnostic::new(Code::ConditionTwice, "a temperature for a saturated state")
-                    .label(span, "takes its temperature from the pressure")
-                    .label(first, "said here")
-                    .help("leave the temperature out, or say `100 % vapour` at the boiling point"),
-            );
+        read.saturated = Some(span);
+        if read.temperature.is_some() {
+            self.later_saturated(span);
             return None;
         }
         let one = Expr {
             span,
             dimension: Dimension::ONE,
             kind: crate::units::Kind::Plain,
-            node: crate::program::Node::Constant(1.0),
+            node: Node::Constant(1.0),
         };
         read.temperature = Some((Condition::Boiling, span));
         read.share = Some(((at, one), span));

@@ -12,6 +12,7 @@ pub(super) struct Places<'a> {
     pub(super) densities: &'a [Option<Span>],
     pub(super) names: &'a [String],
     pub(super) links: &'a [Span],
+    pub(super) formation: Option<Span>,
 }
 
 impl Places<'_> {
@@ -153,7 +154,7 @@ fn enthalpies(error: CurveError, at: &Places<'_>) -> Diagnostic {
         }
         CurveError::FormationUnplaced => {
             Diagnostic::new(Code::FormationWrong, "a formation enthalpy of which no phase takes hold")
-                .label(at.block, "no phase of this species has data at 298.15 K")
+                .label(at.formation.unwrap_or(at.block), "no phase of this species has data at 298.15 K")
                 .help("begin the phase that is stable at 298.15 K there (up to 300.15 K is admitted), or give a phase its own `formation`")
         }
         CurveError::FormationOutside { phase } => Diagnostic::new(

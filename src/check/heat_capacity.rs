@@ -15,7 +15,7 @@ const FORMS: &[(&str, &[&str], &[&str])] = &[
     ("nasa9", &["a1", "a2", "a3", "a4", "a5", "a6", "a7", "R"], &["b1", "b2"]),
     ("nasa7", &["a1", "a2", "a3", "a4", "a5", "R"], &["a6", "a7"]),
     ("shomate", &["A", "B", "C", "D", "E"], &["F", "G", "H"]),
-    ("maier_kelley", &["a"], &["b", "c", "d", "e"]),
+    ("maier_kelley", &["a", "b", "c"], &["d", "e"]),
 ];
 
 impl Checker<'_> {
@@ -193,7 +193,7 @@ impl Checker<'_> {
             let help = if missing.contains(&"R") {
                 "`R` is the gas constant that the publication used, such as `R = 8.314510`".to_owned()
             } else {
-                format!("add {}; a coefficient that is not used is 0", missing.join(", "))
+                format!("add {}, as 0 where the publication has none", missing.join(", "))
             };
             self.report(
                 Diagnostic::new(Code::Coefficients, format!("`{}` lacks {}", form.text, missing.join(", ")))

@@ -23,7 +23,7 @@ impl Checker<'_> {
         };
         match read_unit(&text.text) {
             Ok(unit) => {
-                self.warn_of_name(text);
+                self.warn_of_name(literal, text);
                 self.note_calorie(&unit, text.span);
                 let value = if negative { -literal.value } else { literal.value };
                 Some(constant(value, &unit, span))
@@ -99,13 +99,13 @@ impl Checker<'_> {
     }
 
     /// A word that is both is the unit, with a warning.
-    fn warn_of_name(&mut self, text: &UnitText) {
+    fn warn_of_name(&mut self, literal: &Literal, text: &UnitText) {
         let words = text.text.split(|c: char| !(c.is_alphanumeric() || c == '_')).filter(|word| !word.is_empty());
         let Some(word) = words.into_iter().find(|word| self.names.contains_key(*word)) else { return };
         self.report(
             Diagnostic::new(Code::UnitAndName, format!("`{word}` is a unit and a name of this sheet"))
                 .label(text.span, "read as the unit")
-                .help(format!("rename the value if it was meant: `... * {word}_1`")),
+                .help(format!("if the value was meant, write `{} * {word}`", literal.value)),
         );
     }
 

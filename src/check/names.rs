@@ -82,10 +82,10 @@ impl Checker<'_> {
     }
 
     fn unknown_name(&self, name: &str, span: Span) -> Diagnostic {
-        if let Some(place) = self.ahead.get(name).filter(|place| place.start > span.start && place.file == span.file) {
+        if let Some(place) = self.ahead.get(name).filter(|place| place.file == span.file) {
             return Diagnostic::new(Code::UsedBeforeDeclared, format!("`{name}` is used before it is declared"))
                 .label(span, "used here")
-                .label(*place, "declared only here")
+                .label(*place, if place.start < span.start { "its own declaration" } else { "declared only here" })
                 .help("a sheet is read from the top: move the declaration above this line");
         }
         if self.materials.contains_key(name) {

@@ -107,7 +107,13 @@ impl Checker<'_> {
                 Diagnostic::new(Code::UnlikeComparison, "a reading is compared with a difference")
                     .label(difference.span, "a difference here")
                     .label(reading.span, "a reading here")
-                    .help(format!("compare two readings, or two differences in {open}")),
+                    .help(if reading.is_literal() {
+                        let text = self.written(reading.span);
+                        let number = text.split_whitespace().next().unwrap_or_default();
+                        format!("for a difference write `{number} {open}`")
+                    } else {
+                        format!("compare two readings, or two differences in {open}")
+                    }),
             );
             return None;
         }

@@ -43,7 +43,7 @@ impl Checker<'_> {
 
     /// Puts a species into the materials, as broken where it could not be read.
     pub(super) fn enter_species(&mut self, name: &Word, species: Option<Species>) {
-        if let Some(other) = self.materials.get(&name.text) {
+        if let Some(other) = self.materials.get(&name.text).filter(|other| other.what != Material::Broken) {
             self.diagnostics.push(declared_twice(name, other.span));
             return;
         }
@@ -71,7 +71,9 @@ impl Checker<'_> {
         });
         let mut draft = Draft { block, source, molar_mass: None, data: Vec::new() };
         let given = self.given_molar_mass(&mut draft);
-        draft.molar_mass = given.or_else(|| formula.as_ref().map(|(_, composition)| composition.molar_mass().value));
+        let poison = self.error_count() > before; // a formula at fault is told once
+        let from_formula = formula.as_ref().map(|(_, composition)| composition.molar_mass().value);
+        draft.molar_mass = given.or(from_formula).or(poison.then_some(1.0));
         let formation = self.species_formation(&mut draft);
         let decomposes = self.decomposition(&mut draft);
         self.refuse_vapour_pressure(block);
@@ -255,7 +257,7 @@ impl Checker<'_> {
     fn phases(&mut self, draft: &mut Draft<'_>, formation: bool) -> Option<(Vec<Phase>, Vec<Link>, Vec<Span>)> {
         let block = draft.block;
         let name = block.name.text.clone();
-        let mut phases: Vec<(Phase, Neighbour)> = Vec::new();
+        let mut phases: Vec<(Option<Phase>, Neighbour)> = Vec::new();
         let (mut links, mut link_spans) = (Vec::new(), Vec::new());
         let mut pending: Option<&TransitionEntry> = None;
         let mut complete = true;
@@ -270,33 +272,29 @@ impl Checker<'_> {
                 }
                 SpeciesEntry::Phase(phase) => {
                     let index = phases.len();
-                    let Some(read) = self.phase(draft, phase, index) else {
-                        complete = false;
-                        pending = None;
-                        continue;
-                    };
-                    if phases.iter().any(|(known, _)| known.data.name == read.0.data.name) {
-                        let first = phases.iter().find(|(known, _)| known.data.name == read.0.data.name);
-                        let other = first.map_or(block.head, |(known, _)| known.head);
-                        self.diagnostics.push(given_twice(phase.head, other));
+                    let (read, neighbour) = self.phase(draft, phase, index);
+                    if let Some((_, first)) = phases.iter().find(|(_, known)| known.name == phase.name.text) {
+                        let first = first.head;
+                        self.diagnostics.push(given_twice(phase.head, first));
                         complete = false;
                     }
-                    if let Some((_, below)) = phases.last().filter(|_| complete) {
+                    if let Some((_, below)) = phases.last() {
                         let material = transition::Material { name: &name, molar_mass: draft.molar_mass, formation };
                         let below = below.clone();
-                        match self.link(pending, &below, &read.1, &material) {
+                        match self.link(pending, &below, &neighbour, &material) {
                             Some(link) => links.push(link),
                             None => complete = false,
                         }
                         link_spans.push(pending.map_or(phase.head, |transition| transition.span));
                     }
+                    complete &= read.is_some();
                     if let (Some(transition), Some(below)) = (pending.take(), index.checked_sub(1)) {
                         let kind = DatumKind::Transition { below };
                         let at = transition_range(self, transition);
                         let datum = self.datum(draft, kind, &transition.suffixes, transition.span, at);
                         draft.data.push(datum);
                     }
-                    phases.push(read);
+                    phases.push((read, neighbour));
                 }
                 _ => {}
             }
@@ -313,7 +311,8 @@ impl Checker<'_> {
             );
             complete = false;
         }
-        complete.then(|| (phases.into_iter().map(|(phase, _)| phase).collect(), links, link_spans))
+        let phases = phases.into_iter().map(|(phase, _)| phase).collect::<Option<Vec<_>>>()?;
+        complete.then_some((phases, links, link_spans))
     }
 
     fn stray_transition(&mut self, span: Span, damaged: bool) {
@@ -327,8 +326,9 @@ impl Checker<'_> {
         );
     }
 
-    fn phase(&mut self, draft: &mut Draft<'_>, block: &PhaseBlock, index: usize) -> Option<(Phase, Neighbour)> {
-        let class = self.phase_class(block)?;
+    /// Reads a phase; what its neighbours need to know of it comes back even where it is at fault.
+    fn phase(&mut self, draft: &mut Draft<'_>, block: &PhaseBlock, index: usize) -> (Option<Phase>, Neighbour) {
+        let class = self.phase_class(block);
         let own_source = block.entries.iter().find_map(|entry| match entry {
             PhaseEntry::Source(text) => Some(text.text.clone()),
             _ => None,
@@ -387,19 +387,16 @@ impl Checker<'_> {
             );
             complete = false;
         }
-        if !complete || block.damaged {
-            return None;
-        }
-        let data = PhaseData {
+        let neighbour = Neighbour {
             name: block.name.text.clone(),
             class,
-            ranges,
-            density,
-            formation: formation.map(quantity),
+            own_formation: has_formation.is_some(),
+            head: block.head,
         };
-        let neighbour =
-            Neighbour { name: data.name.clone(), class, own_formation: data.formation.is_some(), head: block.head };
-        Some((Phase { data, head: block.head, ranges: spans, density: density_span }, neighbour))
+        let (Some(class), true) = (class, complete && !block.damaged) else { return (None, neighbour) };
+        let name = block.name.text.clone();
+        let data = PhaseData { name, class, ranges, density, formation: formation.map(quantity) };
+        (Some(Phase { data, head: block.head, ranges: spans, density: density_span }), neighbour)
     }
 
     fn phase_class(&mut self, block: &PhaseBlock) -> Option<PhaseClass> {
@@ -477,6 +474,10 @@ impl Checker<'_> {
                 densities: &phases.iter().map(|phase| phase.density).collect::<Vec<_>>(),
                 names: &phases.iter().map(|phase| phase.data.name.clone()).collect::<Vec<_>>(),
                 links,
+                formation: block.entries.iter().find_map(|entry| match entry {
+                    SpeciesEntry::Formation(value, _) => Some(value.span),
+                    _ => None,
+                }),
             },
         );
         self.report(found);

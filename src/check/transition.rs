@@ -11,7 +11,8 @@ use crate::units::{Dimension, quantity};
 #[derive(Clone)]
 pub(super) struct Neighbour {
     pub(super) name: String,
-    pub(super) class: PhaseClass,
+    /// Not known where it is not said.
+    pub(super) class: Option<PhaseClass>,
     pub(super) own_formation: bool,
     pub(super) head: Span,
 }
@@ -72,12 +73,7 @@ impl Checker<'_> {
     }
 
     fn unconnected(&mut self, below: &Neighbour, above: &Neighbour) {
-        let word = match (below.class, above.class) {
-            (PhaseClass::Solid, PhaseClass::Liquid) => "melting".to_owned(),
-            (PhaseClass::Liquid, PhaseClass::Gas) => "boiling".to_owned(),
-            (PhaseClass::Solid, PhaseClass::Gas) => "sublimation".to_owned(),
-            _ => format!("transition {} to {}", below.name, above.name),
-        };
+        let word = change_word(below, above);
         self.report(
             Diagnostic::new(
                 Code::PhasesUnconnected,
@@ -92,9 +88,9 @@ impl Checker<'_> {
     fn names_fit(&mut self, kind: &TransitionKind, span: Span, below: &Neighbour, above: &Neighbour) -> Option<()> {
         let fits = match kind {
             TransitionKind::Named(word) => match word.text.as_str() {
-                "melting" => below.class == PhaseClass::Solid && above.class == PhaseClass::Liquid,
-                "boiling" => below.class == PhaseClass::Liquid && above.class == PhaseClass::Gas,
-                _ => below.class == PhaseClass::Solid && above.class == PhaseClass::Gas,
+                "melting" => is(below, PhaseClass::Solid) && is(above, PhaseClass::Liquid),
+                "boiling" => is(below, PhaseClass::Liquid) && is(above, PhaseClass::Gas),
+                _ => is(below, PhaseClass::Solid) && is(above, PhaseClass::Gas),
             },
             TransitionKind::Between(low, high) => low.text == below.name && high.text == above.name,
         };
@@ -105,7 +101,7 @@ impl Checker<'_> {
         self.report(
             Diagnostic::new(Code::TransitionNames, format!("this transition does not lead from `{a}` to `{b}`"))
                 .label(span, format!("it stands between `{a}` and `{b}`"))
-                .help(format!("write `transition {a} to {b} at ... takes ...`, or put the phases in the order of heating")),
+                .help(format!("write `{} at ... takes ...`, or put the phases in the order of heating", change_word(below, above))),
         );
         None
     }
@@ -163,4 +159,19 @@ impl Checker<'_> {
             })
             .collect()
     }
+}
+
+/// The words that begin a transition between two phases.
+fn change_word(below: &Neighbour, above: &Neighbour) -> String {
+    match (below.class, above.class) {
+        (Some(PhaseClass::Solid), Some(PhaseClass::Liquid)) => "melting".to_owned(),
+        (Some(PhaseClass::Liquid), Some(PhaseClass::Gas)) => "boiling".to_owned(),
+        (Some(PhaseClass::Solid), Some(PhaseClass::Gas)) => "sublimation".to_owned(),
+        _ => format!("transition {} to {}", below.name, above.name),
+    }
+}
+
+/// Whether a phase is of a class; of one that is not said nothing is held against it.
+fn is(phase: &Neighbour, class: PhaseClass) -> bool {
+    phase.class.is_none_or(|known| known == class)
 }
