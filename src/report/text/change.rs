@@ -96,11 +96,11 @@ fn temperatures(leg: &LegRow) -> String {
     format!("{} to {}", kelvin(leg.from_kelvin), kelvin(leg.to_kelvin))
 }
 
-/// The unit that ΔH is shown in.
+/// The unit for the largest leg; ΔH may be next to nothing where legs cancel.
 fn leg_unit(row: &StepRow) -> Unit {
-    let enthalpy = row.sides.iter().find(|side| side.symbol == "ΔH");
     let dimension = if row.flow { Dimension::POWER } else { Dimension::ENERGY };
-    enthalpy.map_or_else(|| engineering_unit(dimension, row.enthalpy_change), |side| side.value.unit.clone())
+    let largest = row.legs.iter().map(|leg| leg.enthalpy_change.abs()).fold(0.0, f64::max);
+    engineering_unit(dimension, largest)
 }
 
 /// Each value with how it follows.
