@@ -13,6 +13,9 @@ pub const DIGITS: usize = 5;
 /// The most significant digits that are ever printed.
 pub const MOST_DIGITS: usize = 12;
 
+/// The most digits of a number that shares its fraction digits with the others of its column.
+const COLUMN_DIGITS: usize = 8;
+
 /// The fraction digits of a temperature and of a percentage.
 const HUNDREDTHS: usize = 2;
 
@@ -109,15 +112,18 @@ pub fn shown_uncertainty(value: f64, unit: &Unit) -> String {
     format!("{} {text}", significant(value, 2))
 }
 
-/// The numbers of a column, all with the same fraction digits where none needs an exponent; `None` is an empty place.
+/// The numbers of a column, all with the fraction digits of the one that has most; `None` is an empty place. Where that
+/// would take an exponent, or more than eight digits in one of them, each is printed for itself.
 pub fn shown_column(values: &[Option<f64>], unit: &Unit) -> Vec<Option<String>> {
-    let texts: Vec<_> = values.iter().map(|value| value.map(|value| shown_number(value, unit))).collect();
-    let present = || texts.iter().flatten();
-    if !present().all(|text| text.bytes().all(|byte| matches!(byte, b'0'..=b'9' | b'.' | b'-'))) {
-        return texts;
-    }
+    let alone: Vec<_> = values.iter().map(|value| value.map(|value| shown_number(value, unit))).collect();
+    let present = || alone.iter().flatten();
     let decimals = present().map(|text| decimals_of(text)).max().unwrap_or(0);
-    texts.iter().map(|text| text.as_deref().map(|text| padded(text, decimals))).collect()
+    let whole = present().map(|text| text.split('.').next().map_or(0, str::len)).max().unwrap_or(0);
+    let plain = |text: &String| text.bytes().all(|byte| matches!(byte, b'0'..=b'9' | b'.' | b'-'));
+    if !present().all(plain) || whole + decimals > COLUMN_DIGITS {
+        return alone;
+    }
+    values.iter().map(|value| value.map(|value| fixed(value, decimals))).collect()
 }
 
 fn shown_to(quantity: &Quantity, digits: usize) -> String {
@@ -177,12 +183,6 @@ fn trimmed(text: &str) -> String {
 
 fn decimals_of(text: &str) -> usize {
     text.split_once('.').map_or(0, |(_, fraction)| fraction.len())
-}
-
-fn padded(text: &str, decimals: usize) -> String {
-    let zeros = "0".repeat(decimals - decimals_of(text).min(decimals));
-    let point = if decimals > 0 && !text.contains('.') { "." } else { "" };
-    format!("{text}{point}{zeros}")
 }
 
 #[cfg(test)]
@@ -295,6 +295,11 @@ mod tests {
         let texts = shown_column(&[Some(19.8), None, Some(20.146_69), Some(21.0)], &unit);
         let texts: Vec<_> = texts.iter().map(|text| text.as_deref().unwrap_or("-")).collect();
         assert_eq!(texts, ["19.800", "-", "20.147", "21.000"]);
+        // 75.568 43 is 75.568 by itself; beside 8.7409 it has a digit more, and that is the 4 it has, not a zero.
+        let texts = shown_column(&[Some(75.568_43), Some(8.740_94)], &unit);
+        assert_eq!(texts, [Some("75.5684".to_owned()), Some("8.7409".to_owned())]);
+        let texts = shown_column(&[Some(101_325.0), Some(0.001_25)], &unit);
+        assert_eq!(texts, [Some("101325".to_owned()), Some("0.00125".to_owned())]);
         let texts = shown_column(&[Some(1e-9), Some(2.5)], &unit);
         assert_eq!(texts, [Some("1e-9".to_owned()), Some("2.5".to_owned())]);
     }

@@ -1,5 +1,7 @@
 //! States, and the steps between them.
 
+use textwrap::core::display_width;
+
 use super::given::worked;
 use super::grid::Grid;
 use super::ground::datum_mark;
@@ -61,6 +63,20 @@ fn path(row: &StepRow) -> String {
 
 /// A line for each leg, the datum that it rests on below it.
 fn write_legs(page: &mut Page, row: &StepRow, mark: &str, data: &[DataRow]) {
+    let column = BODY + mark.len() + 4;
+    for (line, leg) in leg_lines(row, mark).iter().zip(&row.legs) {
+        let fits = BODY + display_width(line) <= page.columns();
+        let folded = || line.split_whitespace().collect::<Vec<_>>().join(" ");
+        page.text(BODY, &if fits { line.clone() } else { folded() });
+        if !leg.datum.is_empty() {
+            let by = format!("by {}{}", leg.datum, datum_mark(leg, data));
+            page.hanging(&" ".repeat(column), column + 3, &by);
+        }
+    }
+}
+
+/// Number, kind, matter, temperatures and enthalpy change of each leg, aligned.
+fn leg_lines(row: &StepRow, mark: &str) -> Vec<String> {
     let unit = leg_unit(row);
     let values: Vec<_> = row.legs.iter().map(|leg| Some(unit.from_si(leg.enthalpy_change, 0.0))).collect();
     let mut grid = Grid::new().right([4]);
@@ -70,18 +86,7 @@ fn write_legs(page: &mut Page, row: &StepRow, mark: &str, data: &[DataRow]) {
         let value = format!("{} {}", value.unwrap_or_default(), unit.text);
         grid.row([number, leg.kind.as_str().into(), matter.trim().into(), temperatures(leg), value]);
     }
-    let lines = grid.lines(usize::from(u16::MAX));
-    let column = BODY + mark.len() + 4;
-    for (line, leg) in lines.iter().zip(&row.legs) {
-        page.text(BODY, line);
-        if !leg.datum.is_empty() {
-            page.hanging(
-                &" ".repeat(column),
-                column + 3,
-                &format!("by {}{}", leg.datum, datum_mark(leg, data)),
-            );
-        }
-    }
+    grid.lines(usize::from(u16::MAX))
 }
 
 fn temperatures(leg: &LegRow) -> String {
@@ -91,11 +96,11 @@ fn temperatures(leg: &LegRow) -> String {
     format!("{} to {}", kelvin(leg.from_kelvin), kelvin(leg.to_kelvin))
 }
 
-/// The unit that ΔH is shown in.
+/// The unit for the largest leg; ΔH may be next to nothing where legs cancel.
 fn leg_unit(row: &StepRow) -> Unit {
-    let enthalpy = row.sides.iter().find(|side| side.symbol == "ΔH");
     let dimension = if row.flow { Dimension::POWER } else { Dimension::ENERGY };
-    enthalpy.map_or_else(|| engineering_unit(dimension, row.enthalpy_change), |side| side.value.unit.clone())
+    let largest = row.legs.iter().map(|leg| leg.enthalpy_change.abs()).fold(0.0, f64::max);
+    engineering_unit(dimension, largest)
 }
 
 /// Each value with how it follows.

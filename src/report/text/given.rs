@@ -26,12 +26,12 @@ pub(super) fn write_inputs(page: &mut Page, report: &Report, items: impl Iterato
 fn site_cells(site: &SiteRow) -> [String; 5] {
     let atmosphere = &site.atmosphere;
     let value = format!("{} {}", exact(atmosphere.value), shown_unit(&atmosphere.unit, atmosphere.pressure));
-    let (role, unsaid) = match site.written {
-        Some(_) => ("site", NO_SOURCE),
-        None => ("assume", "standard atmosphere, assumed"),
+    let (role, name, unsaid) = match site.written {
+        Some(_) => ("site", "atmosphere", NO_SOURCE),
+        None => ("assume", "site atmosphere", "standard atmosphere, assumed"),
     };
     let source = site.source.as_deref().unwrap_or(unsaid);
-    [role.into(), "site atmosphere".into(), value, "exact".into(), source.into()]
+    [role.into(), name.into(), value, "exact".into(), source.into()]
 }
 
 fn input_cells(row: &InputRow) -> [String; 5] {

@@ -1,11 +1,12 @@
 //! The head of the note, and the answer in short.
 
+use textwrap::core::display_width;
+
 use super::page::Page;
 use super::style::Ink;
 use crate::diagnostic::{and_list, count};
 use crate::report::model::{Report, RequirementRow};
 use crate::report::number::{shown, shown_apart};
-use textwrap::core::display_width;
 
 /// How many results are named in the answer in short.
 const NAMED: usize = 6;
