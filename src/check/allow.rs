@@ -9,8 +9,10 @@ use crate::thermo::Pin;
 
 impl Checker<'_> {
     pub(super) fn allow(&mut self, allow: &Allow, span: Span) {
-        let from = allow.from.as_ref().map(|datum| self.datum_temperature(datum, "the lower end of an allowance"));
-        let to = allow.to.as_ref().map(|datum| self.datum_temperature(datum, "the upper end of an allowance"));
+        let from =
+            allow.from.as_ref().map(|datum| self.datum_temperature(datum, "the lower end of an allowance"));
+        let to =
+            allow.to.as_ref().map(|datum| self.datum_temperature(datum, "the upper end of an allowance"));
         let Some(because) = &allow.because else {
             self.report(
                 Diagnostic::new(Code::Unreadable, "an allowance without its reason")
@@ -20,19 +22,31 @@ impl Checker<'_> {
             return;
         };
         if from.is_none() && to.is_none() {
-            self.admits_nothing(span, "neither `from` nor `to`", &format!("write `allow {} to 1250 K because \"...\"`", allow.species.to_text()));
+            self.admits_nothing(
+                span,
+                "neither `from` nor `to`",
+                &format!("write `allow {} to 1250 K because \"...\"`", allow.species.to_text()),
+            );
             return;
         }
         let (Ok(from), Ok(to)) = (transposed(from), transposed(to)) else { return };
         let Some(material) = self.material(&allow.species) else { return };
         let Material::Species(id) = material else {
-            self.admits_nothing(allow.species.span, "a mixture has no data of its own", "name the species, such as `allow Zn(l) to ...`");
+            self.admits_nothing(
+                allow.species.span,
+                "a mixture has no data of its own",
+                "name the species, such as `allow Zn(l) to ...`",
+            );
             return;
         };
         let Some(pin) = self.pin(id, &allow.species) else { return };
         let Pin::Phase(phase) = pin else {
             let name = allow.species.name.clone();
-            self.admits_nothing(allow.species.span, "which phase?", &format!("add the state symbol, such as `{name}(l)`"));
+            self.admits_nothing(
+                allow.species.span,
+                "which phase?",
+                &format!("add the state symbol, such as `{name}(l)`"),
+            );
             return;
         };
         let Some(species) = self.program.species.get(id.0) else { return };
@@ -52,7 +66,11 @@ impl Checker<'_> {
     }
 
     fn admits_nothing(&mut self, span: Span, label: &str, help: &str) {
-        self.report(Diagnostic::new(Code::AllowWrong, "an allowance that admits nothing").label(span, label).help(help));
+        self.report(
+            Diagnostic::new(Code::AllowWrong, "an allowance that admits nothing")
+                .label(span, label)
+                .help(help),
+        );
     }
 }
 

@@ -23,7 +23,8 @@ impl Checker<'_> {
                 self.unlike_sum(first, term, *taken_away);
                 return None;
             }
-            let together = if *taken_away { units::difference } else { units::sum }(dimension, kind, term.kind);
+            let together =
+                if *taken_away { units::difference } else { units::sum }(dimension, kind, term.kind);
             match together {
                 Ok(next) => kind = next,
                 Err(clash) => {
@@ -74,7 +75,9 @@ impl Checker<'_> {
                 let code = if gauge { Code::GaugesAdded } else { Code::PointsAdded };
                 let difference = if gauge { "bar" } else { "K" };
                 let way_out = if term.is_literal() {
-                    format!("write `{a} + {number} {difference}` for a difference, `mean({a}, {b})` for their mean")
+                    format!(
+                        "write `{a} + {number} {difference}` for a difference, `mean({a}, {b})` for their mean"
+                    )
                 } else {
                     format!("`mean({a}, {b})` is their mean; a difference is written in {difference}")
                 };
@@ -109,7 +112,8 @@ impl Checker<'_> {
         }
         let mut dimension = Dimension::ONE;
         for (divides, factor) in &factors {
-            let next = if *divides { dimension.over(factor.dimension) } else { dimension.times(factor.dimension) };
+            let next =
+                if *divides { dimension.over(factor.dimension) } else { dimension.times(factor.dimension) };
             let Some(next) = next else {
                 self.bad_dimension(span);
                 return None;
@@ -148,15 +152,23 @@ impl Checker<'_> {
     fn warn_of_fraction(&mut self, factors: &[(Factor, Expression)]) {
         for pair in factors.windows(2) {
             let [(_, top), (Factor::Over, bottom)] = pair else { continue };
-            let (ExpressionKind::Literal(top), ExpressionKind::Literal(bottom)) = (&top.kind, &bottom.kind) else {
+            let (ExpressionKind::Literal(top), ExpressionKind::Literal(bottom)) = (&top.kind, &bottom.kind)
+            else {
                 continue;
             };
             let Some(unit) = bottom.unit.as_ref().filter(|_| top.unit.is_none()) else { continue };
             let text = self.written(top.span.to(bottom.span));
             self.report(
-                Diagnostic::new(Code::FractionOfUnit, format!("`{text}` is {}/({} {})", top.value, bottom.value, unit.text))
-                    .label(top.span.to(bottom.span), "the unit belongs to the number before it")
-                    .help(format!("write `{} {}` if the fraction was meant", top.value / bottom.value, unit.text)),
+                Diagnostic::new(
+                    Code::FractionOfUnit,
+                    format!("`{text}` is {}/({} {})", top.value, bottom.value, unit.text),
+                )
+                .label(top.span.to(bottom.span), "the unit belongs to the number before it")
+                .help(format!(
+                    "write `{} {}` if the fraction was meant",
+                    top.value / bottom.value,
+                    unit.text
+                )),
             );
         }
     }

@@ -10,7 +10,8 @@ use crate::units::{self, Dimension, Kind};
 
 impl Checker<'_> {
     pub(super) fn call(&mut self, word: &Word, arguments: &[Expression], span: Span) -> Option<Expr> {
-        let arguments: Vec<Option<Expr>> = arguments.iter().map(|argument| self.expression(argument)).collect();
+        let arguments: Vec<Option<Expr>> =
+            arguments.iter().map(|argument| self.expression(argument)).collect();
         let Some((_, function)) = Function::NAMED.iter().find(|(name, _)| *name == word.text) else {
             self.unknown_function(word);
             return None;
@@ -35,7 +36,9 @@ impl Checker<'_> {
             .label(word.span, "no function of this name");
         let help = match nearest(&word.text, names.clone().chain(["M"])) {
             Some(near) => format!("did you mean `{near}(...)`?"),
-            None if self.names.contains_key(&word.text) => format!("for a product write `{} * (...)`", word.text),
+            None if self.names.contains_key(&word.text) => {
+                format!("for a product write `{} * (...)`", word.text)
+            }
             None => format!("functions: {}, M", names.collect::<Vec<_>>().join(", ")),
         };
         self.report(found.help(help));
@@ -50,7 +53,8 @@ impl Checker<'_> {
         if (least..=most).contains(&given) {
             return true;
         }
-        let wants = if most == usize::MAX { format!("{least} or more arguments") } else { count(least, "argument") };
+        let wants =
+            if most == usize::MAX { format!("{least} or more arguments") } else { count(least, "argument") };
         self.report(
             Diagnostic::new(Code::ArgumentCount, format!("`{}` takes {wants}, not {given}", word.text))
                 .label(word.span, format!("{} given", count(given, "argument")))

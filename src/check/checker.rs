@@ -162,7 +162,8 @@ impl<'a> Checker<'a> {
             );
         }
         self.head_seen = Some(span);
-        let entries = head.entries.iter().map(|(word, text)| (word.text.clone(), text.text.clone())).collect();
+        let entries =
+            head.entries.iter().map(|(word, text)| (word.text.clone(), text.text.clone())).collect();
         self.program.head = Head { title: head.title.text.clone(), entries };
     }
 

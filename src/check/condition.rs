@@ -136,7 +136,9 @@ impl Checker<'_> {
 
     /// Saturation is known at 101.325 kPa only: another pressure wants a vapour-pressure law.
     fn refuse_other_saturation(&mut self, read: &mut Read) {
-        let (Some(span), Some((Condition::Value(pressure), _))) = (read.saturated, &read.pressure) else { return };
+        let (Some(span), Some((Condition::Value(pressure), _))) = (read.saturated, &read.pressure) else {
+            return;
+        };
         let absolute = match pressure.node {
             Node::Constant(value) => value,
             Node::Gauge(value) => value + self.program.site.atmosphere,
@@ -151,7 +153,11 @@ impl Checker<'_> {
     /// The phase of the one species that a share is said of.
     fn phase_of_share(&mut self, phase: &Word, matter: &Gathered, span: Span) -> Option<usize> {
         let [only] = matter.constituents.as_slice() else {
-            self.share_unplaced(span, "a share of a phase in a state of several species", "give the species their state symbols instead");
+            self.share_unplaced(
+                span,
+                "a share of a phase in a state of several species",
+                "give the species their state symbols instead",
+            );
             return None;
         };
         if only.pin != Pin::Stable {
@@ -180,11 +186,19 @@ impl Checker<'_> {
         }
         let at = self.phase_of_share(phase, matter, span)?;
         let species = matter.constituents.first()?.species;
-        let boils = self.program.species.get(species.0)?.phases.windows(2).any(|pair| {
-            pair[0].class == PhaseClass::Liquid && pair[1].class == PhaseClass::Gas
-        });
+        let boils = self
+            .program
+            .species
+            .get(species.0)?
+            .phases
+            .windows(2)
+            .any(|pair| pair[0].class == PhaseClass::Liquid && pair[1].class == PhaseClass::Gas);
         if !boils {
-            self.share_unplaced(span, "a saturated state of a species that does not boil", "add `boiling at ... takes ...` to its block");
+            self.share_unplaced(
+                span,
+                "a saturated state of a species that does not boil",
+                "add `boiling at ... takes ...` to its block",
+            );
             return None;
         }
         read.saturated = Some(span);
@@ -203,14 +217,22 @@ impl Checker<'_> {
         Some(())
     }
 
-    fn unsaid_temperature(&mut self, matter: &Gathered, origins: &[StateId], name: &Word) -> Option<Condition> {
+    fn unsaid_temperature(
+        &mut self,
+        matter: &Gathered,
+        origins: &[StateId],
+        name: &Word,
+    ) -> Option<Condition> {
         if let ([one], false) = (origins, matter.fresh) {
             return Some(Condition::Of(*one));
         }
         self.report(
-            Diagnostic::new(Code::TemperatureMissing, format!("the state `{}` has no temperature", name.text))
-                .label(name.span, "at which temperature?")
-                .help(format!("add `at 25 degC`; `at ?` where a step settles `{}.T`", name.text)),
+            Diagnostic::new(
+                Code::TemperatureMissing,
+                format!("the state `{}` has no temperature", name.text),
+            )
+            .label(name.span, "at which temperature?")
+            .help(format!("add `at 25 degC`; `at ?` where a step settles `{}.T`", name.text)),
         );
         None
     }

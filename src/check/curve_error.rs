@@ -21,7 +21,11 @@ impl Places<'_> {
     }
 
     fn range(&self, phase: usize, range: usize) -> Span {
-        self.ranges.get(phase).and_then(|ranges| ranges.get(range)).copied().unwrap_or_else(|| self.phase(phase))
+        self.ranges
+            .get(phase)
+            .and_then(|ranges| ranges.get(range))
+            .copied()
+            .unwrap_or_else(|| self.phase(phase))
     }
 
     fn link(&self, link: usize) -> Span {
@@ -68,14 +72,25 @@ fn ranges(error: CurveError, at: &Places<'_>) -> Option<Diagnostic> {
         .help(format!("write `for {} to {}`", kelvin(lo.value), kelvin(hi.value))),
         CurveError::RangeShort { phase, link, reaches, transition } => Diagnostic::new(
             Code::RangeShort,
-            format!("the data of `{}` do not reach its transition at {}", at.name(phase), kelvin(transition.value)),
+            format!(
+                "the data of `{}` do not reach its transition at {}",
+                at.name(phase),
+                kelvin(transition.value)
+            ),
         )
-        .label(at.range(phase, edge_range(at, phase, link)), format!("reaches only {}", kelvin(reaches.value)))
+        .label(
+            at.range(phase, edge_range(at, phase, link)),
+            format!("reaches only {}", kelvin(reaches.value)),
+        )
         .label(at.link(link), "the transition")
         .help("extend the range as far as the publication admits, or correct the transition"),
         CurveError::HeatCapacityNotPositive { phase, range, temperature } => Diagnostic::new(
             Code::DatumNotPositive,
-            format!("the heat capacity of `{}` is not positive at {}", at.name(phase), kelvin(temperature.value)),
+            format!(
+                "the heat capacity of `{}` is not positive at {}",
+                at.name(phase),
+                kelvin(temperature.value)
+            ),
         )
         .label(at.range(phase, range), "in this range")
         .help("check the signs and powers of ten of its coefficients"),
@@ -124,13 +139,17 @@ fn transitions(error: CurveError, at: &Places<'_>) -> Option<Diagnostic> {
         )
         .label(at.link(link), "solid, liquid, gas is the order of heating")
         .help("put the phases in the order of heating"),
-        CurveError::LatentSign { link, .. } => Diagnostic::new(Code::LatentSign, "a latent heat that is not positive")
-            .label(at.link(link), "a transition on heating takes up heat")
-            .help("check the enthalpies of the phases on both sides"),
+        CurveError::LatentSign { link, .. } => {
+            Diagnostic::new(Code::LatentSign, "a latent heat that is not positive")
+                .label(at.link(link), "a transition on heating takes up heat")
+                .help("check the enthalpies of the phases on both sides")
+        }
         CurveError::MeltingRange { link, fault } => melting(fault, at.link(link)),
-        CurveError::LinkCount { .. } => Diagnostic::new(Code::PhasesUnconnected, "phases without transitions between them")
-            .label(at.block, "in this species")
-            .help("put a transition between each phase and the next"),
+        CurveError::LinkCount { .. } => {
+            Diagnostic::new(Code::PhasesUnconnected, "phases without transitions between them")
+                .label(at.block, "in this species")
+                .help("put a transition between each phase and the next")
+        }
         _ => return None,
     })
 }
@@ -138,8 +157,13 @@ fn transitions(error: CurveError, at: &Places<'_>) -> Option<Diagnostic> {
 fn melting(fault: MeltingFault, span: Span) -> Diagnostic {
     let (label, help) = match fault {
         MeltingFault::Ends => ("its ends do not rise", "write `over 843 K to 893 K`"),
-        MeltingFault::Corners => ("its shares do not go from 0 % at the lower end to 100 % at the upper", "begin with 0 % and finish with 100 % at the ends of the range"),
-        MeltingFault::Order { .. } => ("its points do not rise", "sort the points by temperature; the share never falls"),
+        MeltingFault::Corners => (
+            "its shares do not go from 0 % at the lower end to 100 % at the upper",
+            "begin with 0 % and finish with 100 % at the ends of the range",
+        ),
+        MeltingFault::Order { .. } => {
+            ("its points do not rise", "sort the points by temperature; the share never falls")
+        }
         MeltingFault::Gas => ("it ends in a gas", "boiling takes place `at` one temperature here"),
     };
     Diagnostic::new(Code::MeltingRange, "a transition range that cannot be").label(span, label).help(help)

@@ -33,7 +33,11 @@ impl Checker<'_> {
         self.one_source(suffixes);
         let written = suffixes.intervals.first()?;
         let above = self.half_width(&written.above, written, about);
-        let below = if written.above == written.below { above } else { self.half_width(&written.below, written, about) };
+        let below = if written.above == written.below {
+            above
+        } else {
+            self.half_width(&written.below, written, about)
+        };
         let shape = self.shape(written)?;
         let text = self.written(written.span);
         Some(Interval { above: above?, below: below?, shape, text })
@@ -56,7 +60,11 @@ impl Checker<'_> {
             Ok(IntervalMark::Standard) => Some(IntervalShape::Normal(1.0)),
             Ok(IntervalMark::Expanded(k)) if *k > 0.0 => Some(IntervalShape::Normal(*k)),
             Ok(IntervalMark::Expanded(_)) => {
-                self.bad_interval(written.span, "the coverage factor is not positive", "write a coverage factor such as `(k=2)`");
+                self.bad_interval(
+                    written.span,
+                    "the coverage factor is not positive",
+                    "write a coverage factor such as `(k=2)`",
+                );
                 None
             }
             Err(word) => {
@@ -70,7 +78,9 @@ impl Checker<'_> {
     fn bad_interval(&mut self, span: Span, label: &str, help: &str) {
         let text = self.written(span);
         self.report(
-            Diagnostic::new(Code::BadInterval, format!("the interval `{text}` cannot be")).label(span, label).help(help),
+            Diagnostic::new(Code::BadInterval, format!("the interval `{text}` cannot be"))
+                .label(span, label)
+                .help(help),
         );
     }
 
@@ -95,7 +105,12 @@ impl Checker<'_> {
                 let text = text?;
                 if unit == "pp" {
                     let what = with_dimension(about.dimension);
-                    self.unlike_interval(span, "percentage points", &what, "percentage points belong to a value in `%`");
+                    self.unlike_interval(
+                        span,
+                        "percentage points",
+                        &what,
+                        "percentage points belong to a value in `%`",
+                    );
                     return None;
                 }
                 let read = match read_unit(unit) {
@@ -141,8 +156,11 @@ impl Checker<'_> {
     fn percent_width(&mut self, number: f64, whole: &tree::Interval, about: About) -> Option<f64> {
         let text = self.written(about.span);
         if about.kind == Kind::Point {
-            let (sort, unit) =
-                if about.dimension == Dimension::PRESSURE { ("a gauge reading", "bar") } else { ("a temperature", "K") };
+            let (sort, unit) = if about.dimension == Dimension::PRESSURE {
+                ("a gauge reading", "bar")
+            } else {
+                ("a temperature", "K")
+            };
             self.report(
                 Diagnostic::new(Code::PercentOfReading, format!("a percentage of {sort}, `{text}`"))
                     .label(whole.span, "a percentage of what? The scale's zero is a convention")

@@ -45,7 +45,12 @@ impl Checker<'_> {
         }
         let value = value?;
         if let (Some(Some(_)), Dimension::POWER) = (&over, value.dimension) {
-            self.wrong_dimension(value.span, value.dimension, &[Dimension::ENERGY], "a heat that is brought over a time");
+            self.wrong_dimension(
+                value.span,
+                value.dimension,
+                &[Dimension::ENERGY],
+                "a heat that is brought over a time",
+            );
             return None;
         }
         if carried {

@@ -28,7 +28,12 @@ impl Checker<'_> {
 
     fn name(&mut self, name: &str, span: Span) -> Option<Expr> {
         if self.in_formula && name == "T" {
-            return Some(Expr { span, dimension: Dimension::TEMPERATURE, kind: Kind::Open, node: Node::Variable });
+            return Some(Expr {
+                span,
+                dimension: Dimension::TEMPERATURE,
+                kind: Kind::Open,
+                node: Node::Variable,
+            });
         }
         if !self.names.contains_key(name)
             && let Some(constant) = constant::named(name, span)
@@ -52,7 +57,10 @@ impl Checker<'_> {
     /// `-x`: before a reading the minus belongs to the literal.
     fn negative(&mut self, inner: &Expression, span: Span) -> Option<Expr> {
         if let ExpressionKind::Literal(literal) = &inner.kind
-            && literal.unit.as_ref().is_some_and(|unit| read_unit(&unit.text).is_ok_and(|unit| unit.zero != Zero::None))
+            && literal
+                .unit
+                .as_ref()
+                .is_some_and(|unit| read_unit(&unit.text).is_ok_and(|unit| unit.zero != Zero::None))
         {
             return self.literal(literal, true, span);
         }
@@ -61,7 +69,12 @@ impl Checker<'_> {
             self.reading_in_product(&value, "taken negative");
             return None;
         }
-        Some(Expr { span, dimension: value.dimension, kind: value.kind, node: Node::Negative(Box::new(value)) })
+        Some(Expr {
+            span,
+            dimension: value.dimension,
+            kind: value.kind,
+            node: Node::Negative(Box::new(value)),
+        })
     }
 
     /// A power: a whole exponent for a quantity, any for a pure number.
@@ -87,9 +100,13 @@ impl Checker<'_> {
             let kind = Kind::unsaid(dimension);
             return Some(Expr { span, dimension, kind, node: Node::PowerInteger(Box::new(base), whole) });
         }
-        let dimension = if base.dimension.is_one() { Some(Dimension::ONE) } else { rooted(base.dimension, known) };
+        let dimension =
+            if base.dimension.is_one() { Some(Dimension::ONE) } else { rooted(base.dimension, known) };
         let Some(dimension) = dimension else {
-            self.bad_exponent(exponent.span, "a quantity with a dimension takes a whole exponent that is written out");
+            self.bad_exponent(
+                exponent.span,
+                "a quantity with a dimension takes a whole exponent that is written out",
+            );
             return None;
         };
         let node = Node::Power(Box::new(base), Box::new(exponent));

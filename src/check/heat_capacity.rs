@@ -6,7 +6,9 @@ use super::wanted::with_dimension;
 use crate::diagnostic::{Code, Diagnostic, nearest};
 use crate::numeric::Shape;
 use crate::span::Span;
-use crate::syntax::tree::{Coefficient, CoefficientForm, Datum, Expression, HeatCapacityEntry, LawText, Row, Word};
+use crate::syntax::tree::{
+    Coefficient, CoefficientForm, Datum, Expression, HeatCapacityEntry, LawText, Row, Word,
+};
 use crate::thermo::{Basis, HeatCapacity, HeatCapacityError, LawRange, MaierKelley};
 use crate::units::{Dimension, quantity};
 
@@ -36,7 +38,9 @@ impl Checker<'_> {
         let context = Context { molar_mass, species, span: entry.span, range };
         let law = match &entry.value.form {
             CoefficientForm::Formula(formula) => self.formula_law(formula, &context),
-            CoefficientForm::Published(form, coefficients) => self.published_law(form, coefficients, &context),
+            CoefficientForm::Published(form, coefficients) => {
+                self.published_law(form, coefficients, &context)
+            }
             CoefficientForm::Table(rows, linear) => self.cp_table(rows, *linear, &context),
             CoefficientForm::EnthalpyTable(from, rows) => self.enthalpy_table(from, rows, &context),
             CoefficientForm::MeanTable(from, rows) => self.mean_table(from, rows, &context),
@@ -60,14 +64,25 @@ impl Checker<'_> {
     }
 
     /// Per mole or per kilogram, by the dimension.
-    fn basis(&mut self, dimension: Dimension, span: Span, context: &Context<'_>, kinds: [Dimension; 2]) -> Option<Basis> {
+    fn basis(
+        &mut self,
+        dimension: Dimension,
+        span: Span,
+        context: &Context<'_>,
+        kinds: [Dimension; 2],
+    ) -> Option<Basis> {
         if dimension == kinds[1] {
             return Some(Basis::Mass);
         }
         if dimension != kinds[0] {
             let text = self.written(span);
-            let what = if kinds[0] == Dimension::MOLAR_HEAT_CAPACITY { "a heat capacity" } else { "an enthalpy" };
-            let example = if kinds[0] == Dimension::MOLAR_HEAT_CAPACITY { "J/(mol K) or kJ/(kg K)" } else { "kJ/mol or kJ/kg" };
+            let what =
+                if kinds[0] == Dimension::MOLAR_HEAT_CAPACITY { "a heat capacity" } else { "an enthalpy" };
+            let example = if kinds[0] == Dimension::MOLAR_HEAT_CAPACITY {
+                "J/(mol K) or kJ/(kg K)"
+            } else {
+                "kJ/mol or kJ/kg"
+            };
             self.report(
                 Diagnostic::new(
                     Code::HeatCapacityDimension,
@@ -108,9 +123,12 @@ impl Checker<'_> {
                 None => {
                     let text = self.written(checked.span);
                     self.report(
-                        Diagnostic::new(Code::Coefficients, format!("the formula `{text}` is too deep, or no function of T"))
-                            .label(checked.span, "cannot be worked as a heat capacity")
-                            .help("write it as a sum of terms"),
+                        Diagnostic::new(
+                            Code::Coefficients,
+                            format!("the formula `{text}` is too deep, or no function of T"),
+                        )
+                        .label(checked.span, "cannot be worked as a heat capacity")
+                        .help("write it as a sum of terms"),
                     );
                     return None;
                 }
@@ -119,27 +137,57 @@ impl Checker<'_> {
         self.law(law, context)
     }
 
-    fn law(&mut self, law: Result<HeatCapacity, HeatCapacityError>, context: &Context<'_>) -> Option<HeatCapacity> {
+    fn law(
+        &mut self,
+        law: Result<HeatCapacity, HeatCapacityError>,
+        context: &Context<'_>,
+    ) -> Option<HeatCapacity> {
         let error = match law {
             Ok(law) => return Some(law),
             Err(error) => error,
         };
         let (code, message, help) = match error {
-            HeatCapacityError::NoTerms => (Code::DatumMissing, "no term at all", "give at least one coefficient"),
-            HeatCapacityError::NotFinite { .. } => (Code::Coefficients, "a coefficient that is no finite number", "check the powers of ten"),
-            HeatCapacityError::Factor => (Code::Coefficients, "a gas constant or molar mass that is not positive", "write the publication's `R = 8.314510`"),
-            HeatCapacityError::Table(_) => (Code::TableOrder, "a table whose temperatures do not rise, or with fewer than two rows", "sort the rows by rising temperature, each temperature once"),
-            HeatCapacityError::BelowAbsoluteZero { .. } => (Code::BelowAbsoluteZero, "a temperature that is not above absolute zero", "check the unit of the temperatures"),
+            HeatCapacityError::NoTerms => {
+                (Code::DatumMissing, "no term at all", "give at least one coefficient")
+            }
+            HeatCapacityError::NotFinite { .. } => {
+                (Code::Coefficients, "a coefficient that is no finite number", "check the powers of ten")
+            }
+            HeatCapacityError::Factor => (
+                Code::Coefficients,
+                "a gas constant or molar mass that is not positive",
+                "write the publication's `R = 8.314510`",
+            ),
+            HeatCapacityError::Table(_) => (
+                Code::TableOrder,
+                "a table whose temperatures do not rise, or with fewer than two rows",
+                "sort the rows by rising temperature, each temperature once",
+            ),
+            HeatCapacityError::BelowAbsoluteZero { .. } => (
+                Code::BelowAbsoluteZero,
+                "a temperature that is not above absolute zero",
+                "check the unit of the temperatures",
+            ),
         };
-        self.report(Diagnostic::new(code, format!("the heat capacity has {message}")).label(context.span, "here").help(help));
+        self.report(
+            Diagnostic::new(code, format!("the heat capacity has {message}"))
+                .label(context.span, "here")
+                .help(help),
+        );
         None
     }
 
-    fn published_law(&mut self, form: &Word, given: &[Coefficient], context: &Context<'_>) -> Option<HeatCapacity> {
+    fn published_law(
+        &mut self,
+        form: &Word,
+        given: &[Coefficient],
+        context: &Context<'_>,
+    ) -> Option<HeatCapacity> {
         let Some((name, needed, optional)) = FORMS.iter().find(|(name, ..)| *name == form.text) else {
             let names: Vec<&str> = FORMS.iter().map(|(name, ..)| *name).collect();
-            let found = Diagnostic::new(Code::Coefficients, format!("unknown form of heat capacity `{}`", form.text))
-                .label(form.span, "no published form of this name");
+            let found =
+                Diagnostic::new(Code::Coefficients, format!("unknown form of heat capacity `{}`", form.text))
+                    .label(form.span, "no published form of this name");
             let help = match nearest(&form.text, names.iter().copied()) {
                 Some(near) => format!("did you mean `{near}`?"),
                 None => format!("forms: {}, or a formula `cp = ...`, or `cp table`", names.join(", ")),
@@ -165,14 +213,22 @@ impl Checker<'_> {
             ("nasa9", &[a1, a2, a3, a4, a5, a6, a7, r]) => {
                 HeatCapacity::nasa9([a1, a2, a3, a4, a5, a6, a7], quantity(r), molar_mass)
             }
-            ("nasa7", &[a1, a2, a3, a4, a5, r]) => HeatCapacity::nasa7([a1, a2, a3, a4, a5], quantity(r), molar_mass),
+            ("nasa7", &[a1, a2, a3, a4, a5, r]) => {
+                HeatCapacity::nasa7([a1, a2, a3, a4, a5], quantity(r), molar_mass)
+            }
             (_, &[a, b, c, d, e]) => HeatCapacity::shomate([a, b, c, d, e], molar_mass),
             _ => return None,
         };
         self.law(law, context)
     }
 
-    fn coefficients_fit(&mut self, form: &Word, given: &[Coefficient], needed: &[&str], optional: &[&str]) -> Option<()> {
+    fn coefficients_fit(
+        &mut self,
+        form: &Word,
+        given: &[Coefficient],
+        needed: &[&str],
+        optional: &[&str],
+    ) -> Option<()> {
         let mut fits = Some(());
         for (at, coefficient) in given.iter().enumerate() {
             let name = coefficient.name.text.as_str();
@@ -184,11 +240,16 @@ impl Checker<'_> {
                 continue;
             };
             let help = format!("`{}` takes {}", form.text, needed.join(", "));
-            self.report(Diagnostic::new(Code::Coefficients, message).label(coefficient.name.span, "here").help(help));
+            self.report(
+                Diagnostic::new(Code::Coefficients, message).label(coefficient.name.span, "here").help(help),
+            );
             fits = None;
         }
-        let missing: Vec<&str> =
-            needed.iter().copied().filter(|name| !given.iter().any(|coefficient| coefficient.name.text == *name)).collect();
+        let missing: Vec<&str> = needed
+            .iter()
+            .copied()
+            .filter(|name| !given.iter().any(|coefficient| coefficient.name.text == *name))
+            .collect();
         if !missing.is_empty() {
             let help = if missing.contains(&"R") {
                 "`R` is the gas constant that the publication used, such as `R = 8.314510`".to_owned()
@@ -208,14 +269,18 @@ impl Checker<'_> {
     /// A coefficient that is a pure number (`R` may carry its unit).
     fn pure_coefficient(&mut self, coefficient: &Coefficient) -> Option<f64> {
         let read = self.datum_value(&coefficient.value)?;
-        let gas_constant = coefficient.name.text == "R" && read.unit.dimension == Dimension::MOLAR_HEAT_CAPACITY;
+        let gas_constant =
+            coefficient.name.text == "R" && read.unit.dimension == Dimension::MOLAR_HEAT_CAPACITY;
         if read.unit.dimension.is_one() || gas_constant {
             return Some(read.si);
         }
         self.report(
-            Diagnostic::new(Code::Coefficients, format!("the coefficient `{}` is a pure number here", coefficient.name.text))
-                .label(coefficient.value.span, format!("{} here", with_dimension(read.unit.dimension)))
-                .help("take the unit away: the published form fixes it"),
+            Diagnostic::new(
+                Code::Coefficients,
+                format!("the coefficient `{}` is a pure number here", coefficient.name.text),
+            )
+            .label(coefficient.value.span, format!("{} here", with_dimension(read.unit.dimension)))
+            .help("take the unit away: the published form fixes it"),
         );
         None
     }
@@ -254,7 +319,8 @@ impl Checker<'_> {
     /// An enthalpy table counts from a temperature at which it is zero.
     fn enthalpy_table(&mut self, from: &Datum, rows: &[Row], context: &Context<'_>) -> Option<HeatCapacity> {
         let from = self.datum_temperature(from, "the temperature that the table counts from")?;
-        let (mut points, basis) = self.points(rows, context, [Dimension::MOLAR_ENERGY, Dimension::SPECIFIC_ENERGY])?;
+        let (mut points, basis) =
+            self.points(rows, context, [Dimension::MOLAR_ENERGY, Dimension::SPECIFIC_ENERGY])?;
         if !points.iter().any(|(t, _)| *t == from) {
             let at = points.partition_point(|(t, _)| *t < from);
             points.insert(at, (from, 0.0));
@@ -271,7 +337,12 @@ impl Checker<'_> {
     }
 
     /// The rows of a table in SI, all of one dimension, rising.
-    fn points(&mut self, rows: &[Row], context: &Context<'_>, kinds: [Dimension; 2]) -> Option<(Vec<(f64, f64)>, Basis)> {
+    fn points(
+        &mut self,
+        rows: &[Row],
+        context: &Context<'_>,
+        kinds: [Dimension; 2],
+    ) -> Option<(Vec<(f64, f64)>, Basis)> {
         let mut points: Vec<(f64, f64)> = Vec::with_capacity(rows.len());
         let mut basis = None;
         for row in rows {
@@ -280,9 +351,12 @@ impl Checker<'_> {
             let this = self.basis(read.unit.dimension, row.value.span, context, kinds)?;
             if basis.is_some_and(|basis| basis != this) {
                 self.report(
-                    Diagnostic::new(Code::HeatCapacityDimension, "a table with rows per mole and rows per mass")
-                        .label(row.value.span, "of the other sort")
-                        .help("give all rows in one unit"),
+                    Diagnostic::new(
+                        Code::HeatCapacityDimension,
+                        "a table with rows per mole and rows per mass",
+                    )
+                    .label(row.value.span, "of the other sort")
+                    .help("give all rows in one unit"),
                 );
                 return None;
             }

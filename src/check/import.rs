@@ -31,9 +31,12 @@ impl Checker<'_> {
     fn taken(&mut self, name: &SpeciesName, known: &[Species], line: &Use) -> Option<Species> {
         if let Some(symbol) = &name.symbol {
             self.report(
-                Diagnostic::new(Code::NotInFamily, format!("`{}` with a state symbol cannot be taken", name.to_text()))
-                    .label(symbol.span, "a species is taken with all its phases")
-                    .help(format!("write `use {} from ...`", name.name)),
+                Diagnostic::new(
+                    Code::NotInFamily,
+                    format!("`{}` with a state symbol cannot be taken", name.to_text()),
+                )
+                .label(symbol.span, "a species is taken with all its phases")
+                .help(format!("write `use {} from ...`", name.name)),
             );
             return None;
         }
@@ -57,8 +60,9 @@ impl Checker<'_> {
 
     fn family(&mut self, word: &Word) -> FileSpecies {
         let Some(text) = family(&word.text) else {
-            let found = Diagnostic::new(Code::UnknownFamily, format!("no family `{}` in the library", word.text))
-                .label(word.span, "unknown");
+            let found =
+                Diagnostic::new(Code::UnknownFamily, format!("no family `{}` in the library", word.text))
+                    .label(word.span, "unknown");
             let known: Vec<&str> = families().collect();
             let help = match nearest(&word.text, known.iter().copied()) {
                 Some(near) => format!("did you mean `{near}`?"),
@@ -81,17 +85,23 @@ impl Checker<'_> {
             Ok(loaded) => self.species_of(&loaded, path.span),
             Err(LoadError::Outside) => {
                 self.report(
-                    Diagnostic::new(Code::PathOutside, format!("`{}` lies outside the sheet's folder", path.text))
-                        .label(path.span, "a sheet uses files of its own folder only")
-                        .help("copy the file beside the sheet and name it without `..` or a leading `/`"),
+                    Diagnostic::new(
+                        Code::PathOutside,
+                        format!("`{}` lies outside the sheet's folder", path.text),
+                    )
+                    .label(path.span, "a sheet uses files of its own folder only")
+                    .help("copy the file beside the sheet and name it without `..` or a leading `/`"),
                 );
                 None
             }
             Err(LoadError::Unreadable(why)) => {
                 self.report(
-                    Diagnostic::new(Code::ImportUnreadable, format!("`{}` cannot be opened: {why}", path.text))
-                        .label(path.span, "used here")
-                        .help("the path counts from the file that uses it"),
+                    Diagnostic::new(
+                        Code::ImportUnreadable,
+                        format!("`{}` cannot be opened: {why}", path.text),
+                    )
+                    .label(path.span, "used here")
+                    .help("the path counts from the file that uses it"),
                 );
                 None
             }
@@ -102,9 +112,12 @@ impl Checker<'_> {
     fn species_of(&mut self, loaded: &Loaded, span: Span) -> FileSpecies {
         if self.reading.contains(&loaded.identity) {
             self.report(
-                Diagnostic::new(Code::ImportCycle, format!("`{}` uses itself, by way of others", loaded.name))
-                    .label(span, "this closes the circle")
-                    .help("move the species that both need into a third file"),
+                Diagnostic::new(
+                    Code::ImportCycle,
+                    format!("`{}` uses itself, by way of others", loaded.name),
+                )
+                .label(span, "this closes the circle")
+                .help("move the species that both need into a third file"),
             );
             return None;
         }

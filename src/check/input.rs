@@ -7,7 +7,9 @@ use super::wanted::with_dimension;
 use crate::diagnostic::{Code, Diagnostic};
 use crate::program::{Entry, Expr, Quantity, QuantityId, Role};
 use crate::span::Span;
-use crate::syntax::tree::{Datum, Expression, ExpressionKind, Input, InputRole, InputValue, Suffixes, UnitText, Word};
+use crate::syntax::tree::{
+    Datum, Expression, ExpressionKind, Input, InputRole, InputValue, Suffixes, UnitText, Word,
+};
 use crate::units::{Dimension, Kind, Unit, Zero, read_unit};
 
 impl Checker<'_> {
@@ -50,18 +52,20 @@ impl Checker<'_> {
         );
     }
 
-    fn input_quantity(
-        &mut self,
-        role: Role,
-        input: &Input,
-        expression: &Expression,
-    ) -> Option<Quantity> {
+    fn input_quantity(&mut self, role: Role, input: &Input, expression: &Expression) -> Option<Quantity> {
         if role.is_input() && !is_literal(expression) {
             self.expression(expression);
             self.report(
-                Diagnostic::new(Code::Unreadable, format!("a `{}` takes one number with its unit", role.as_str()))
-                    .label(expression.span, "an expression here")
-                    .help(format!("write `let {} = {}`", input.name.text, self.written(expression.span))),
+                Diagnostic::new(
+                    Code::Unreadable,
+                    format!("a `{}` takes one number with its unit", role.as_str()),
+                )
+                .label(expression.span, "an expression here")
+                .help(format!(
+                    "write `let {} = {}`",
+                    input.name.text,
+                    self.written(expression.span)
+                )),
             );
             return None;
         }
@@ -113,18 +117,24 @@ impl Checker<'_> {
             let (found, wanted) = (with_dimension(value.dimension), with_dimension(unit.dimension));
             let example = crate::units::engineering_unit(value.dimension, 1.0).text;
             self.report(
-                Diagnostic::new(Code::WrongDisplayUnit, format!("{found} cannot be shown in `{}`, {wanted}", unit.text))
-                    .label(text.span, format!("the value is {found}"))
-                    .help(format!("write `in {example}`, or correct the formula")),
+                Diagnostic::new(
+                    Code::WrongDisplayUnit,
+                    format!("{found} cannot be shown in `{}`, {wanted}", unit.text),
+                )
+                .label(text.span, format!("the value is {found}"))
+                .help(format!("write `in {example}`, or correct the formula")),
             );
             return Some(None);
         }
         if unit.zero != Zero::None && value.kind == Kind::Difference {
             let plain = if unit.is_gauge() { "bar" } else { "K" };
             self.report(
-                Diagnostic::new(Code::DifferenceForPoint, format!("a difference cannot be shown in `{}`", unit.text))
-                    .label(text.span, "a scale with its own zero")
-                    .help(format!("write `in {plain}`")),
+                Diagnostic::new(
+                    Code::DifferenceForPoint,
+                    format!("a difference cannot be shown in `{}`", unit.text),
+                )
+                .label(text.span, "a scale with its own zero")
+                .help(format!("write `in {plain}`")),
             );
             return Some(None);
         }
@@ -149,15 +159,23 @@ impl Checker<'_> {
         }
         let Some(read) = self.datum_value(datum) else { return };
         if read.unit.dimension != Dimension::PRESSURE {
-            self.wrong_dimension(datum.span, read.unit.dimension, &[Dimension::PRESSURE], "the site's atmosphere");
+            self.wrong_dimension(
+                datum.span,
+                read.unit.dimension,
+                &[Dimension::PRESSURE],
+                "the site's atmosphere",
+            );
             return;
         }
         if read.unit.is_gauge() {
             let text = self.written(datum.span);
             self.report(
-                Diagnostic::new(Code::GaugeForDifference, format!("the site's atmosphere as a gauge reading, `{text}`"))
-                    .label(datum.span, "gauge readings count from the atmosphere")
-                    .help("give it absolute, such as `1005 mbar`"),
+                Diagnostic::new(
+                    Code::GaugeForDifference,
+                    format!("the site's atmosphere as a gauge reading, `{text}`"),
+                )
+                .label(datum.span, "gauge readings count from the atmosphere")
+                .help("give it absolute, such as `1005 mbar`"),
             );
             return;
         }

@@ -31,7 +31,8 @@ impl Checker<'_> {
     }
 
     pub(super) fn later_balance(&mut self, balance: &Balance, span: Span) {
-        self.names.insert(balance.name.text.clone(), Declared { what: Entity::Broken, span: balance.name.span });
+        self.names
+            .insert(balance.name.text.clone(), Declared { what: Entity::Broken, span: balance.name.span });
         let help = "a step between the sums of the states gives `.dH`; a `result` can add up the rest";
         self.later(Code::LaterBalance, "balances are", span, help);
     }
@@ -45,7 +46,8 @@ impl Checker<'_> {
     }
 
     pub(super) fn later_vapour_pressure(&mut self, span: Span) {
-        let help = "leave the law out; boiling holds at 101.325 kPa, and a state symbol says the phase elsewhere";
+        let help =
+            "leave the law out; boiling holds at 101.325 kPa, and a state symbol says the phase elsewhere";
         self.later(Code::LaterVapourPressure, "vapour pressure laws are", span, help);
     }
 
@@ -76,6 +78,7 @@ impl Checker<'_> {
 
     /// Whether a material is one whose mistake is already reported.
     pub(super) fn is_broken_material(&self, name: &str) -> bool {
-        matches!(self.materials.get(name), Some(Declared { what: Material::Broken, .. })) || self.broken.contains(name)
+        matches!(self.materials.get(name), Some(Declared { what: Material::Broken, .. }))
+            || self.broken.contains(name)
     }
 }

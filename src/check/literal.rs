@@ -19,7 +19,12 @@ impl Checker<'_> {
     pub(super) fn literal(&mut self, literal: &Literal, negative: bool, span: Span) -> Option<Expr> {
         let Some(text) = &literal.unit else {
             let value = if negative { -literal.value } else { literal.value };
-            return Some(Expr { span, dimension: Dimension::ONE, kind: Kind::Plain, node: Node::Constant(value) });
+            return Some(Expr {
+                span,
+                dimension: Dimension::ONE,
+                kind: Kind::Plain,
+                node: Node::Constant(value),
+            });
         };
         match read_unit(&text.text) {
             Ok(unit) => {
@@ -55,9 +60,15 @@ impl Checker<'_> {
         }
         if self.is_name(word) {
             let number = self.sources.slice(literal.span);
-            let number = number.split(|c: char| c.is_whitespace() || c.is_alphabetic()).next().unwrap_or_default().to_owned();
+            let number = number
+                .split(|c: char| c.is_whitespace() || c.is_alphabetic())
+                .next()
+                .unwrap_or_default()
+                .to_owned();
             let help = match text.text.split_once('/') {
-                Some((unit, _)) if unit != word && !unit.is_empty() => format!("write `{number} {unit} / {word}`"),
+                Some((unit, _)) if unit != word && !unit.is_empty() => {
+                    format!("write `{number} {unit} / {word}`")
+                }
                 _ => format!("write `{number} * {word}`"),
             };
             self.report(
@@ -75,11 +86,10 @@ impl Checker<'_> {
     fn quotient_by_names(&self, literal: &Literal, text: &UnitText) -> Option<Expression> {
         let names = text.text.strip_prefix('/')?;
         let mut at = text.span.start + 1;
-        let number = Literal { unit: None, span: Span { end: text.span.start, ..literal.span }, ..literal.clone() };
-        let mut factors = vec![(
-            Factor::Times,
-            Expression { span: number.span, kind: ExpressionKind::Literal(number) },
-        )];
+        let number =
+            Literal { unit: None, span: Span { end: text.span.start, ..literal.span }, ..literal.clone() };
+        let mut factors =
+            vec![(Factor::Times, Expression { span: number.span, kind: ExpressionKind::Literal(number) })];
         for name in names.split('/') {
             let end = at + u32::try_from(name.len()).ok()?;
             let span = Span { start: at, end, ..text.span };
@@ -100,7 +110,8 @@ impl Checker<'_> {
 
     /// A word that is both is the unit, with a warning.
     fn warn_of_name(&mut self, literal: &Literal, text: &UnitText) {
-        let words = text.text.split(|c: char| !(c.is_alphanumeric() || c == '_')).filter(|word| !word.is_empty());
+        let words =
+            text.text.split(|c: char| !(c.is_alphanumeric() || c == '_')).filter(|word| !word.is_empty());
         let Some(word) = words.into_iter().find(|word| self.names.contains_key(*word)) else { return };
         self.report(
             Diagnostic::new(Code::UnitAndName, format!("`{word}` is a unit and a name of this sheet"))
@@ -134,9 +145,12 @@ impl Checker<'_> {
         let kelvin = self.datum_of(datum, Dimension::TEMPERATURE, what)?;
         if kelvin < 0.0 {
             self.report(
-                Diagnostic::new(Code::BelowAbsoluteZero, format!("`{}` is below absolute zero", self.written(datum.span)))
-                    .label(datum.span, format!("{what}"))
-                    .help("0 K is -273.15 degC, or -459.67 degF"),
+                Diagnostic::new(
+                    Code::BelowAbsoluteZero,
+                    format!("`{}` is below absolute zero", self.written(datum.span)),
+                )
+                .label(datum.span, format!("{what}"))
+                .help("0 K is -273.15 degC, or -459.67 degF"),
             );
             return None;
         }

@@ -84,7 +84,11 @@ impl Checker<'_> {
         let mut fresh = false;
         let mut sources = Vec::new();
         for part in gathered {
-            let at: Vec<usize> = part.constituents.iter().map(|constituent| place_in(&mut constituents, constituent)).collect();
+            let at: Vec<usize> = part
+                .constituents
+                .iter()
+                .map(|constituent| place_in(&mut constituents, constituent))
+                .collect();
             fresh |= part.fresh;
             sources.push(moved(part.source, &at));
         }
@@ -129,7 +133,10 @@ impl Checker<'_> {
             Target::Material(parts) => {
                 let constituents: Vec<Constituent> = parts.iter().map(|(part, _)| *part).collect();
                 self.can_be_counted(&constituents, quantum, amount.span)?;
-                let portions = parts.iter().enumerate().map(|(constituent, (_, share))| Portion { constituent, share: *share });
+                let portions = parts
+                    .iter()
+                    .enumerate()
+                    .map(|(constituent, (_, share))| Portion { constituent, share: *share });
                 let source = Source::Fresh { amount, quantum, portions: portions.collect() };
                 Some(Gathered { source, constituents, flow, fresh: true })
             }
@@ -140,7 +147,12 @@ impl Checker<'_> {
                 }
                 self.can_be_counted(&matter.constituents, quantum, amount.span)?;
                 let source = Source::PartOf { amount, quantum, of: Box::new(matter.source) };
-                Some(Gathered { source, constituents: matter.constituents, flow: matter.flow, fresh: matter.fresh })
+                Some(Gathered {
+                    source,
+                    constituents: matter.constituents,
+                    flow: matter.flow,
+                    fresh: matter.fresh,
+                })
             }
         }
     }
@@ -166,9 +178,12 @@ impl Checker<'_> {
             Material::Mixture(blend) => {
                 if let Some(symbol) = &name.symbol {
                     self.report(
-                        Diagnostic::new(Code::UnknownPhase, format!("`{}` is a mixture and takes no state symbol", name.name))
-                            .label(symbol.span, "of which of its species?")
-                            .help("give the symbols to its species, where the mixture is declared"),
+                        Diagnostic::new(
+                            Code::UnknownPhase,
+                            format!("`{}` is a mixture and takes no state symbol", name.name),
+                        )
+                        .label(symbol.span, "of which of its species?")
+                        .help("give the symbols to its species, where the mixture is declared"),
                     );
                     return None;
                 }
@@ -202,9 +217,12 @@ impl Checker<'_> {
             if !any {
                 let name = self.constituent_name(part);
                 self.report(
-                    Diagnostic::new(Code::DensityMissing, format!("a volume is asked of `{name}`, which has no density"))
-                        .label(span, "a volume here")
-                        .help("add `density ... kg/m3` to its phase, or count it by mass"),
+                    Diagnostic::new(
+                        Code::DensityMissing,
+                        format!("a volume is asked of `{name}`, which has no density"),
+                    )
+                    .label(span, "a volume here")
+                    .help("add `density ... kg/m3` to its phase, or count it by mass"),
                 );
                 return None;
             }
@@ -216,10 +234,12 @@ impl Checker<'_> {
     /// meant; liquid and gas together want another gas, or the boiling point itself.
     fn symbols_agree(&mut self, parts: &[Constituent], span: Span) -> Option<()> {
         for (at, part) in parts.iter().enumerate() {
-            let Some(other) = parts[..at].iter().find(|other| other.species == part.species) else { continue };
-            let gas_beside = parts
-                .iter()
-                .any(|third| third.species != part.species && self.class_of_constituent(third) == Some(PhaseClass::Gas));
+            let Some(other) = parts[..at].iter().find(|other| other.species == part.species) else {
+                continue;
+            };
+            let gas_beside = parts.iter().any(|third| {
+                third.species != part.species && self.class_of_constituent(third) == Some(PhaseClass::Gas)
+            });
             if part.pin != Pin::Stable && other.pin != Pin::Stable && gas_beside {
                 continue;
             }
@@ -235,7 +255,11 @@ impl Checker<'_> {
     }
 
     /// The phase rule: beside another gas or liquid, a species that could condense or boil says its phase.
-    pub(super) fn phases_said(&mut self, parts: &[Constituent], places: &[(Constituent, Span)]) -> Option<()> {
+    pub(super) fn phases_said(
+        &mut self,
+        parts: &[Constituent],
+        places: &[(Constituent, Span)],
+    ) -> Option<()> {
         for (part, span) in places.iter().filter(|(part, _)| part.pin == Pin::Stable) {
             let Some(species) = self.program.species.get(part.species.0) else { continue };
             if !species.can_condense() {
@@ -254,9 +278,15 @@ impl Checker<'_> {
             };
             let name = species.name.clone();
             self.report(
-                Diagnostic::new(Code::SymbolWanted, format!("is `{name}` liquid or gas beside another {beside}?"))
-                    .label(*span, "its partial pressure is not the total pressure, so that the phase does not follow")
-                    .help(format!("write `{name}(g)` or `{name}(l)` where its matter is declared")),
+                Diagnostic::new(
+                    Code::SymbolWanted,
+                    format!("is `{name}` liquid or gas beside another {beside}?"),
+                )
+                .label(
+                    *span,
+                    "its partial pressure is not the total pressure, so that the phase does not follow",
+                )
+                .help(format!("write `{name}(g)` or `{name}(l)` where its matter is declared")),
             );
             return None;
         }
@@ -305,7 +335,9 @@ fn moved(source: Source, places: &[usize]) -> Source {
                 })
                 .collect(),
         },
-        Source::PartOf { amount, quantum, of } => Source::PartOf { amount, quantum, of: Box::new(moved(*of, places)) },
+        Source::PartOf { amount, quantum, of } => {
+            Source::PartOf { amount, quantum, of: Box::new(moved(*of, places)) }
+        }
         Source::Sum(parts) => Source::Sum(parts.into_iter().map(|part| moved(part, places)).collect()),
         Source::Whole(id) => Source::Whole(id),
     }

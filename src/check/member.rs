@@ -9,9 +9,25 @@ use crate::thermo::Pin;
 use crate::units::{Dimension, Kind};
 
 const STATE_MEMBERS: &[&str] = &[
-    "T", "P", "n", "m", "V", "H", "U", "h", "u", "cp", "density", "fraction", "mass", "amount", "share", "mass_share",
+    "T",
+    "P",
+    "n",
+    "m",
+    "V",
+    "H",
+    "U",
+    "h",
+    "u",
+    "cp",
+    "density",
+    "fraction",
+    "mass",
+    "amount",
+    "share",
+    "mass_share",
 ];
-const STEP_MEMBERS: &[&str] = &["dH", "dU", "dV", "Q", "W", "supply", "sensible", "latent", "reaction", "legs"];
+const STEP_MEMBERS: &[&str] =
+    &["dH", "dU", "dV", "Q", "W", "supply", "sensible", "latent", "reaction", "legs"];
 const DUTY_MEMBERS: &[&str] = &["useful", "supplied", "flow"];
 
 impl Checker<'_> {
@@ -31,9 +47,12 @@ impl Checker<'_> {
             Entity::Duty(id) => self.duty_member(id, of, member, span),
             Entity::Quantity(_) => {
                 self.report(
-                    Diagnostic::new(Code::UnknownMember, format!("`{}` is a value and has no members", of.text))
-                        .label(member.span, "no member here")
-                        .help(format!("write `{}`", of.text)),
+                    Diagnostic::new(
+                        Code::UnknownMember,
+                        format!("`{}` is a value and has no members", of.text),
+                    )
+                    .label(member.span, "no member here")
+                    .help(format!("write `{}`", of.text)),
                 );
                 None
             }
@@ -120,7 +139,11 @@ impl Checker<'_> {
         }
     }
 
-    fn all_have_formation(&mut self, constituents: &[crate::program::Constituent], member: &Word) -> Option<()> {
+    fn all_have_formation(
+        &mut self,
+        constituents: &[crate::program::Constituent],
+        member: &Word,
+    ) -> Option<()> {
         let without: Vec<String> = constituents
             .iter()
             .filter_map(|constituent| self.program.species.get(constituent.species.0))
@@ -134,7 +157,9 @@ impl Checker<'_> {
                 format!("the absolute `{}` is asked, but `{name}` has no formation enthalpy", member.text),
             )
             .label(member.span, "absolute, counted from the elements at 298.15 K")
-            .help(format!("give `{name}` a line `formation ... kJ/mol at 298.15 K`, or ask a step for its `.dH`")),
+            .help(format!(
+                "give `{name}` a line `formation ... kJ/mol at 298.15 K`, or ask a step for its `.dH`"
+            )),
         );
         None
     }
@@ -156,7 +181,8 @@ impl Checker<'_> {
             "mass" => Some(StateMember::MassOf(which)),
             "mass_share" => Some(StateMember::MassShare(which)),
             "amount" => {
-                let asked: Vec<_> = which.iter().filter_map(|at| state.constituents.get(*at).copied()).collect();
+                let asked: Vec<_> =
+                    which.iter().filter_map(|at| state.constituents.get(*at).copied()).collect();
                 self.all_have_moles(&asked, name.span, "the amount of substance")?;
                 Some(StateMember::AmountOf(which))
             }
@@ -189,7 +215,11 @@ impl Checker<'_> {
     }
 
     /// The constituents of a state that a species' name means.
-    fn constituents_named(&mut self, state: &crate::program::State, name: &SpeciesName) -> Option<Vec<usize>> {
+    fn constituents_named(
+        &mut self,
+        state: &crate::program::State,
+        name: &SpeciesName,
+    ) -> Option<Vec<usize>> {
         let Material::Species(species) = self.material(name)? else {
             self.report(
                 Diagnostic::new(Code::UnknownSpecies, format!("`{}` is no species", name.name))
@@ -206,7 +236,8 @@ impl Checker<'_> {
             })
             .collect();
         if which.is_empty() {
-            let names: Vec<String> = state.constituents.iter().map(|part| self.constituent_name(part)).collect();
+            let names: Vec<String> =
+                state.constituents.iter().map(|part| self.constituent_name(part)).collect();
             self.report(
                 Diagnostic::new(
                     Code::UnknownMember,
@@ -231,7 +262,8 @@ impl Checker<'_> {
             None => {
                 let first = state.constituents.first()?.species;
                 if state.constituents.iter().any(|part| part.species != first) {
-                    let example = self.program.species.get(first.0).map_or("Zn", |species| species.name.as_str());
+                    let example =
+                        self.program.species.get(first.0).map_or("Zn", |species| species.name.as_str());
                     let help = format!("write `fraction({example}(l))`");
                     self.report(
                         Diagnostic::new(
@@ -268,7 +300,10 @@ impl Checker<'_> {
                 self.report(
                     Diagnostic::new(Code::NotAQuantity, "the legs of a step are a list, not a value")
                         .label(member.span, "a value is wanted here")
-                        .help(format!("the report lists them; ask for `{0}.sensible` or `{0}.latent`", of.text)),
+                        .help(format!(
+                            "the report lists them; ask for `{0}.sensible` or `{0}.latent`",
+                            of.text
+                        )),
                 );
                 return None;
             }
@@ -297,13 +332,16 @@ impl Checker<'_> {
         };
         let what = if member.text == "W" { "work" } else { "heat" };
         self.report(
-            Diagnostic::new(Code::HeatWithoutPath, format!("{what} depends on the path, and `{}` has none", of.text))
-                .label(member.span, format!("{what} is asked here"))
-                .help(format!(
-                    "add `, {}` or `, {}` to the step; `.dH` and `.dU` need no path",
-                    first.as_str(),
-                    second.as_str()
-                )),
+            Diagnostic::new(
+                Code::HeatWithoutPath,
+                format!("{what} depends on the path, and `{}` has none", of.text),
+            )
+            .label(member.span, format!("{what} is asked here"))
+            .help(format!(
+                "add `, {}` or `, {}` to the step; `.dH` and `.dU` need no path",
+                first.as_str(),
+                second.as_str()
+            )),
         );
     }
 
@@ -315,9 +353,12 @@ impl Checker<'_> {
             "supplied" => DutyMember::Supplied,
             "flow" => {
                 self.report(
-                    Diagnostic::new(Code::LaterCarrier, "`.flow` asks for a carrier, and carriers are not worked yet")
-                        .label(member.span, "the flow of a carrier is asked here")
-                        .help(format!("`{0}.supplied` is the heat that a carrier must bring", of.text)),
+                    Diagnostic::new(
+                        Code::LaterCarrier,
+                        "`.flow` asks for a carrier, and carriers are not worked yet",
+                    )
+                    .label(member.span, "the flow of a carrier is asked here")
+                    .help(format!("`{0}.supplied` is the heat that a carrier must bring", of.text)),
                 );
                 return None;
             }
@@ -333,9 +374,12 @@ impl Checker<'_> {
     pub(super) fn molar_mass(&mut self, name: &SpeciesName, span: Span) -> Option<Expr> {
         let Material::Species(id) = self.material(name)? else {
             self.report(
-                Diagnostic::new(Code::NotAQuantity, format!("`{}` is a mixture, and `M` takes a species", name.name))
-                    .label(name.span, "a mixture here")
-                    .help("ask for the molar mass of one of its species"),
+                Diagnostic::new(
+                    Code::NotAQuantity,
+                    format!("`{}` is a mixture, and `M` takes a species", name.name),
+                )
+                .label(name.span, "a mixture here")
+                .help("ask for the molar mass of one of its species"),
             );
             return None;
         };

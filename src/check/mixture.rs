@@ -43,12 +43,16 @@ impl Checker<'_> {
     }
 
     fn unknown_material(&mut self, name: &SpeciesName) {
-        if let Some(place) = self.ahead.get(&name.name).copied().filter(|place| place.start > name.span.start) {
+        if let Some(place) = self.ahead.get(&name.name).copied().filter(|place| place.start > name.span.start)
+        {
             self.report(
-                Diagnostic::new(Code::UsedBeforeDeclared, format!("`{}` is used before it is declared", name.name))
-                    .label(name.span, "used here")
-                    .label(place, "declared only here")
-                    .help("a sheet is read from the top: move the declaration above this line"),
+                Diagnostic::new(
+                    Code::UsedBeforeDeclared,
+                    format!("`{}` is used before it is declared", name.name),
+                )
+                .label(name.span, "used here")
+                .label(place, "declared only here")
+                .help("a sheet is read from the top: move the declaration above this line"),
             );
             return;
         }
@@ -56,7 +60,9 @@ impl Checker<'_> {
             .label(name.span, "no species or mixture of this name");
         let help = match nearest(&name.name, self.materials.keys().map(String::as_str)) {
             Some(near) => format!("did you mean `{near}`?"),
-            None => format!("declare it with a block `species {} {{ ... }}`, or take it with `use`", name.name),
+            None => {
+                format!("declare it with a block `species {} {{ ... }}`, or take it with `use`", name.name)
+            }
         };
         self.report(found.help(help));
     }
@@ -76,18 +82,24 @@ impl Checker<'_> {
             "g" => Some(PhaseClass::Gas),
             _ => None,
         };
-        if let Some(at) = phases.iter().position(|phase| phase.name == symbol.text || phase.symbol == symbol.text) {
+        if let Some(at) =
+            phases.iter().position(|phase| phase.name == symbol.text || phase.symbol == symbol.text)
+        {
             return Some(Pin::Phase(at));
         }
         match class.map(|class| (class, of_class(class))) {
             Some((_, which)) if which.len() == 1 => Some(Pin::Phase(which[0])),
             Some((class, which)) if which.len() > 1 => Some(Pin::Class(class)),
             _ => {
-                let known: Vec<String> = phases.iter().map(|phase| format!("`{}({})`", name.name, phase.symbol)).collect();
+                let known: Vec<String> =
+                    phases.iter().map(|phase| format!("`{}({})`", name.name, phase.symbol)).collect();
                 self.report(
-                    Diagnostic::new(Code::UnknownPhase, format!("`{}` has no phase `{}`", name.name, symbol.text))
-                        .label(symbol.span, "not a phase of its block")
-                        .help(format!("it has {}", known.join(", "))),
+                    Diagnostic::new(
+                        Code::UnknownPhase,
+                        format!("`{}` has no phase `{}`", name.name, symbol.text),
+                    )
+                    .label(symbol.span, "not a phase of its block")
+                    .help(format!("it has {}", known.join(", "))),
                 );
                 None
             }
@@ -148,8 +160,11 @@ impl Checker<'_> {
     }
 
     fn note_mixture(&mut self, mixture: &Mixture, blend: &Blend, span: Span) {
-        let molar: Option<Vec<f64>> =
-            blend.portions.iter().map(|(part, share)| Some(share / self.molar_mass_of(part.species)?)).collect();
+        let molar: Option<Vec<f64>> = blend
+            .portions
+            .iter()
+            .map(|(part, share)| Some(share / self.molar_mass_of(part.species)?))
+            .collect();
         let total: f64 = molar.iter().flatten().sum();
         let portions = blend
             .portions
@@ -161,7 +176,10 @@ impl Checker<'_> {
             })
             .collect();
         let written = self.written(span);
-        let text = written.split_once(&mixture.name.text).map_or(written.as_str(), |(_, rest)| rest.trim()).to_owned();
+        let text = written
+            .split_once(&mixture.name.text)
+            .map_or(written.as_str(), |(_, rest)| rest.trim())
+            .to_owned();
         let source = mixture.suffixes.source().map(str::to_owned);
         self.program.mixtures.push(MixtureNote { name: mixture.name.text.clone(), text, portions, source });
         self.program.order.push(Entry::Mixture(self.program.mixtures.len() - 1));
@@ -269,11 +287,21 @@ impl Checker<'_> {
         let percent = format!("{:.6}", sum * 100.0);
         let percent = percent.trim_end_matches('0').trim_end_matches('.');
         let (message, help) = if rest {
-            (format!("the shares of `{}` are {percent} % and leave no rest", mixture.name.text), "check the shares, or leave out the part that is the rest")
+            (
+                format!("the shares of `{}` are {percent} % and leave no rest", mixture.name.text),
+                "check the shares, or leave out the part that is the rest",
+            )
         } else {
-            (format!("the shares of `{}` add up to {percent} %", mixture.name.text), "correct a share, or let one part be the `rest`")
+            (
+                format!("the shares of `{}` add up to {percent} %", mixture.name.text),
+                "correct a share, or let one part be the `rest`",
+            )
         };
-        self.report(Diagnostic::new(Code::SharesSum, message).label(mixture.name.span, "100 % is wanted, within 1e-6 %").help(help));
+        self.report(
+            Diagnostic::new(Code::SharesSum, message)
+                .label(mixture.name.span, "100 % is wanted, within 1e-6 %")
+                .help(help),
+        );
     }
 
     fn share(&mut self, datum: &tree::Datum, interval: Option<&tree::Interval>) -> Option<f64> {
@@ -323,9 +351,12 @@ impl Checker<'_> {
             if counted == Counted::Volume && self.class_of_constituent(part) != Some(PhaseClass::Gas) {
                 let text = self.constituent_name(part);
                 self.report(
-                    Diagnostic::new(Code::ShareWrong, format!("a share by volume of `{text}`, which is not said to be a gas"))
-                        .label(name.span, "shares by volume are for gases")
-                        .help(format!("write `{}(g)`, or give the shares by mass", name.name)),
+                    Diagnostic::new(
+                        Code::ShareWrong,
+                        format!("a share by volume of `{text}`, which is not said to be a gas"),
+                    )
+                    .label(name.span, "shares by volume are for gases")
+                    .help(format!("write `{}(g)`, or give the shares by mass", name.name)),
                 );
                 return None;
             }
@@ -334,11 +365,16 @@ impl Checker<'_> {
     }
 
     /// Shares as counted to shares by mass, equal constituents added up.
-    fn to_mass(&self, parts: Vec<(Vec<(Constituent, f64)>, f64)>, counted: Counted) -> Vec<(Constituent, f64)> {
+    fn to_mass(
+        &self,
+        parts: Vec<(Vec<(Constituent, f64)>, f64)>,
+        counted: Counted,
+    ) -> Vec<(Constituent, f64)> {
         let mut by_mass: Vec<(Constituent, f64)> = Vec::new();
         for (inner, share) in parts {
             // the molar mass of the portion: 1 / Σ w/M
-            let per_mole: f64 = inner.iter().map(|(part, mass)| mass / self.molar_mass_of(part.species).unwrap_or(1.0)).sum();
+            let per_mole: f64 =
+                inner.iter().map(|(part, mass)| mass / self.molar_mass_of(part.species).unwrap_or(1.0)).sum();
             let factor = if counted == Counted::Mass { 1.0 } else { 1.0 / per_mole };
             for (part, mass) in inner {
                 let mass = share * factor * mass;
@@ -368,9 +404,12 @@ impl Checker<'_> {
 
     pub(super) fn report_no_moles(&mut self, name: &str, span: Span, what: &str) {
         self.report(
-            Diagnostic::new(Code::MolesWithoutFormula, format!("{what} is asked, but `{name}` has no formula"))
-                .label(span, "moles of a material without a formula")
-                .help("count it by mass, or give the species its `formula` or `molar_mass`"),
+            Diagnostic::new(
+                Code::MolesWithoutFormula,
+                format!("{what} is asked, but `{name}` has no formula"),
+            )
+            .label(span, "moles of a material without a formula")
+            .help("count it by mass, or give the species its `formula` or `molar_mass`"),
         );
     }
 

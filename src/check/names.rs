@@ -69,9 +69,10 @@ impl Checker<'_> {
     pub(super) fn report_either(&mut self, name: &str, span: Span) {
         let quantity = self.names.get(name).map(|declared| declared.span);
         let material = self.materials.get(name).map(|declared| declared.span);
-        let mut found = Diagnostic::new(Code::EitherName, format!("`{name}` is a material and another name as well"))
-            .label(span, "either could be meant here")
-            .help(format!("rename one of the two, such as `{name}_in`"));
+        let mut found =
+            Diagnostic::new(Code::EitherName, format!("`{name}` is a material and another name as well"))
+                .label(span, "either could be meant here")
+                .help(format!("rename one of the two, such as `{name}_in`"));
         if let Some(place) = quantity {
             found = found.label(place, "declared as a name here");
         }
@@ -83,15 +84,23 @@ impl Checker<'_> {
 
     fn unknown_name(&self, name: &str, span: Span) -> Diagnostic {
         if let Some(place) = self.ahead.get(name).filter(|place| place.file == span.file) {
-            return Diagnostic::new(Code::UsedBeforeDeclared, format!("`{name}` is used before it is declared"))
-                .label(span, "used here")
-                .label(*place, if place.start < span.start { "its own declaration" } else { "declared only here" })
-                .help("a sheet is read from the top: move the declaration above this line");
+            return Diagnostic::new(
+                Code::UsedBeforeDeclared,
+                format!("`{name}` is used before it is declared"),
+            )
+            .label(span, "used here")
+            .label(
+                *place,
+                if place.start < span.start { "its own declaration" } else { "declared only here" },
+            )
+            .help("a sheet is read from the top: move the declaration above this line");
         }
         if self.materials.contains_key(name) {
             return Diagnostic::new(Code::NotAQuantity, format!("`{name}` is a material, not a value"))
                 .label(span, "a value is wanted here")
-                .help(format!("`M({name})` is its molar mass; `state s = 1 kg of {name} at 20 degC` makes a state"));
+                .help(format!(
+                    "`M({name})` is its molar mass; `state s = 1 kg of {name} at 20 degC` makes a state"
+                ));
         }
         let found = Diagnostic::new(Code::UnknownName, format!("unknown name `{name}`"))
             .label(span, "nothing of this name is declared above");
@@ -126,9 +135,12 @@ impl Checker<'_> {
             Entity::Quantity(_) | Entity::Broken => format!("declare {wanted} above and name it here"),
         };
         self.report(
-            Diagnostic::new(Code::NotAQuantity, format!("`{}` is {sort}, where {wanted} is wanted", word.text))
-                .label(word.span, format!("{sort} here"))
-                .help(help),
+            Diagnostic::new(
+                Code::NotAQuantity,
+                format!("`{}` is {sort}, where {wanted} is wanted", word.text),
+            )
+            .label(word.span, format!("{sort} here"))
+            .help(help),
         );
     }
 

@@ -101,7 +101,8 @@ impl Checker<'_> {
             return None;
         }
         if units::comparable(value.dimension, value.kind, limit.kind).is_err() {
-            let (reading, difference) = if value.kind == Kind::Point { (value, limit) } else { (limit, value) };
+            let (reading, difference) =
+                if value.kind == Kind::Point { (value, limit) } else { (limit, value) };
             let open = if value.dimension == Dimension::PRESSURE { "bar" } else { "K" };
             self.report(
                 Diagnostic::new(Code::UnlikeComparison, "a reading is compared with a difference")
@@ -125,11 +126,21 @@ impl Checker<'_> {
         let over = self.table_variable(&table.over);
         let bounds = [&table.from, &table.to, &table.by].map(|bound| self.expression(bound));
         let columns: Option<Vec<Column>> = columns.into_iter().collect();
-        let (Some(columns), Some(over), [Some(from), Some(to), Some(by)]) = (columns, over, bounds) else { return };
+        let (Some(columns), Some(over), [Some(from), Some(to), Some(by)]) = (columns, over, bounds) else {
+            return;
+        };
         if self.table_steps(over, &from, &to, &by, span).is_none() {
             return;
         }
-        self.program.tables.push(Table { title: table.title.text.clone(), columns, over, from, to, by, span });
+        self.program.tables.push(Table {
+            title: table.title.text.clone(),
+            columns,
+            over,
+            from,
+            to,
+            by,
+            span,
+        });
         self.program.order.push(Entry::Table(self.program.tables.len() - 1));
     }
 
@@ -145,7 +156,9 @@ impl Checker<'_> {
     /// A table varies a basis or an assumption.
     fn table_variable(&mut self, word: &Word) -> Option<QuantityId> {
         let sort = match self.look_up(&word.text, word.span)? {
-            Entity::Quantity(id) if self.program.quantities.get(id.0).is_some_and(|quantity| quantity.role.is_input()) => {
+            Entity::Quantity(id)
+                if self.program.quantities.get(id.0).is_some_and(|quantity| quantity.role.is_input()) =>
+            {
                 return Some(id);
             }
             Entity::Quantity(_) => "a derived value",
@@ -162,7 +175,11 @@ impl Checker<'_> {
     fn table_steps(&mut self, over: QuantityId, from: &Expr, to: &Expr, by: &Expr, span: Span) -> Option<()> {
         let varied = self.program.quantities.get(over.0)?;
         let (dimension, kind) = (varied.value.dimension, varied.value.kind);
-        for (bound, what) in [(from, "the first value of a table"), (to, "the last value of a table"), (by, "the step of a table")] {
+        for (bound, what) in [
+            (from, "the first value of a table"),
+            (to, "the last value of a table"),
+            (by, "the step of a table"),
+        ] {
             if bound.dimension != dimension {
                 self.wrong_dimension(bound.span, bound.dimension, &[dimension], what);
                 return None;
@@ -180,13 +197,24 @@ impl Checker<'_> {
         let (message, help) = if step == 0.0 {
             ("a table with a step of zero".to_owned(), "give a step, such as `by 10 K`".to_owned())
         } else if rows < 1.0 {
-            ("a table whose step leads away from its end".to_owned(), "turn the step, or the ends, round".to_owned())
+            (
+                "a table whose step leads away from its end".to_owned(),
+                "turn the step, or the ends, round".to_owned(),
+            )
         } else if rows > ROW_LIMIT {
-            (format!("a table of {rows:.0} rows; at most 1000000 are worked"), "take a larger step".to_owned())
+            (
+                format!("a table of {rows:.0} rows; at most 1000000 are worked"),
+                "take a larger step".to_owned(),
+            )
         } else {
             return Some(());
         };
-        self.report(Diagnostic::new(Code::TableSteps, message).label(by.span, "the step").label(span, "in this table").help(help));
+        self.report(
+            Diagnostic::new(Code::TableSteps, message)
+                .label(by.span, "the step")
+                .label(span, "in this table")
+                .help(help),
+        );
         None
     }
 }

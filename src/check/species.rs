@@ -8,8 +8,8 @@ use crate::numeric::Formula;
 use crate::program::{Datum, DatumKind, Entry, PhaseInfo, Species, SpeciesId};
 use crate::span::Span;
 use crate::syntax::tree::{
-    self, CoefficientForm, Expression, HeatCapacityEntry, LawText, PhaseBlock, PhaseEntry, SpeciesBlock, SpeciesEntry,
-    Suffixes, TransitionEntry, TransitionPlace, Word,
+    self, CoefficientForm, Expression, HeatCapacityEntry, LawText, PhaseBlock, PhaseEntry, SpeciesBlock,
+    SpeciesEntry, Suffixes, TransitionEntry, TransitionPlace, Word,
 };
 use crate::thermo::{
     Composition, CurveData, CurveError, Density, Fault, HeatingCurve, LawRange, Link, PhaseClass, PhaseData,
@@ -122,7 +122,11 @@ impl Checker<'_> {
     }
 
     /// The one entry of a sort; a second one is refused.
-    fn single<T>(&mut self, block: &SpeciesBlock, pick: impl Fn(&SpeciesEntry) -> Option<(T, Span)>) -> Option<T> {
+    fn single<T>(
+        &mut self,
+        block: &SpeciesBlock,
+        pick: impl Fn(&SpeciesEntry) -> Option<(T, Span)>,
+    ) -> Option<T> {
         let mut picked = block.entries.iter().filter_map(pick);
         let first = picked.next();
         if let (Some((_, first)), Some((_, second))) = (&first, picked.next()) {
@@ -148,15 +152,21 @@ impl Checker<'_> {
 
     fn formula_error(&mut self, word: &Word, error: &crate::thermo::CompositionError) {
         let place = |range: &std::ops::Range<usize>| {
-            let at = |offset: usize| word.span.start + u32::try_from(offset.min(word.text.len())).unwrap_or(0);
-            if range.is_empty() { word.span } else { Span { start: at(range.start), end: at(range.end), ..word.span } }
+            let at =
+                |offset: usize| word.span.start + u32::try_from(offset.min(word.text.len())).unwrap_or(0);
+            if range.is_empty() {
+                word.span
+            } else {
+                Span { start: at(range.start), end: at(range.end), ..word.span }
+            }
         };
         let found = match error {
-            crate::thermo::CompositionError::UnknownElement { symbol, range } => {
-                Diagnostic::new(Code::UnknownElement, format!("`{symbol}` in `{}` is no element", word.text))
-                    .label(place(range), "no element of this symbol")
-                    .help("symbols are IUPAC's: a capital, then a small letter where there are two, such as `Zn`")
-            }
+            crate::thermo::CompositionError::UnknownElement { symbol, range } => Diagnostic::new(
+                Code::UnknownElement,
+                format!("`{symbol}` in `{}` is no element", word.text),
+            )
+            .label(place(range), "no element of this symbol")
+            .help("symbols are IUPAC's: a capital, then a small letter where there are two, such as `Zn`"),
             crate::thermo::CompositionError::NoAtomicWeight { element, range } => Diagnostic::new(
                 Code::UnknownElement,
                 format!("`{}` has no standard atomic weight", element.symbol()),
@@ -202,9 +212,12 @@ impl Checker<'_> {
         let kelvin = self.datum_temperature(at, "the temperature of a formation enthalpy")?;
         if (kelvin - 298.15).abs() > 1e-9 {
             self.report(
-                Diagnostic::new(Code::FormationWrong, "a formation enthalpy at another temperature than 298.15 K")
-                    .label(at.span, "298.15 K is wanted")
-                    .help("give the standard formation enthalpy, `at 298.15 K`"),
+                Diagnostic::new(
+                    Code::FormationWrong,
+                    "a formation enthalpy at another temperature than 298.15 K",
+                )
+                .label(at.span, "298.15 K is wanted")
+                .help("give the standard formation enthalpy, `at 298.15 K`"),
             );
             return None;
         }
@@ -254,7 +267,11 @@ impl Checker<'_> {
     }
 
     /// Phases and the links between them, in the order of the block.
-    fn phases(&mut self, draft: &mut Draft<'_>, formation: bool) -> Option<(Vec<Phase>, Vec<Link>, Vec<Span>)> {
+    fn phases(
+        &mut self,
+        draft: &mut Draft<'_>,
+        formation: bool,
+    ) -> Option<(Vec<Phase>, Vec<Link>, Vec<Span>)> {
         let block = draft.block;
         let name = block.name.text.clone();
         let mut phases: Vec<(Option<Phase>, Neighbour)> = Vec::new();
@@ -279,7 +296,8 @@ impl Checker<'_> {
                         complete = false;
                     }
                     if let Some((_, below)) = phases.last() {
-                        let material = transition::Material { name: &name, molar_mass: draft.molar_mass, formation };
+                        let material =
+                            transition::Material { name: &name, molar_mass: draft.molar_mass, formation };
                         let below = below.clone();
                         match self.link(pending, &below, &neighbour, &material) {
                             Some(link) => links.push(link),
@@ -327,7 +345,12 @@ impl Checker<'_> {
     }
 
     /// Reads a phase; what its neighbours need to know of it comes back even where it is at fault.
-    fn phase(&mut self, draft: &mut Draft<'_>, block: &PhaseBlock, index: usize) -> (Option<Phase>, Neighbour) {
+    fn phase(
+        &mut self,
+        draft: &mut Draft<'_>,
+        block: &PhaseBlock,
+        index: usize,
+    ) -> (Option<Phase>, Neighbour) {
         let class = self.phase_class(block);
         let own_source = block.entries.iter().find_map(|entry| match entry {
             PhaseEntry::Source(text) => Some(text.text.clone()),
@@ -359,7 +382,13 @@ impl Checker<'_> {
                         complete = false;
                     }
                     let (read, valid) = self.density(entry);
-                    let datum = self.datum(draft, DatumKind::Density { phase: index }, &entry.suffixes, entry.span, valid);
+                    let datum = self.datum(
+                        draft,
+                        DatumKind::Density { phase: index },
+                        &entry.suffixes,
+                        entry.span,
+                        valid,
+                    );
                     draft.data.push(datum);
                     complete &= read.is_some();
                     density = read;
@@ -381,9 +410,12 @@ impl Checker<'_> {
         draft.source = outer;
         if spans.is_empty() && !block.damaged {
             self.report(
-                Diagnostic::new(Code::DatumMissing, format!("the phase `{}` of `{name}` has no heat capacity", block.name.text))
-                    .label(block.head, "no `cp`")
-                    .help("add `cp = ... J/(mol K) for ... K to ... K`"),
+                Diagnostic::new(
+                    Code::DatumMissing,
+                    format!("the phase `{}` of `{name}` has no heat capacity", block.name.text),
+                )
+                .label(block.head, "no `cp`")
+                .help("add `cp = ... J/(mol K) for ... K to ... K`"),
             );
             complete = false;
         }

@@ -23,7 +23,8 @@ impl Checker<'_> {
     fn checked_state(&mut self, state: &tree::State, span: Span) -> Option<State> {
         let matter = self.matter(&state.matter);
         if !state.after.is_empty() {
-            let place = state.after.iter().fold(state.after[0].reaction.span, |all, part| all.to(part.reaction.span));
+            let place =
+                state.after.iter().fold(state.after[0].reaction.span, |all, part| all.to(part.reaction.span));
             for conversion in &state.after {
                 if let Some((share, species)) = &conversion.extent {
                     self.expression(share);

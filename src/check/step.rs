@@ -51,7 +51,11 @@ impl Checker<'_> {
         let to: Vec<Option<StateId>> = step.to.iter().map(|word| self.state_named(word)).collect();
         let from: Option<Vec<StateId>> = from.into_iter().collect();
         let to: Option<Vec<StateId>> = to.into_iter().collect();
-        let flow = from.as_ref().and_then(|from| from.first()).and_then(|id| self.program.states.get(id.0)).map(|state| state.flow);
+        let flow = from
+            .as_ref()
+            .and_then(|from| from.first())
+            .and_then(|id| self.program.states.get(id.0))
+            .map(|state| state.flow);
         let clauses = self.clauses(&step.clauses, flow);
         let (from, to, flow) = (from?, to?, flow?);
         for (id, word) in from.iter().chain(&to).zip(step.from.iter().chain(&step.to)) {
@@ -176,7 +180,12 @@ impl Checker<'_> {
         let losing = read.losing.as_ref().map(|(_, span)| *span);
         let working = read.working.as_ref().map(|(_, span)| *span);
         if let (Some(taking), Some(adiabatic)) = (taking, read.adiabatic) {
-            self.clash(taking.max(adiabatic), taking.min(adiabatic), "`taking` states a heat, `adiabatic` none", read);
+            self.clash(
+                taking.max(adiabatic),
+                taking.min(adiabatic),
+                "`taking` states a heat, `adiabatic` none",
+                read,
+            );
         }
         if let (Some(losing), Some(adiabatic)) = (losing, read.adiabatic) {
             self.clash(losing.max(adiabatic), losing.min(adiabatic), "an adiabatic step loses no heat", read);
@@ -189,7 +198,12 @@ impl Checker<'_> {
                 self.clash(span, place, &format!("no heat passes in a step that is `{name}`"), read);
             }
             if let Some(working) = working.filter(|_| no_work) {
-                self.clash(working, place, &format!("`working` beside `{name}`, which leaves no room for it"), read);
+                self.clash(
+                    working,
+                    place,
+                    &format!("`working` beside `{name}`, which leaves no room for it"),
+                    read,
+                );
             }
         }
         if let Some((_, span)) = read.efficiency
@@ -239,9 +253,12 @@ impl Checker<'_> {
             }
             Path::IsothermalReversible | Path::AdiabaticReversible if !self.can_be_gas(from, to) => {
                 self.report(
-                    Diagnostic::new(Code::GasPathOnly, format!("`{}` of something that is no gas", path.as_str()))
-                        .label(span, "worked for ideal gases without change of phase")
-                        .help("write `at constant pressure` or `no shaft work`; what a pump works is `working`"),
+                    Diagnostic::new(
+                        Code::GasPathOnly,
+                        format!("`{}` of something that is no gas", path.as_str()),
+                    )
+                    .label(span, "worked for ideal gases without change of phase")
+                    .help("write `at constant pressure` or `no shaft work`; what a pump works is `working`"),
                 );
                 None
             }
@@ -259,7 +276,9 @@ impl Checker<'_> {
             };
             let first = phases.first().and_then(|phase| phase.constant_density);
             first.is_some()
-                && phases.iter().all(|phase| phase.constant_density == first && phase.class != PhaseClass::Gas)
+                && phases
+                    .iter()
+                    .all(|phase| phase.constant_density == first && phase.class != PhaseClass::Gas)
         })
     }
 
@@ -279,7 +298,10 @@ impl Checker<'_> {
         from: &'b [StateId],
         to: &'b [StateId],
     ) -> impl Iterator<Item = &'b crate::program::Constituent> {
-        from.iter().chain(to).filter_map(|id| self.program.states.get(id.0)).flat_map(|state| state.constituents.iter())
+        from.iter()
+            .chain(to)
+            .filter_map(|id| self.program.states.get(id.0))
+            .flat_map(|state| state.constituents.iter())
     }
 
     /// One material's mass does not become another's, unless both count from the elements.
@@ -298,7 +320,9 @@ impl Checker<'_> {
             (!species.absolute).then(|| species.name.clone())
         });
         let Some(without) = without else { return Some(()) };
-        let name = |id: &crate::program::SpeciesId| self.program.species.get(id.0).map_or("", |species| &species.name);
+        let name = |id: &crate::program::SpeciesId| {
+            self.program.species.get(id.0).map_or("", |species| &species.name)
+        };
         let (a, b) = (name(&gone[0]).to_owned(), name(&come[0]).to_owned());
         let place = step.to.first().map_or(step.name.span, |word| word.span);
         self.report(

@@ -48,7 +48,9 @@ impl Checker<'_> {
                     self.along_without_range(along, entry.span);
                 }
                 match &entry.takes {
-                    Some(takes) => Some(Link::At { temperature, latent: quantity(self.latent(takes, material)?) }),
+                    Some(takes) => {
+                        Some(Link::At { temperature, latent: quantity(self.latent(takes, material)?) })
+                    }
                     None if above.own_formation && (below.own_formation || material.formation) => {
                         Some(Link::AtFromFormations { temperature })
                     }
@@ -81,11 +83,20 @@ impl Checker<'_> {
             )
             .label(above.head, "how is this phase reached?")
             .label(below.head, "the phase before it")
-            .help(format!("add `{word} at ... K takes ... kJ/mol` between them, or give `{}` its own `formation`", above.name)),
+            .help(format!(
+                "add `{word} at ... K takes ... kJ/mol` between them, or give `{}` its own `formation`",
+                above.name
+            )),
         );
     }
 
-    fn names_fit(&mut self, kind: &TransitionKind, span: Span, below: &Neighbour, above: &Neighbour) -> Option<()> {
+    fn names_fit(
+        &mut self,
+        kind: &TransitionKind,
+        span: Span,
+        below: &Neighbour,
+        above: &Neighbour,
+    ) -> Option<()> {
         let fits = match kind {
             TransitionKind::Named(word) => match word.text.as_str() {
                 "melting" => is(below, PhaseClass::Solid) && is(above, PhaseClass::Liquid),
@@ -99,9 +110,15 @@ impl Checker<'_> {
         }
         let (a, b) = (&below.name, &above.name);
         self.report(
-            Diagnostic::new(Code::TransitionNames, format!("this transition does not lead from `{a}` to `{b}`"))
-                .label(span, format!("it stands between `{a}` and `{b}`"))
-                .help(format!("write `{} at ... takes ...`, or put the phases in the order of heating", change_word(below, above))),
+            Diagnostic::new(
+                Code::TransitionNames,
+                format!("this transition does not lead from `{a}` to `{b}`"),
+            )
+            .label(span, format!("it stands between `{a}` and `{b}`"))
+            .help(format!(
+                "write `{} at ... takes ...`, or put the phases in the order of heating",
+                change_word(below, above)
+            )),
         );
         None
     }

@@ -32,17 +32,19 @@ impl Checker<'_> {
 
     /// Thermochemical and International Table units differ by 0.07 %, which nobody sees.
     pub(super) fn warn_of_mixed_calories(&mut self) {
-        let first = |wanted: Calorie| self.calories.iter().find(|(flavour, _)| *flavour == wanted).map(|(_, at)| *at);
+        let first =
+            |wanted: Calorie| self.calories.iter().find(|(flavour, _)| *flavour == wanted).map(|(_, at)| *at);
         let (thermochemical, table, both) =
             (first(Calorie::Thermochemical), first(Calorie::InternationalTable), first(Calorie::Both));
         let found = match (thermochemical, table, both) {
             (_, _, Some(place)) => Diagnostic::new(Code::CaloriesMixed, "two calories in one unit")
                 .label(place, "a thermochemical and an International Table unit"),
-            (Some(one), Some(other), None) => {
-                Diagnostic::new(Code::CaloriesMixed, "thermochemical and International Table units in one sheet")
-                    .label(one.max(other), "the second sort here")
-                    .label(one.min(other), "the first sort here")
-            }
+            (Some(one), Some(other), None) => Diagnostic::new(
+                Code::CaloriesMixed,
+                "thermochemical and International Table units in one sheet",
+            )
+            .label(one.max(other), "the second sort here")
+            .label(one.min(other), "the first sort here"),
             _ => return,
         };
         self.report(found.help("cal and kcal are thermochemical (4.184 J), Btu is International Table (1055.056 J): check the sources"));
@@ -54,13 +56,17 @@ pub(super) fn unit_error(error: &UnitError, text: &UnitText) -> Diagnostic {
     let range = error.range();
     let start = text.span.start + u32::try_from(range.start).unwrap_or(0);
     let end = (text.span.start + u32::try_from(range.end).unwrap_or(0)).max(start + 1);
-    let place = if range.is_empty() { text.span } else { Span { start, end: end.min(text.span.end), ..text.span } };
+    let place =
+        if range.is_empty() { text.span } else { Span { start, end: end.min(text.span.end), ..text.span } };
     let whole = text.text.trim_start_matches('/');
     match error {
         UnitError::Unknown { word, nearest, .. } => {
-            let found = Diagnostic::new(Code::UnknownUnit, format!("unknown unit `{word}`")).label(place, "no unit of this name");
+            let found = Diagnostic::new(Code::UnknownUnit, format!("unknown unit `{word}`"))
+                .label(place, "no unit of this name");
             match nearest {
-                Some(near) => found.help(format!("did you mean `{}`?", whole.replacen(word.as_str(), near, 1))),
+                Some(near) => {
+                    found.help(format!("did you mean `{}`?", whole.replacen(word.as_str(), near, 1)))
+                }
                 None => found.help("`heatpath units` lists the units"),
             }
         }
@@ -79,18 +85,25 @@ pub(super) fn unit_error(error: &UnitError, text: &UnitText) -> Diagnostic {
                 .label(place, "normal cubic metres were probably meant")
                 .help(format!("write `{}`", whole.replacen(word.as_str(), "Nm3", 1)))
         }
-        UnitError::Power { word, .. } => Diagnostic::new(Code::UnitPower, format!("the power in `{word}` is out of range"))
-            .label(place, "powers from -99 to 99 are read")
-            .help("check the exponent"),
+        UnitError::Power { word, .. } => {
+            Diagnostic::new(Code::UnitPower, format!("the power in `{word}` is out of range"))
+                .label(place, "powers from -99 to 99 are read")
+                .help("check the exponent")
+        }
         UnitError::ReadingInCompound { word, .. } => {
             let plain = word.strip_suffix('g').unwrap_or(word);
-            Diagnostic::new(Code::ReadingInCompound, format!("the gauge unit `{word}` inside a compound unit"))
-                .label(place, "a reading above the atmosphere has no place in a product")
-                .help(format!("write `{}`", whole.replacen(word.as_str(), plain, 1)))
+            Diagnostic::new(
+                Code::ReadingInCompound,
+                format!("the gauge unit `{word}` inside a compound unit"),
+            )
+            .label(place, "a reading above the atmosphere has no place in a product")
+            .help(format!("write `{}`", whole.replacen(word.as_str(), plain, 1)))
         }
-        UnitError::Malformed { why, .. } => Diagnostic::new(Code::UnknownUnit, format!("the unit `{whole}` cannot be read: {why}"))
-            .label(place, "reading stopped here")
-            .help("write a unit such as `kJ/(kg K)`"),
+        UnitError::Malformed { why, .. } => {
+            Diagnostic::new(Code::UnknownUnit, format!("the unit `{whole}` cannot be read: {why}"))
+                .label(place, "reading stopped here")
+                .help("write a unit such as `kJ/(kg K)`")
+        }
     }
 }
 

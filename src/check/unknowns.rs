@@ -54,7 +54,8 @@ impl Checker<'_> {
             Path::ConstantVolume if flow => heat_stated.then(|| settler.energy(Law::InternalEnergy)),
             Path::ConstantVolume => {
                 let energy = heat_stated.then(|| settler.energy(Law::InternalEnergy));
-                let first = if settler.knows(Unknown::Pressure) { Unknown::Temperature } else { Unknown::Pressure };
+                let first =
+                    if settler.knows(Unknown::Pressure) { Unknown::Temperature } else { Unknown::Pressure };
                 settler.one(&[first], Law::SameVolume);
                 energy
             }
@@ -78,16 +79,29 @@ impl Checker<'_> {
     fn too_much_stated(&mut self, id: StepId, path: Path, span: Span) {
         let Some(step) = self.program.steps.get(id.0) else { return };
         let name = step.name.clone();
-        let end = step.to.first().and_then(|id| self.program.states.get(id.0)).map_or(String::new(), |state| state.name.clone());
+        let end = step
+            .to
+            .first()
+            .and_then(|id| self.program.states.get(id.0))
+            .map_or(String::new(), |state| state.name.clone());
         let place = match &step.heat {
             Heat::Taking(value) => value.span,
             _ => span,
         };
-        let what = if path == Path::AdiabaticReversible || path == Path::Throttled { path.as_str() } else { "the heat" };
+        let what = if path == Path::AdiabaticReversible || path == Path::Throttled {
+            path.as_str()
+        } else {
+            "the heat"
+        };
         self.report(
-            Diagnostic::new(Code::TwoConstraints, format!("`{name}`: {what} is stated, and both ends are known already"))
-                .label(place, "one statement too many")
-                .help(format!("leave the end open, `state {end} = ... at ?`, or leave this out and ask for `{name}.Q`")),
+            Diagnostic::new(
+                Code::TwoConstraints,
+                format!("`{name}`: {what} is stated, and both ends are known already"),
+            )
+            .label(place, "one statement too many")
+            .help(format!(
+                "leave the end open, `state {end} = ... at ?`, or leave this out and ask for `{name}.Q`"
+            )),
         );
     }
 
@@ -102,8 +116,12 @@ impl Checker<'_> {
                 Unknown::Pressure => (state.name.clone(), "pressure", "P"),
             };
             let help = match unknown {
-                Unknown::Temperature => format!("add a step that ends in `{name}` with a path and a heat: `, at constant pressure, taking ...` or `, adiabatic`"),
-                Unknown::Pressure => format!("add a step to `{name}` with a path that fixes it, such as `, at constant volume`, or write the pressure"),
+                Unknown::Temperature => format!(
+                    "add a step that ends in `{name}` with a path and a heat: `, at constant pressure, taking ...` or `, adiabatic`"
+                ),
+                Unknown::Pressure => format!(
+                    "add a step to `{name}` with a path that fixes it, such as `, at constant volume`, or write the pressure"
+                ),
             };
             self.report(
                 Diagnostic::new(Code::NothingSettles, format!("nothing settles the {what} of `{name}`"))
@@ -121,7 +139,10 @@ impl Checker<'_> {
             self.report(
                 Diagnostic::new(Code::NothingSettles, format!("nothing settles `{}`", word.text))
                     .label(word.span, "unknown here")
-                    .help(format!("write its value; a `settle {} ...` line is not worked by this version", word.text)),
+                    .help(format!(
+                        "write its value; a `settle {} ...` line is not worked by this version",
+                        word.text
+                    )),
             );
         }
     }
@@ -168,7 +189,10 @@ impl Settler<'_, '_, '_> {
             for (state, at_end) in self.open_here(*unknown) {
                 match self.settled_by_other(state, *unknown) {
                     Some(other) => taken = taken.or(Some((state, *unknown, other))),
-                    None if self.found.iter().any(|found| found.state == state && found.unknown == *unknown) => {}
+                    None if self
+                        .found
+                        .iter()
+                        .any(|found| found.state == state && found.unknown == *unknown) => {}
                     None => {
                         self.settle(state, *unknown, law, at_end);
                         return true;
@@ -216,7 +240,10 @@ impl Settler<'_, '_, '_> {
         let member = if unknown == Unknown::Temperature { "T" } else { "P" };
         let found = Diagnostic::new(
             Code::TwoConstraints,
-            format!("`{}.{member}` is settled by two steps, `{}` and `{}`", state.name, first.name, this.name),
+            format!(
+                "`{}.{member}` is settled by two steps, `{}` and `{}`",
+                state.name, first.name, this.name
+            ),
         )
         .label(this.span, "this step states a heat as well")
         .label(first.span, "settled by this step")

@@ -9,7 +9,12 @@ use crate::units::{Dimension, Kind};
 
 impl Checker<'_> {
     /// An expression of one of these dimensions; `what` says what the place wants, such as "a time".
-    pub(super) fn wanted(&mut self, expression: &Expression, dimensions: &[Dimension], what: &str) -> Option<Expr> {
+    pub(super) fn wanted(
+        &mut self,
+        expression: &Expression,
+        dimensions: &[Dimension],
+        what: &str,
+    ) -> Option<Expr> {
         let value = self.expression(expression)?;
         if dimensions.contains(&value.dimension) {
             return Some(value);
@@ -30,9 +35,12 @@ impl Checker<'_> {
             format!("add it to a pressure: `1 bar + {text}`")
         };
         self.report(
-            Diagnostic::new(Code::DifferenceForPoint, format!("`{text}` is a difference, where {what} is wanted"))
-                .label(value.span, "a difference here")
-                .help(way_out),
+            Diagnostic::new(
+                Code::DifferenceForPoint,
+                format!("`{text}` is a difference, where {what} is wanted"),
+            )
+            .label(value.span, "a difference here")
+            .help(way_out),
         );
         None
     }
@@ -46,12 +54,27 @@ impl Checker<'_> {
         let number = text.split_whitespace().next().unwrap_or_default();
         let found = if value.dimension == Dimension::TEMPERATURE {
             let unit = if text.contains("degF") { "degR" } else { "K" };
-            Diagnostic::new(Code::PointForDifference, format!("`{text}` is a temperature, where {what} is wanted"))
-                .help(if value.is_literal() { format!("write `{number} {unit}`") } else { "take a difference of two readings".to_owned() })
+            Diagnostic::new(
+                Code::PointForDifference,
+                format!("`{text}` is a temperature, where {what} is wanted"),
+            )
+            .help(if value.is_literal() {
+                format!("write `{number} {unit}`")
+            } else {
+                "take a difference of two readings".to_owned()
+            })
         } else {
-            let plain = text.split_whitespace().nth(1).map_or("bar", |unit| unit.strip_suffix('g').unwrap_or(unit));
-            Diagnostic::new(Code::GaugeForDifference, format!("`{text}` is a gauge reading, where {what} is wanted"))
-                .help(if value.is_literal() { format!("write `{number} {plain}`") } else { "take a difference of two readings".to_owned() })
+            let plain =
+                text.split_whitespace().nth(1).map_or("bar", |unit| unit.strip_suffix('g').unwrap_or(unit));
+            Diagnostic::new(
+                Code::GaugeForDifference,
+                format!("`{text}` is a gauge reading, where {what} is wanted"),
+            )
+            .help(if value.is_literal() {
+                format!("write `{number} {plain}`")
+            } else {
+                "take a difference of two readings".to_owned()
+            })
         };
         self.report(found.label(value.span, "a reading here"));
         None
@@ -64,17 +87,23 @@ impl Checker<'_> {
             && mass_against_amount(found, *only)
         {
             self.report(
-                Diagnostic::new(Code::MassAgainstAmount, format!("`{text}` is {}, where {what} is wanted", with_dimension(found)))
-                    .label(span, format!("{} here", with_dimension(found)))
-                    .help("the molar mass `M(X)` of the species turns one into the other"),
+                Diagnostic::new(
+                    Code::MassAgainstAmount,
+                    format!("`{text}` is {}, where {what} is wanted", with_dimension(found)),
+                )
+                .label(span, format!("{} here", with_dimension(found)))
+                .help("the molar mass `M(X)` of the species turns one into the other"),
             );
             return;
         }
         let choices: Vec<String> = wanted.iter().map(|dimension| with_dimension(*dimension)).collect();
         self.report(
-            Diagnostic::new(Code::WrongDimension, format!("`{text}` is {}, where {what} is wanted", with_dimension(found)))
-                .label(span, format!("{} here", with_dimension(found)))
-                .help(format!("{what} is {}", or_list(&choices))),
+            Diagnostic::new(
+                Code::WrongDimension,
+                format!("`{text}` is {}, where {what} is wanted", with_dimension(found)),
+            )
+            .label(span, format!("{} here", with_dimension(found)))
+            .help(format!("{what} is {}", or_list(&choices))),
         );
     }
 }

@@ -84,7 +84,13 @@ pub(super) fn power_fault(a: f64, b: f64) -> Fault {
     }
 }
 
-pub(super) fn power_integer<const N: usize>(frame: &mut Frame<N>, at: usize, a: Slot, exponent: i32, to: Slot) {
+pub(super) fn power_integer<const N: usize>(
+    frame: &mut Frame<N>,
+    at: usize,
+    a: Slot,
+    exponent: i32,
+    to: Slot,
+) {
     let fault = |x: f64| {
         if x == 0.0 && exponent < 0 { Fault::DivisionByZero { numerator: 1.0 } } else { Fault::Overflow }
     };
@@ -111,7 +117,13 @@ pub(super) fn log_mean(a: f64, b: f64) -> f64 {
     }
 }
 
-pub(super) fn guard<const N: usize>(frame: &mut Frame<N>, at: usize, check: Check, read: [Slot; 3], to: Slot) {
+pub(super) fn guard<const N: usize>(
+    frame: &mut Frame<N>,
+    at: usize,
+    check: Check,
+    read: [Slot; 3],
+    to: Slot,
+) {
     let [a, b, value] = read.map(|slot| frame.slots[slot.0 as usize]);
     for lane in 0..N {
         let (x, y) = (a[lane], b[lane]);

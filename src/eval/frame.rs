@@ -1,27 +1,44 @@
 //! The values of a run.
 
-use crate::plan::{Check, Plan, PlaceSlot, Slot};
+use crate::plan::{Check, PlaceSlot, Plan, Slot};
 use crate::thermo::{LocateError, Place, SettleError};
 
 /// What went wrong in an operation, with the values.
 #[derive(Debug, Clone, Copy, PartialEq)]
 #[allow(missing_docs)]
 pub enum Fault {
-    DivisionByZero { numerator: f64 },
+    DivisionByZero {
+        numerator: f64,
+    },
     /// A result beyond the range of a double.
     Overflow,
     /// A logarithm of this, which is not above zero.
-    Logarithm { of: f64 },
+    Logarithm {
+        of: f64,
+    },
     /// A root of this, which is negative; or a power that no real number answers.
-    Root { of: f64 },
+    Root {
+        of: f64,
+    },
     /// A temperature without a place.
-    Locate { error: LocateError, kelvin: f64, pascal: f64 },
+    Locate {
+        error: LocateError,
+        kelvin: f64,
+        pascal: f64,
+    },
     /// No temperature answers.
     Settle(SettleError),
     /// No pressure answers: the volume left for this amount of gas, m³.
-    SettlePressure { volume: f64, amount: f64 },
+    SettlePressure {
+        volume: f64,
+        amount: f64,
+    },
     /// A guard that does not hold.
-    Check { check: Check, a: f64, b: f64 },
+    Check {
+        check: Check,
+        a: f64,
+        b: f64,
+    },
     /// A volume where a condensed phase has no density.
     NoVolume,
     /// A heat capacity on a plateau.

@@ -29,7 +29,13 @@ pub(super) fn locate<const N: usize>(
             None
         } else {
             let (kelvin, pascal) = (t[lane], p[lane]);
-            match material.curve.locate(quantity(kelvin), quantity(pascal), material.pin, side, &material.allowance) {
+            match material.curve.locate(
+                quantity(kelvin),
+                quantity(pascal),
+                material.pin,
+                side,
+                &material.allowance,
+            ) {
                 Ok(place) => Some(place),
                 Err(error) => {
                     frame.fail(at, lane, Fault::Locate { error, kelvin, pascal });
@@ -57,7 +63,13 @@ pub(super) fn place<const N: usize>(
         let place = if kelvin.is_nan() || pascal.is_nan() {
             None
         } else {
-            match material.curve.place(quantity(kelvin), quantity(pascal), material.pin, upper, &material.allowance) {
+            match material.curve.place(
+                quantity(kelvin),
+                quantity(pascal),
+                material.pin,
+                upper,
+                &material.allowance,
+            ) {
                 Ok(place) => Some(place),
                 Err(error) => {
                     frame.fail(at, lane, Fault::Locate { error, kelvin, pascal });
@@ -117,7 +129,13 @@ pub(super) fn internal_energy<const N: usize>(
     });
 }
 
-pub(super) fn latent<const N: usize>(plan: &Plan, frame: &mut Frame<N>, which: u32, place: PlaceSlot, to: Slot) {
+pub(super) fn latent<const N: usize>(
+    plan: &Plan,
+    frame: &mut Frame<N>,
+    which: u32,
+    place: PlaceSlot,
+    to: Slot,
+) {
     let curve = &material(plan, which).curve;
     each(frame, place, to, None, |place, _| Some(curve.latent(place).value));
 }
@@ -163,9 +181,9 @@ pub(super) fn volume<const N: usize>(
     let p = frame.slots[p.0 as usize];
     let has_gas = |place: Place| {
         let present = curve.phases_at(place);
-        std::iter::once(present.lower).chain(present.upper).any(|(phase, share)| {
-            share > 0.0 && curve.phase_class(phase) == Some(PhaseClass::Gas)
-        })
+        std::iter::once(present.lower)
+            .chain(present.upper)
+            .any(|(phase, share)| share > 0.0 && curve.phase_class(phase) == Some(PhaseClass::Gas))
     };
     each(frame, place, to, Some((at, Fault::NoVolume)), |place, lane| {
         match curve.specific_volume(place, quantity(p[lane])) {

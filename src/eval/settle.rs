@@ -59,7 +59,9 @@ pub(super) fn temperature<const N: usize>(
         } else {
             with_parts(plan, frame, range, lane, |parts| match by {
                 Settle::Enthalpy => temperature_for_enthalpy(parts, quantity(wanted), quantity(pascal)),
-                Settle::InternalEnergy => temperature_for_internal_energy(parts, quantity(wanted), quantity(pascal)),
+                Settle::InternalEnergy => {
+                    temperature_for_internal_energy(parts, quantity(wanted), quantity(pascal))
+                }
                 Settle::Isentropic { .. } => temperature_isentropic(parts, quantity(from[lane]), wanted),
                 Settle::Volume => temperature_for_volume(parts, wanted, pascal),
             })
@@ -82,7 +84,8 @@ fn volume_and_gas(parts: &[Part<'_>], kelvin: f64, pascal: f64, share: Option<f6
     let mut condensed = 0.0;
     let mut gas = 0.0;
     for part in parts {
-        let place = part.curve.place(quantity(kelvin), quantity(pascal), part.pin, share, part.allowance).ok()?;
+        let place =
+            part.curve.place(quantity(kelvin), quantity(pascal), part.pin, share, part.allowance).ok()?;
         let present = part.curve.phases_at(place);
         let gas_share = std::iter::once(present.lower)
             .chain(present.upper)
@@ -92,7 +95,8 @@ fn volume_and_gas(parts: &[Part<'_>], kelvin: f64, pascal: f64, share: Option<f6
             gas += part.mass.value * gas_share / part.curve.molar_mass()?.value;
         }
         if gas_share < 1.0 {
-            let total = part.curve.specific_volume(place, quantity(pascal)).map_or(0.0, |volume| volume.value);
+            let total =
+                part.curve.specific_volume(place, quantity(pascal)).map_or(0.0, |volume| volume.value);
             let of_gas = if gas_share > 0.0 {
                 gas_share * GAS_CONSTANT * kelvin / (part.curve.molar_mass()?.value * pascal)
             } else {
@@ -111,14 +115,17 @@ fn data_span(part: &Part<'_>) -> Option<(f64, f64)> {
         Pin::Class(class) => part.curve.phase_class(phase) == Some(class),
         Pin::Stable => true,
     };
-    let spans = (0..part.curve.phase_count()).filter(|phase| wanted(*phase)).filter_map(|phase| part.curve.phase_span(phase));
+    let spans = (0..part.curve.phase_count())
+        .filter(|phase| wanted(*phase))
+        .filter_map(|phase| part.curve.phase_span(phase));
     spans.map(|(lo, hi)| (lo.value, hi.value)).reduce(|(lo, hi), (from, to)| (lo.min(from), hi.max(to)))
 }
 
 /// The temperature at which the parts fill a volume at a pressure.
 fn temperature_for_volume(parts: &[Part<'_>], volume: f64, pascal: f64) -> Result<Settled, SettleError> {
     let ends = parts.iter().filter_map(data_span);
-    let (lo, hi) = ends.fold((0.0, f64::INFINITY), |(lo, hi): (f64, f64), (from, to)| (lo.max(from), hi.min(to)));
+    let (lo, hi) =
+        ends.fold((0.0, f64::INFINITY), |(lo, hi): (f64, f64), (from, to)| (lo.max(from), hi.min(to)));
     let miss = |kelvin: f64| {
         volume_and_gas(parts, kelvin, pascal, None)
             .map_or(f64::NAN, |(condensed, gas)| condensed + gas * GAS_CONSTANT * kelvin / pascal - volume)
@@ -147,7 +154,8 @@ pub(super) fn pressure<const N: usize>(
         let found = if silent {
             None
         } else {
-            with_parts(plan, frame, range, lane, |parts| volume_and_gas(parts, t[lane], p[lane], upper)).flatten()
+            with_parts(plan, frame, range, lane, |parts| volume_and_gas(parts, t[lane], p[lane], upper))
+                .flatten()
         };
         let pascal = found.map(|(condensed, gas)| (gas, target[lane] - condensed));
         frame.slots[to.0 as usize][lane] = match pascal {

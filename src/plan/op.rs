@@ -87,49 +87,178 @@ pub enum Settle {
 #[derive(Debug, Clone, Copy, PartialEq)]
 #[allow(missing_docs)]
 pub enum Op {
-    Add { a: Slot, b: Slot, to: Slot },
-    Subtract { a: Slot, b: Slot, to: Slot },
-    Multiply { a: Slot, b: Slot, to: Slot },
-    Divide { a: Slot, b: Slot, to: Slot },
-    Negate { a: Slot, to: Slot },
-    PowerInteger { a: Slot, exponent: i32, to: Slot },
-    Power { a: Slot, b: Slot, to: Slot },
-    Minimum { a: Slot, b: Slot, to: Slot },
-    Maximum { a: Slot, b: Slot, to: Slot },
-    Absolute { a: Slot, to: Slot },
-    SquareRoot { a: Slot, to: Slot },
-    Exponential { a: Slot, to: Slot },
-    Logarithm { a: Slot, to: Slot },
-    Logarithm10 { a: Slot, to: Slot },
-    LogMean { a: Slot, b: Slot, to: Slot },
+    Add {
+        a: Slot,
+        b: Slot,
+        to: Slot,
+    },
+    Subtract {
+        a: Slot,
+        b: Slot,
+        to: Slot,
+    },
+    Multiply {
+        a: Slot,
+        b: Slot,
+        to: Slot,
+    },
+    Divide {
+        a: Slot,
+        b: Slot,
+        to: Slot,
+    },
+    Negate {
+        a: Slot,
+        to: Slot,
+    },
+    PowerInteger {
+        a: Slot,
+        exponent: i32,
+        to: Slot,
+    },
+    Power {
+        a: Slot,
+        b: Slot,
+        to: Slot,
+    },
+    Minimum {
+        a: Slot,
+        b: Slot,
+        to: Slot,
+    },
+    Maximum {
+        a: Slot,
+        b: Slot,
+        to: Slot,
+    },
+    Absolute {
+        a: Slot,
+        to: Slot,
+    },
+    SquareRoot {
+        a: Slot,
+        to: Slot,
+    },
+    Exponential {
+        a: Slot,
+        to: Slot,
+    },
+    Logarithm {
+        a: Slot,
+        to: Slot,
+    },
+    Logarithm10 {
+        a: Slot,
+        to: Slot,
+    },
+    LogMean {
+        a: Slot,
+        b: Slot,
+        to: Slot,
+    },
     /// `value` goes on where the check holds.
-    Guard { check: Check, a: Slot, b: Slot, value: Slot, to: Slot },
+    Guard {
+        check: Check,
+        a: Slot,
+        b: Slot,
+        value: Slot,
+        to: Slot,
+    },
     /// The place at a written temperature; `side` is the phase whose share is said.
-    Locate { material: u32, t: Slot, p: Slot, side: Option<(u32, Slot)>, to: PlaceSlot },
+    Locate {
+        material: u32,
+        t: Slot,
+        p: Slot,
+        side: Option<(u32, Slot)>,
+        to: PlaceSlot,
+    },
     /// The place at a temperature that was worked out, with the share of the upper phase (NaN for none).
-    Place { material: u32, t: Slot, p: Slot, share: Slot, to: PlaceSlot },
+    Place {
+        material: u32,
+        t: Slot,
+        p: Slot,
+        share: Slot,
+        to: PlaceSlot,
+    },
     /// Enthalpy per mass, with the pressure's part.
-    Enthalpy { material: u32, place: PlaceSlot, p: Slot, to: Slot },
+    Enthalpy {
+        material: u32,
+        place: PlaceSlot,
+        p: Slot,
+        to: Slot,
+    },
     /// Internal energy per mass.
-    InternalEnergy { material: u32, place: PlaceSlot, to: Slot },
+    InternalEnergy {
+        material: u32,
+        place: PlaceSlot,
+        to: Slot,
+    },
     /// Latent heat passed, per mass.
-    Latent { material: u32, place: PlaceSlot, to: Slot },
+    Latent {
+        material: u32,
+        place: PlaceSlot,
+        to: Slot,
+    },
     /// What the pressure adds to the enthalpy, per mass.
-    PressurePart { material: u32, place: PlaceSlot, p: Slot, to: Slot },
+    PressurePart {
+        material: u32,
+        place: PlaceSlot,
+        p: Slot,
+        to: Slot,
+    },
     /// Heat capacity per mass.
-    HeatCapacity { material: u32, place: PlaceSlot, to: Slot },
+    HeatCapacity {
+        material: u32,
+        place: PlaceSlot,
+        to: Slot,
+    },
     /// Volume per mass; where `neglect`, zero for a condensed phase without density.
-    Volume { material: u32, place: PlaceSlot, p: Slot, neglect: bool, to: Slot },
+    Volume {
+        material: u32,
+        place: PlaceSlot,
+        p: Slot,
+        neglect: bool,
+        to: Slot,
+    },
     /// The mass share of the phases of a class, or of one phase.
-    PhaseShare { material: u32, place: PlaceSlot, phases: PhaseSet, to: Slot },
+    PhaseShare {
+        material: u32,
+        place: PlaceSlot,
+        phases: PhaseSet,
+        to: Slot,
+    },
     /// `value` goes on where the place is a gas.
-    GasOnly { material: u32, place: PlaceSlot, value: Slot, to: Slot },
+    GasOnly {
+        material: u32,
+        place: PlaceSlot,
+        value: Slot,
+        to: Slot,
+    },
     /// A temperature, and the share of the upper phase where it lies on a plateau (else NaN).
-    SettleTemperature { by: Settle, parts: PartRange, target: Slot, p: Slot, to: Slot, share: Slot },
+    SettleTemperature {
+        by: Settle,
+        parts: PartRange,
+        target: Slot,
+        p: Slot,
+        to: Slot,
+        share: Slot,
+    },
     /// The pressure at which the parts fill the volume `target` at `t`; `p` is the pressure that tells the phases.
-    SettlePressure { parts: PartRange, target: Slot, t: Slot, share: Slot, p: Slot, to: Slot },
+    SettlePressure {
+        parts: PartRange,
+        target: Slot,
+        t: Slot,
+        share: Slot,
+        p: Slot,
+        to: Slot,
+    },
     /// ln(p₂/p₁) of a reversible adiabatic change of the parts from `from` to `t`.
-    PressureRatio { parts: PartRange, from: Slot, t: Slot, to: Slot },
+    PressureRatio {
+        parts: PartRange,
+        from: Slot,
+        t: Slot,
+        to: Slot,
+    },
 }
 
 /// Which phases a share is asked of.

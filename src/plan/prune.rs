@@ -30,7 +30,9 @@ fn reads(op: &Op, plan: &Plan, slot: &mut impl FnMut(Slot), place: &mut impl FnM
             side.into_iter().for_each(|(_, share)| slot(share));
         }
         Op::Place { t, p, share, .. } => [t, p, share].into_iter().for_each(slot),
-        Op::Enthalpy { place: at, p, .. } | Op::PressurePart { place: at, p, .. } | Op::Volume { place: at, p, .. } => {
+        Op::Enthalpy { place: at, p, .. }
+        | Op::PressurePart { place: at, p, .. }
+        | Op::Volume { place: at, p, .. } => {
             place(at.0);
             slot(p);
         }
@@ -121,7 +123,9 @@ impl Plan {
                 || place.is_some_and(|place| places[place as usize]);
             if wanted {
                 kept[at] = true;
-                reads(op, self, &mut |slot| slots[slot.0 as usize] = true, &mut |place| places[place as usize] = true);
+                reads(op, self, &mut |slot| slots[slot.0 as usize] = true, &mut |place| {
+                    places[place as usize] = true
+                });
             }
         }
         kept
@@ -153,7 +157,9 @@ impl Plan {
         for op in &self.ops {
             let mut touched = false;
             let mut touched_place = false;
-            reads(op, self, &mut |slot| touched |= slots[slot.0 as usize], &mut |place| touched_place |= places[place as usize]);
+            reads(op, self, &mut |slot| touched |= slots[slot.0 as usize], &mut |place| {
+                touched_place |= places[place as usize]
+            });
             let varying = touched || touched_place;
             if varying {
                 let (first, second, place) = writes(op);
@@ -163,8 +169,20 @@ impl Plan {
             varies.push(varying);
         }
         let part = |wanted: bool| Plan {
-            ops: self.ops.iter().zip(&varies).filter(|(_, varies)| **varies == wanted).map(|(op, _)| *op).collect(),
-            origins: self.origins.iter().zip(&varies).filter(|(_, varies)| **varies == wanted).map(|(at, _)| *at).collect(),
+            ops: self
+                .ops
+                .iter()
+                .zip(&varies)
+                .filter(|(_, varies)| **varies == wanted)
+                .map(|(op, _)| *op)
+                .collect(),
+            origins: self
+                .origins
+                .iter()
+                .zip(&varies)
+                .filter(|(_, varies)| **varies == wanted)
+                .map(|(at, _)| *at)
+                .collect(),
             ..self.clone()
         };
         (part(false), part(true))

@@ -11,10 +11,15 @@ use crate::thermo::{LocateError, SettleError};
 
 /// Unknowns that wait for each other.
 pub(super) fn circle(program: &Program, step: StepId, state: StateId) -> Diagnostic {
-    let (step_name, span) = program.steps.get(step.0).map_or(("", Default::default()), |step| (step.name.as_str(), step.span));
-    let Some(state) = program.states.get(state.0) else { return Diagnostic::new(Code::UnknownLoop, "unknowns wait for each other") };
+    let (step_name, span) =
+        program.steps.get(step.0).map_or(("", Default::default()), |step| (step.name.as_str(), step.span));
+    let Some(state) = program.states.get(state.0) else {
+        return Diagnostic::new(Code::UnknownLoop, "unknowns wait for each other");
+    };
     let place = match (&state.temperature, &state.pressure) {
-        (crate::program::Condition::Unknown(span), _) | (_, crate::program::Condition::Unknown(span)) => *span,
+        (crate::program::Condition::Unknown(span), _) | (_, crate::program::Condition::Unknown(span)) => {
+            *span
+        }
         _ => state.span,
     };
     Diagnostic::new(
@@ -51,7 +56,10 @@ pub(super) fn explain_row(
     let first = sweep.refused.first()?;
     let why = explain(program, lowered, &first.failure);
     let variable = program.quantities.get(table.over.0)?;
-    let unit = variable.display.clone().unwrap_or_else(|| crate::units::engineering_unit(variable.value.dimension, first.at));
+    let unit = variable
+        .display
+        .clone()
+        .unwrap_or_else(|| crate::units::engineering_unit(variable.value.dimension, first.at));
     let at = format!("{} {}", significant(unit.from_si(first.at, program.site.atmosphere), 8), unit.text);
     let line = why.place().map_or(0, |span| sources.line_column(span.file, span.start).0);
     let rows = count(sweep.refused.len(), "row");
@@ -216,31 +224,79 @@ impl Teller<'_> {
         let (x, y) = (significant(a, 6), significant(b, 6));
         match check {
             Check::PositiveAmount => self
-                .found(Code::NegativeAmount, format!("an amount of {x} (SI), which is not above zero"), "this amount")
+                .found(
+                    Code::NegativeAmount,
+                    format!("an amount of {x} (SI), which is not above zero"),
+                    "this amount",
+                )
                 .help("matter has a positive amount: check the signs"),
             Check::PositiveTime => self
-                .found(Code::NegativeAmount, format!("a time of {x} s, which is not above zero"), "in this duty")
+                .found(
+                    Code::NegativeAmount,
+                    format!("a time of {x} s, which is not above zero"),
+                    "in this duty",
+                )
                 .help("check the time over which the heat is brought"),
             Check::Share => self
-                .found(Code::ShareOutOfBounds, format!("a share of {} %, outside 0 % to 100 %", significant(a * 100.0, 6)), "this share")
+                .found(
+                    Code::ShareOutOfBounds,
+                    format!("a share of {} %, outside 0 % to 100 %", significant(a * 100.0, 6)),
+                    "this share",
+                )
                 .help("a part of a state is more than nothing and at most all of it"),
             Check::Efficiency => self
-                .found(Code::BadEfficiency, format!("an efficiency of {} %", significant(a * 100.0, 6)), "worked here")
+                .found(
+                    Code::BadEfficiency,
+                    format!("an efficiency of {} %", significant(a * 100.0, 6)),
+                    "worked here",
+                )
                 .help("an efficiency lies above 0 % and is at most 100 %"),
             Check::PositivePressure => self
-                .found(Code::PressureNotPositive, format!("a pressure of {x} Pa abs in `{state}`"), "not above zero")
+                .found(
+                    Code::PressureNotPositive,
+                    format!("a pressure of {x} Pa abs in `{state}`"),
+                    "not above zero",
+                )
                 .help("check the sign, and whether a gauge reading was meant, such as `0.2 barg`"),
             Check::SamePressure => self
-                .found(Code::PressuresDiffer, format!("`{step}` is at constant pressure, but leads from {} kPa to {} kPa abs", significant(a / 1e3, 6), significant(b / 1e3, 6)), "this step")
+                .found(
+                    Code::PressuresDiffer,
+                    format!(
+                        "`{step}` is at constant pressure, but leads from {} kPa to {} kPa abs",
+                        significant(a / 1e3, 6),
+                        significant(b / 1e3, 6)
+                    ),
+                    "this step",
+                )
                 .help("give both ends one pressure, or choose another path"),
             Check::AgreedPressure => self
-                .found(Code::PressureUnsaid, format!("`{state}` is made from matter at {} kPa and at {} kPa abs, and says no pressure", significant(a / 1e3, 6), significant(b / 1e3, 6)), "which pressure?")
+                .found(
+                    Code::PressureUnsaid,
+                    format!(
+                        "`{state}` is made from matter at {} kPa and at {} kPa abs, and says no pressure",
+                        significant(a / 1e3, 6),
+                        significant(b / 1e3, 6)
+                    ),
+                    "which pressure?",
+                )
                 .help("add the pressure after the temperature, such as `, 1 bar`"),
             Check::SameTemperature => self
-                .found(Code::TemperaturesDiffer, format!("`{step}` is at constant temperature, but leads from {} to {}", temperature(a), temperature(b)), "this step")
+                .found(
+                    Code::TemperaturesDiffer,
+                    format!(
+                        "`{step}` is at constant temperature, but leads from {} to {}",
+                        temperature(a),
+                        temperature(b)
+                    ),
+                    "this step",
+                )
                 .help("give both ends one temperature, or choose another path"),
             Check::SameVolume => self
-                .found(Code::VolumeChanges, format!("`{step}` is at constant volume, but leads from {x} m3 to {y} m3"), "this step")
+                .found(
+                    Code::VolumeChanges,
+                    format!("`{step}` is at constant volume, but leads from {x} m3 to {y} m3"),
+                    "this step",
+                )
                 .help("leave the pressure at the end open, `at TEMPERATURE, ?`, so that the step settles it"),
             Check::Conserved => {
                 let what = match &self.origin.kind {
@@ -252,12 +308,19 @@ impl Teller<'_> {
                 self.found(
                     Code::NotConserved,
                     format!("`{step}` {word} `{what}`: {x} at its start, {y} at its end (SI)"),
-                    format!("{by} % of `{what}` {}", if a > b { "missing at the end" } else { "missing at the start" }),
+                    format!(
+                        "{by} % of `{what}` {}",
+                        if a > b { "missing at the end" } else { "missing at the start" }
+                    ),
                 )
                 .help("name all states that take part, on both sides of `->`")
             }
             Check::Heating => self
-                .found(Code::EfficiencyOnCooling, format!("an efficiency on a duty that cools, {x} W or J"), "this duty")
+                .found(
+                    Code::EfficiencyOnCooling,
+                    format!("an efficiency on a duty that cools, {x} W or J"),
+                    "this duty",
+                )
                 .help("leave the efficiency out: what a cooler takes away is the heat itself"),
         }
     }
@@ -265,29 +328,53 @@ impl Teller<'_> {
     fn arithmetic(&self, fault: Fault) -> Diagnostic {
         match fault {
             Fault::DivisionByZero { numerator } => self
-                .found(Code::DivisionByZero, format!("{} divided by 0", significant(numerator, 6)), "zero here")
+                .found(
+                    Code::DivisionByZero,
+                    format!("{} divided by 0", significant(numerator, 6)),
+                    "zero here",
+                )
                 .help("check the values that the divisor is made of"),
             Fault::Logarithm { of } => self
-                .found(Code::NotFinite, format!("the logarithm of {}, which is not above zero", significant(of, 6)), "worked here")
+                .found(
+                    Code::NotFinite,
+                    format!("the logarithm of {}, which is not above zero", significant(of, 6)),
+                    "worked here",
+                )
                 .help("check the signs of what stands inside"),
             Fault::Root { of } => self
-                .found(Code::NotFinite, format!("a root of {}, which is negative", significant(of, 6)), "worked here")
+                .found(
+                    Code::NotFinite,
+                    format!("a root of {}, which is negative", significant(of, 6)),
+                    "worked here",
+                )
                 .help("check the signs of what stands inside"),
             Fault::NoVolume => {
                 let (state, species) = self.state();
                 let name = species.map_or("matter", |species| species.name.as_str());
                 let step = self.step();
                 let at = if state.is_empty() { step } else { state };
-                self.found(Code::DensityMissing, format!("a volume in `{at}` of `{name}`, which has no density there"), "a volume is asked")
-                    .help("give the phase a line `density ... kg/m3`, or a gas its molar mass")
+                self.found(
+                    Code::DensityMissing,
+                    format!("a volume in `{at}` of `{name}`, which has no density there"),
+                    "a volume is asked",
+                )
+                .help("give the phase a line `density ... kg/m3`, or a gas its molar mass")
             }
             Fault::NoHeatCapacity => self
-                .found(Code::NotFinite, "a heat capacity on a transition, where heat changes no temperature".to_owned(), "asked here")
+                .found(
+                    Code::NotFinite,
+                    "a heat capacity on a transition, where heat changes no temperature".to_owned(),
+                    "asked here",
+                )
                 .help("ask for it beside the transition"),
             Fault::NoGas => {
                 let step = self.step();
-                self.found(Code::GasPathOnly, format!("`{step}` is a path for gases, and not all of it is gas"), "this step")
-                    .help("choose another path, or name the gas phase with its state symbol")
+                self.found(
+                    Code::GasPathOnly,
+                    format!("`{step}` is a path for gases, and not all of it is gas"),
+                    "this step",
+                )
+                .help("choose another path, or name the gas phase with its state symbol")
             }
             Fault::SettlePressure { volume, amount } => {
                 let (state, _) = self.state();

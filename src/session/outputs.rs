@@ -15,7 +15,10 @@ pub(super) fn required(program: &Program, map: &SlotMap) -> Vec<Slot> {
         let by_enthalpy = matches!(
             step.path,
             Some((
-                Path::ConstantPressure | Path::ConstantTemperatureAndPressure | Path::NoShaftWork | Path::Throttled,
+                Path::ConstantPressure
+                    | Path::ConstantTemperatureAndPressure
+                    | Path::NoShaftWork
+                    | Path::Throttled,
                 _
             ))
         );

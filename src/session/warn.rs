@@ -16,12 +16,19 @@ fn extrapolated(sheet: &WorkedSheet<'_>) -> Vec<Diagnostic> {
     let mut found = Vec::new();
     for (state, slots) in sheet.program.states.iter().zip(&sheet.map.states) {
         for (part, place) in state.constituents.iter().zip(&slots.places) {
-            let Some(place) = sheet.frame.placed(*place).filter(|place| place.extrapolated()) else { continue };
+            let Some(place) = sheet.frame.placed(*place).filter(|place| place.extrapolated()) else {
+                continue;
+            };
             let Some(species) = sheet.program.species.get(part.species.0) else { continue };
             let phase = species.curve.phases_at(place).lower.0;
             let allowed = species.allowances.iter().find(|allowance| allowance.phase == phase);
-            let why = allowed.map_or(String::new(), |allowance| format!(", allowed because {}", allowance.because));
-            let message = format!("`{}` uses the data of `{}` beyond their range{why}", state.name, species.in_phase(phase));
+            let why =
+                allowed.map_or(String::new(), |allowance| format!(", allowed because {}", allowance.because));
+            let message = format!(
+                "`{}` uses the data of `{}` beyond their range{why}",
+                state.name,
+                species.in_phase(phase)
+            );
             let mut diagnostic = Diagnostic::new(Code::Extrapolated, message)
                 .label(state.span, format!("at {:.2} K", place.temperature().value));
             if let Some(allowance) = allowed {
@@ -37,7 +44,11 @@ fn extrapolated(sheet: &WorkedSheet<'_>) -> Vec<Diagnostic> {
 fn neglected_volumes(sheet: &WorkedSheet<'_>) -> Vec<Diagnostic> {
     let mut asked: BTreeSet<StepId> = BTreeSet::new();
     sheet.each_expression(&mut |expr| {
-        if let Node::Step(id, StepMember::InternalEnergyChange | StepMember::VolumeChange | StepMember::Work) = &expr.node {
+        if let Node::Step(
+            id,
+            StepMember::InternalEnergyChange | StepMember::VolumeChange | StepMember::Work,
+        ) = &expr.node
+        {
             asked.insert(*id);
         }
     });
@@ -49,7 +60,11 @@ fn neglected_volumes(sheet: &WorkedSheet<'_>) -> Vec<Diagnostic> {
             (!without.is_empty()).then(|| {
                 Diagnostic::new(
                     Code::VolumeNeglected,
-                    format!("`{}` neglects the volume of {}, which has no density", step.name, and_list(&without)),
+                    format!(
+                        "`{}` neglects the volume of {}, which has no density",
+                        step.name,
+                        and_list(&without)
+                    ),
                 )
                 .label(step.span, "ΔU, ΔV or W is asked of this step")
                 .help("give the phase a line `density ... kg/m3`")

@@ -31,7 +31,12 @@ pub fn check(name: &str, identity: &str, text: &str, loader: &dyn Loader) -> Wor
     Worked { sources, diagnostics, report: None }
 }
 
-fn checked(name: &str, identity: &str, text: &str, loader: &dyn Loader) -> (Sources, Vec<Diagnostic>, Option<Program>) {
+fn checked(
+    name: &str,
+    identity: &str,
+    text: &str,
+    loader: &dyn Loader,
+) -> (Sources, Vec<Diagnostic>, Option<Program>) {
     let mut sources = Sources::new();
     let file = sources.add(name, text);
     let checked = check_sheet(&mut sources, file, identity, loader);
@@ -109,10 +114,13 @@ fn tables(
     for (table, slots) in program.tables.iter().zip(&lowered.map.tables) {
         match sweep(&lowered.plan, frame, slots) {
             Err(rows) => diagnostics.push(
-                Diagnostic::new(Code::TableSteps, format!("a table of {rows:.0} rows; from 1 to 1000000 are worked"))
-                    .label(table.by.span, "the step")
-                    .label(table.span, "in this table")
-                    .help("check the ends and the step"),
+                Diagnostic::new(
+                    Code::TableSteps,
+                    format!("a table of {rows:.0} rows; from 1 to 1000000 are worked"),
+                )
+                .label(table.by.span, "the step")
+                .label(table.span, "in this table")
+                .help("check the ends and the step"),
             ),
             Ok(worked) => {
                 diagnostics.extend(explain_row(program, lowered, table, &worked, sources));
@@ -122,7 +130,10 @@ fn tables(
                         .into_iter()
                         .map(|row| {
                             let refused = row.iter().any(|value| !value.is_finite());
-                            row.into_iter().enumerate().map(|(at, value)| (at == 0 || !refused).then_some(value)).collect()
+                            row.into_iter()
+                                .enumerate()
+                                .map(|(at, value)| (at == 0 || !refused).then_some(value))
+                                .collect()
                         })
                         .collect(),
                 );

@@ -22,16 +22,26 @@ pub(super) fn unknown_statement(text: &str, word: &str, span: Span) -> Diagnosti
     let after = text[word.len()..].trim_start();
     let known = words::STATEMENTS.iter().map(|opening| opening.word);
     if !word.is_empty() && after.starts_with('=') {
-        return found.help(format!("write `let {word} = ...` for a derived value, `basis {word} = ...` for an input"));
+        return found.help(format!(
+            "write `let {word} = ...` for a derived value, `basis {word} = ...` for an input"
+        ));
     }
     match nearest(word, known.clone()) {
-        Some(near) => found.help(format!("did you mean `{near}`? A comment starts with `#`, a remark with `|`")),
+        Some(near) => {
+            found.help(format!("did you mean `{near}`? A comment starts with `#`, a remark with `|`"))
+        }
         None => found.help(format!("statements begin with {}", or_list(&known.collect::<Vec<_>>()))),
     }
 }
 
 /// An entry that its block does not know.
-pub(super) fn unknown_entry(text: &str, word: &str, table: &[Opening], place: &str, span: Span) -> Diagnostic {
+pub(super) fn unknown_entry(
+    text: &str,
+    word: &str,
+    table: &[Opening],
+    place: &str,
+    span: Span,
+) -> Diagnostic {
     let end = span.start + u32::try_from(word.len().max(1)).unwrap_or(1);
     let known: Vec<&str> = table.iter().map(|opening| opening.word).collect();
     let found = Diagnostic::new(Code::UnknownEntry, format!("a {place} has no entry {}", shown(word, text)))
@@ -60,7 +70,13 @@ pub(super) fn block_missing(opening: &Opening, span: Span) -> Diagnostic {
 }
 
 /// A piece that its rule cannot read.
-pub(super) fn unreadable(error: &Error<Rule>, text: &str, base: usize, file: FileId, opening: &Opening) -> Diagnostic {
+pub(super) fn unreadable(
+    error: &Error<Rule>,
+    text: &str,
+    base: usize,
+    file: FileId,
+    opening: &Opening,
+) -> Diagnostic {
     let at = match error.location {
         InputLocation::Pos(at) | InputLocation::Span((at, _)) => at.min(text.len()),
     };
@@ -151,7 +167,8 @@ fn blank_in_unit(place: &Place<'_>) -> Option<Diagnostic> {
     let number = before[..start].trim_end();
     let digits = number.ends_with(|c: char| c.is_ascii_digit());
     let unit_like = unit.starts_with(|c: char| c.is_alphabetic() || c == '%' || c == '°');
-    let tail_len = place.rest().find(|c: char| c.is_whitespace() || ",)}#".contains(c)).unwrap_or(place.rest().len());
+    let tail_len =
+        place.rest().find(|c: char| c.is_whitespace() || ",)}#".contains(c)).unwrap_or(place.rest().len());
     let tail = &place.rest()[..tail_len];
     if !(digits && unit_like) || words::find(words::STATEMENTS, word).is_some() || word.chars().count() > 4 {
         return None;
@@ -172,15 +189,18 @@ fn blank_in_unit(place: &Place<'_>) -> Option<Diagnostic> {
 fn number_before_name(place: &Place<'_>) -> Option<Diagnostic> {
     let before = place.before();
     let number = before.ends_with(|c: char| c.is_ascii_digit());
-    let start = before.rfind(|c: char| !(c.is_ascii_digit() || c == '.')).map_or(0, |at| {
-        at + before[at..].chars().next().map_or(1, char::len_utf8)
-    });
+    let start = before
+        .rfind(|c: char| !(c.is_ascii_digit() || c == '.'))
+        .map_or(0, |at| at + before[at..].chars().next().map_or(1, char::len_utf8));
     let in_name = before[..start].ends_with(|c: char| c.is_alphanumeric() || c == '_');
     (number && !in_name && place.rest().starts_with('(')).then(|| {
         let number = &before[start..];
-        Diagnostic::new(Code::NumberBeforeName, format!("the number `{number}` stands straight before a parenthesis"))
-            .label(place.span(start, place.rest_at() + 1), "no sign between them")
-            .help(format!("write `{number} * (...)`"))
+        Diagnostic::new(
+            Code::NumberBeforeName,
+            format!("the number `{number}` stands straight before a parenthesis"),
+        )
+        .label(place.span(start, place.rest_at() + 1), "no sign between them")
+        .help(format!("write `{number} * (...)`"))
     })
 }
 
@@ -199,9 +219,9 @@ fn reserved(place: &Place<'_>) -> Option<Diagnostic> {
 fn call_blank(place: &Place<'_>) -> Option<Diagnostic> {
     let before = place.before();
     let blank = place.rest_at() > before.len();
-    let start = before.rfind(|c: char| !(c.is_alphanumeric() || c == '_')).map_or(0, |at| {
-        at + before[at..].chars().next().map_or(1, char::len_utf8)
-    });
+    let start = before
+        .rfind(|c: char| !(c.is_alphanumeric() || c == '_'))
+        .map_or(0, |at| at + before[at..].chars().next().map_or(1, char::len_utf8));
     let word = &before[start..];
     let named = word.starts_with(char::is_alphabetic) && words::find(words::STATEMENTS, word).is_none();
     (blank && named && place.rest().starts_with('(')).then(|| {

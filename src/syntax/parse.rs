@@ -104,7 +104,8 @@ impl<'a> Reader<'a> {
         let slice = &self.text[piece.range.clone()];
         let head = &slice[..slice.floor_char_boundary(400)];
         let declared = head.split(['=', ':', '{', '"']).next().unwrap_or_default();
-        let words = declared.split(|c: char| !(c.is_alphanumeric() || c == '_')).filter(|word| !word.is_empty());
+        let words =
+            declared.split(|c: char| !(c.is_alphanumeric() || c == '_')).filter(|word| !word.is_empty());
         self.broken.extend(words.skip(1).map(str::to_owned));
     }
 
@@ -161,7 +162,8 @@ impl<'a> Reader<'a> {
     fn phase(&mut self, piece: &Piece, block: &[Piece]) -> Option<PhaseBlock> {
         let pair = self.parse(piece, &words::PHASE)?;
         let (name, class) = self.builder(piece).phase_head(pair)?;
-        let mut phase = PhaseBlock { name, class, entries: Vec::new(), head: self.span(piece), damaged: false };
+        let mut phase =
+            PhaseBlock { name, class, entries: Vec::new(), head: self.span(piece), damaged: false };
         for entry in block {
             if entry.remark {
                 phase.entries.push(super::tree::PhaseEntry::Remark(self.remark(entry)));

@@ -178,14 +178,18 @@ impl Cutter<'_> {
     fn text(&mut self, at: usize, end: usize) -> usize {
         self.extend(at);
         if let Some(length) = self.source[at + 1..end].iter().position(|&byte| byte == b'"') {
-            if let Some(bad) = (at..at + 1 + length).find(|&i| self.source[i] < 32 && self.source[i] != b'\t') {
+            if let Some(bad) = (at..at + 1 + length).find(|&i| self.source[i] < 32 && self.source[i] != b'\t')
+            {
                 self.control(bad);
             }
             return at + 1 + length;
         }
         self.diagnostics.push(
             Diagnostic::new(Code::OpenText, "a text without its closing quote")
-                .label(self.span(at..trimmed_end(self.source, at, end)), "the text starts here and the line ends")
+                .label(
+                    self.span(at..trimmed_end(self.source, at, end)),
+                    "the text starts here and the line ends",
+                )
                 .help("close the text with `\"` on the same line"),
         );
         self.break_entry(at);
@@ -281,11 +285,15 @@ impl Cutter<'_> {
             return;
         }
         let start = self.number_start(at);
-        let end = (at + 1..self.source.len()).find(|&i| !self.source[i].is_ascii_digit()).unwrap_or(self.source.len());
+        let end = (at + 1..self.source.len())
+            .find(|&i| !self.source[i].is_ascii_digit())
+            .unwrap_or(self.source.len());
         let whole = String::from_utf8_lossy(&self.source[start..at]).into_owned();
         let after = String::from_utf8_lossy(&self.source[at + 1..end]).into_owned();
         let help = if after.len() == 3 && whole != "0" {
-            format!("write `{whole}{after}` if it separates thousands, `{whole}.{after}` if it is the decimal sign")
+            format!(
+                "write `{whole}{after}` if it separates thousands, `{whole}.{after}` if it is the decimal sign"
+            )
         } else {
             format!("write `{whole}.{after}`; between two numbers of a list, a blank after the comma")
         };
@@ -310,13 +318,18 @@ impl Cutter<'_> {
             return;
         }
         let start = if trailing { self.number_start(at) } else { at };
-        let end = (at + 1..self.source.len()).find(|&i| !self.source[i].is_ascii_digit()).unwrap_or(self.source.len());
+        let end = (at + 1..self.source.len())
+            .find(|&i| !self.source[i].is_ascii_digit())
+            .unwrap_or(self.source.len());
         let written = String::from_utf8_lossy(&self.source[start..end]).into_owned();
         let right = if trailing { format!("{written}0") } else { format!("0{written}") };
         self.diagnostics.push(
-            Diagnostic::new(Code::BareDecimalPoint, format!("the number `{written}` lacks a digit beside its point"))
-                .label(self.span(start..end), "a point is easily lost here")
-                .help(format!("write `{right}`")),
+            Diagnostic::new(
+                Code::BareDecimalPoint,
+                format!("the number `{written}` lacks a digit beside its point"),
+            )
+            .label(self.span(start..end), "a point is easily lost here")
+            .help(format!("write `{right}`")),
         );
         self.break_entry(at);
     }
@@ -452,7 +465,8 @@ fn trimmed_end(source: &[u8], start: usize, end: usize) -> usize {
 }
 
 fn leading_word(bytes: &[u8]) -> &[u8] {
-    let end = bytes.iter().position(|byte| !(byte.is_ascii_alphanumeric() || *byte == b'_')).unwrap_or(bytes.len());
+    let end =
+        bytes.iter().position(|byte| !(byte.is_ascii_alphanumeric() || *byte == b'_')).unwrap_or(bytes.len());
     &bytes[..end]
 }
 
@@ -469,6 +483,7 @@ fn starts_statement(line: &[u8], in_sheet_block: bool) -> bool {
     if in_sheet_block && text_follows {
         return false;
     }
-    gap > 0 && (text_follows || follows.is_ascii_alphabetic() || follows >= 128 || follows == b'(')
+    gap > 0
+        && (text_follows || follows.is_ascii_alphabetic() || follows >= 128 || follows == b'(')
         && !words::RESERVED.iter().any(|reserved| reserved.as_bytes() == leading_word(&rest[gap..]))
 }

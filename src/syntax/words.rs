@@ -47,7 +47,11 @@ pub(super) const SPECIES_ENTRIES: &[Opening] = &[
     opening("boiling", Rule::species_entry, "boiling at 373.15 K takes 40.65 kJ/mol"),
     opening("sublimation", Rule::species_entry, "sublimation at 194.7 K takes 25.2 kJ/mol"),
     opening("transition", Rule::species_entry, "transition alpha to gamma at 1184 K takes 900 J/mol"),
-    opening("vapour_pressure", Rule::species_entry, "vapour_pressure antoine { A = ..., B = ..., C = ... } for A to B"),
+    opening(
+        "vapour_pressure",
+        Rule::species_entry,
+        "vapour_pressure antoine { A = ..., B = ..., C = ... } for A to B",
+    ),
     opening("decomposes", Rule::species_entry, "decomposes at 1172 K"),
 ];
 

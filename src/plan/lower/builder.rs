@@ -1,7 +1,9 @@
 //! The builder: slots, constants, and what was lowered already.
 
 use super::Lowered;
-use crate::plan::{Material, Op, Origin, OriginKind, Part, PartRange, Plan, PlaceSlot, Slot, SlotMap, StateSlots, StepSlots};
+use crate::plan::{
+    Material, Op, Origin, OriginKind, Part, PartRange, PlaceSlot, Plan, Slot, SlotMap, StateSlots, StepSlots,
+};
 use crate::program::{Constituent, Entry, Program, StateId, StepId};
 use crate::span::Span;
 use crate::thermo::Allowance;

@@ -17,14 +17,21 @@ impl Builder<'_> {
         let before = self.from(duty.span, OriginKind::Duty(id));
         let mut useful = self.expr(&duty.value)?;
         if let Some(time) = self.optional(duty.over.as_ref())? {
-            let time = self.emit(|to| Op::Guard { check: Check::PositiveTime, a: time, b: time, value: time, to });
+            let time =
+                self.emit(|to| Op::Guard { check: Check::PositiveTime, a: time, b: time, value: time, to });
             useful = self.divide(useful, time);
         }
         let supplied = match self.optional(duty.efficiency.as_ref())? {
             None => useful,
             Some(a) => {
                 let share = self.emit(|to| Op::Guard { check: Check::Efficiency, a, b: a, value: a, to });
-                let heating = self.emit(|to| Op::Guard { check: Check::Heating, a: useful, b: useful, value: useful, to });
+                let heating = self.emit(|to| Op::Guard {
+                    check: Check::Heating,
+                    a: useful,
+                    b: useful,
+                    value: useful,
+                    to,
+                });
                 self.divide(heating, share)
             }
         };

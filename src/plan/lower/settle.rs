@@ -33,7 +33,8 @@ impl Builder<'_> {
     pub(super) fn settled(&mut self, id: StateId, unknown: Unknown) -> Lowering<Slot> {
         let program = self.program;
         let by = program.steps.iter().enumerate().find_map(|(at, step)| {
-            let settles = step.settles.iter().find(|settles| settles.state == id && settles.unknown == unknown)?;
+            let settles =
+                step.settles.iter().find(|settles| settles.state == id && settles.unknown == unknown)?;
             Some((StepId(at), step, *settles))
         });
         let Some((step_id, step, settles)) = by else { return Ok(self.constant(f64::NAN)) };
@@ -85,7 +86,14 @@ impl Builder<'_> {
         far.iter().chain(near).find(|id| !own(id)).copied().unwrap_or(settles.state)
     }
 
-    fn settle_temperature(&mut self, id: StateId, by: Settle, parts: PartRange, target: Slot, p: Slot) -> Slot {
+    fn settle_temperature(
+        &mut self,
+        id: StateId,
+        by: Settle,
+        parts: PartRange,
+        target: Slot,
+        p: Slot,
+    ) -> Slot {
         let (to, share) = (self.slot(), self.slot());
         self.push(Op::SettleTemperature { by, parts, target, p, to, share });
         self.shares.insert(id, share);

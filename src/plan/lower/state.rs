@@ -64,18 +64,19 @@ impl Builder<'_> {
             }
             Condition::Of(other) => self.pressure(*other)?,
             Condition::Agreed(others, atmosphere) => {
-                let mut slots = others.iter().map(|other| self.pressure(*other)).collect::<Lowering<Vec<Slot>>>()?;
+                let mut slots =
+                    others.iter().map(|other| self.pressure(*other)).collect::<Lowering<Vec<Slot>>>()?;
                 slots.extend(self.map.atmosphere.filter(|_| *atmosphere));
                 let first = slots.first().copied().unwrap_or_else(|| self.constant(f64::NAN));
                 slots.iter().skip(1).filter(|slot| **slot != first).copied().collect::<Vec<_>>().iter().fold(
                     first,
-                    |value, &b| self.emit(|to| Op::Guard { check: Check::AgreedPressure, a: first, b, value, to }),
+                    |value, &b| {
+                        self.emit(|to| Op::Guard { check: Check::AgreedPressure, a: first, b, value, to })
+                    },
                 )
             }
             Condition::Unknown(_) => self.settled(id, Unknown::Pressure)?,
-            Condition::Atmosphere | Condition::Boiling => {
-                self.map.atmosphere.unwrap_or(Slot(0))
-            }
+            Condition::Atmosphere | Condition::Boiling => self.map.atmosphere.unwrap_or(Slot(0)),
         };
         self.back(before);
         self.pressures.insert(id, slot);
@@ -156,7 +157,9 @@ impl Builder<'_> {
                 let masses = self.masses(*other)?;
                 Ok(constituents
                     .iter()
-                    .map(|part| theirs.iter().position(|known| known == part).and_then(|at| masses.get(at)).copied())
+                    .map(|part| {
+                        theirs.iter().position(|known| known == part).and_then(|at| masses.get(at)).copied()
+                    })
                     .collect())
             }
             Source::Sum(parts) => {
@@ -175,7 +178,9 @@ impl Builder<'_> {
                 let value = self.amount(amount)?;
                 let per_kilogram: Vec<(usize, Option<Slot>)> = portions
                     .iter()
-                    .map(|portion| (portion.constituent, (portion.share != 1.0).then(|| self.constant(portion.share))))
+                    .map(|portion| {
+                        (portion.constituent, (portion.share != 1.0).then(|| self.constant(portion.share)))
+                    })
                     .collect();
                 let mut masses: Vec<Option<Slot>> = vec![None; constituents.len()];
                 let one = self.constant(1.0);
@@ -196,7 +201,8 @@ impl Builder<'_> {
                 let whole = self.masses_of(id, of)?;
                 let factor = if *quantum == Quantum::Share {
                     let before = self.from(amount.span, OriginKind::Expression);
-                    let share = self.emit(|to| Op::Guard { check: Check::Share, a: value, b: value, value, to });
+                    let share =
+                        self.emit(|to| Op::Guard { check: Check::Share, a: value, b: value, value, to });
                     self.back(before);
                     share
                 } else {
@@ -216,7 +222,13 @@ impl Builder<'_> {
     }
 
     /// By what the masses of a whole are multiplied to make up an amount of it.
-    fn mass_of_amount(&mut self, id: StateId, amount: Slot, quantum: Quantum, whole: &[Option<Slot>]) -> Lowering<Slot> {
+    fn mass_of_amount(
+        &mut self,
+        id: StateId,
+        amount: Slot,
+        quantum: Quantum,
+        whole: &[Option<Slot>],
+    ) -> Lowering<Slot> {
         let constituents = self.constituents(id);
         let mut terms = Vec::new();
         for (at, mass) in whole.iter().enumerate() {
@@ -391,7 +403,9 @@ impl Builder<'_> {
         let constituents = self.constituents(id);
         let mut terms = Vec::new();
         for at in which {
-            let (Some(mass), Some(part)) = (masses.get(*at).copied(), constituents.get(*at)) else { continue };
+            let (Some(mass), Some(part)) = (masses.get(*at).copied(), constituents.get(*at)) else {
+                continue;
+            };
             let Some(phases) = self.phase_set(part, phase) else { continue };
             let place = self.place(id, *at)?;
             let material = self.material(part);

@@ -106,13 +106,18 @@ impl Builder<'_> {
         all.dedup();
         let species = |id: &SpeciesId| self.program.species.get(id.0);
         let by_element = all.len() > 1
-            && all.iter().all(|id| species(id).is_some_and(|species| species.absolute && species.formula.is_some()));
+            && all
+                .iter()
+                .all(|id| species(id).is_some_and(|species| species.absolute && species.formula.is_some()));
         let balances = if by_element {
             self.element_amounts(&start, &end)
         } else {
             let zero = self.constant(0.0);
-            let side = |masses: &BTreeMap<SpeciesId, Slot>, id: &SpeciesId| masses.get(id).copied().unwrap_or(zero);
-            let name = |id: &SpeciesId| self.program.species.get(id.0).map_or(String::new(), |species| species.name.clone());
+            let side =
+                |masses: &BTreeMap<SpeciesId, Slot>, id: &SpeciesId| masses.get(id).copied().unwrap_or(zero);
+            let name = |id: &SpeciesId| {
+                self.program.species.get(id.0).map_or(String::new(), |species| species.name.clone())
+            };
             all.iter().map(|id| (name(id), side(&start, id), side(&end, id))).collect()
         };
         let mut value = change;
@@ -180,7 +185,8 @@ impl Builder<'_> {
             Heat::Adiabatic => zero,
             Heat::Follows if matches!(path, Path::Throttled | Path::AdiabaticReversible) => zero,
             Heat::Follows => {
-                let at_pressure = matches!(path, Path::ConstantPressure | Path::ConstantTemperatureAndPressure);
+                let at_pressure =
+                    matches!(path, Path::ConstantPressure | Path::ConstantTemperatureAndPressure);
                 if at_pressure {
                     // ΔU − W with W = −p ΔV is ΔH, with no difference of large numbers
                     self.less(slots.enthalpy_change, slots.working)
@@ -245,14 +251,16 @@ impl Builder<'_> {
     fn ends_fit(&mut self, step: &Step, path: Path, slots: &mut StepSlots) -> Lowering<()> {
         let states: Vec<StateId> = step.from.iter().chain(&step.to).copied().collect();
         let same_pressure = matches!(path, Path::ConstantPressure | Path::ConstantTemperatureAndPressure);
-        let same_temperature = matches!(path, Path::IsothermalReversible | Path::ConstantTemperatureAndPressure);
+        let same_temperature =
+            matches!(path, Path::IsothermalReversible | Path::ConstantTemperatureAndPressure);
         let mut checks = Vec::new();
         if same_pressure {
             let pressures = states.iter().map(|id| self.pressure(*id)).collect::<Lowering<Vec<Slot>>>()?;
             checks.extend(pressures.iter().skip(1).map(|slot| (Check::SamePressure, pressures[0], *slot)));
         }
         if same_temperature {
-            let slots = states.iter().map(|id| Ok(self.temperature(*id)?.slot)).collect::<Lowering<Vec<Slot>>>()?;
+            let slots =
+                states.iter().map(|id| Ok(self.temperature(*id)?.slot)).collect::<Lowering<Vec<Slot>>>()?;
             checks.extend(slots.iter().skip(1).map(|slot| (Check::SameTemperature, slots[0], *slot)));
         }
         if path == Path::ConstantVolume {

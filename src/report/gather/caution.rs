@@ -72,7 +72,11 @@ fn water_beside_hot(sheet: &WorkedSheet<'_>, step: &Step, found: &mut Vec<Diagno
     };
     let hottest = step.from.iter().map(|id| temperature(sheet, *id)).fold(f64::NEG_INFINITY, f64::max);
     if hottest > boiling {
-        let message = format!("`{}` brings `{water}` beside something at {} degC", step.name, significant(hottest - 273.15, 4));
+        let message = format!(
+            "`{}` brings `{water}` beside something at {} degC",
+            step.name,
+            significant(hottest - 273.15, 4)
+        );
         found.push(caution(Code::WaterBesideHot, message, step.span));
     }
 }
@@ -107,11 +111,20 @@ fn flammable_vapour(sheet: &WorkedSheet<'_>, step: &Step, found: &mut Vec<Diagno
     };
     let was_vapour = step.from.iter().any(|id| vapour(id).is_some());
     if let (Some(name), false) = (step.to.iter().find_map(vapour), was_vapour) {
-        found.push(caution(Code::FlammableVapour, format!("`{}` lets off a flammable vapour, `{name}`", step.name), step.span));
+        found.push(caution(
+            Code::FlammableVapour,
+            format!("`{}` lets off a flammable vapour, `{name}`", step.name),
+            step.span,
+        ));
     }
 }
 
-fn vapour_name(sheet: &WorkedSheet<'_>, part: Constituent, mass: f64, place: Option<Place>) -> Option<String> {
+fn vapour_name(
+    sheet: &WorkedSheet<'_>,
+    part: Constituent,
+    mass: f64,
+    place: Option<Place>,
+) -> Option<String> {
     let species = sheet.program.species.get(part.species.0)?;
     let place = place.filter(|_| mass > 0.0)?;
     let present = species.curve.phases_at(place);
@@ -126,7 +139,12 @@ fn vapour_name(sheet: &WorkedSheet<'_>, part: Constituent, mass: f64, place: Opt
 fn is_flammable(species: &Species) -> bool {
     let Some((formula, composition)) = &species.formula else { return false };
     let count = |symbol: &str| {
-        composition.parts().iter().filter(|(element, _)| element.symbol() == symbol).map(|(_, count)| *count).sum::<f64>()
+        composition
+            .parts()
+            .iter()
+            .filter(|(element, _)| element.symbol() == symbol)
+            .map(|(_, count)| *count)
+            .sum::<f64>()
     };
     let halogens = count("F") + count("Cl") + count("Br");
     let organic = count("C") > 0.0 && count("H") > halogens;

@@ -45,7 +45,9 @@ fn data_row(species: &Species, datum: &Datum, (from, to): (f64, f64)) -> DataRow
     let (name, what, at) = match datum.kind {
         DatumKind::HeatCapacity { phase: at, .. } => (phase(at), "cp", Some(at)),
         DatumKind::Density { phase: at } => (phase(at), "density", Some(at)),
-        DatumKind::Transition { below } => (format!("{} to {}", phase(below), phase(below + 1)), change(datum), None),
+        DatumKind::Transition { below } => {
+            (format!("{} to {}", phase(below), phase(below + 1)), change(datum), None)
+        }
         DatumKind::Formation { phase: at } => (at.map_or(String::new(), phase), "formation", at),
         DatumKind::MolarMass => (String::new(), "molar mass", None),
         DatumKind::Decomposition => (String::new(), "decomposition", None),
@@ -71,5 +73,8 @@ fn data_row(species: &Species, datum: &Datum, (from, to): (f64, f64)) -> DataRow
 
 /// The word that a transition's line begins with.
 fn change(datum: &Datum) -> &'static str {
-    ["melting", "boiling", "sublimation"].into_iter().find(|word| datum.text.starts_with(word)).unwrap_or("transition")
+    ["melting", "boiling", "sublimation"]
+        .into_iter()
+        .find(|word| datum.text.starts_with(word))
+        .unwrap_or("transition")
 }

@@ -7,7 +7,13 @@ use crate::units::{Dimension, Kind, Unit, engineering_unit, read_unit};
 
 impl WorkedSheet<'_> {
     /// A value in a unit; without one, in the unit that an engineer would read it in.
-    pub(super) fn shown(&self, si: f64, dimension: Dimension, unit: Option<&Unit>, difference: bool) -> Quantity {
+    pub(super) fn shown(
+        &self,
+        si: f64,
+        dimension: Dimension,
+        unit: Option<&Unit>,
+        difference: bool,
+    ) -> Quantity {
         let unit = unit.cloned().unwrap_or_else(|| engineering_unit(dimension, si));
         let pressure = (dimension == Dimension::PRESSURE).then(|| pressure_basis(&unit, difference));
         Quantity { si, value: unit.from_si(si, self.atmosphere()), unit, pressure }

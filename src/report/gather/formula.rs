@@ -44,14 +44,19 @@ impl WorkedSheet<'_> {
                 });
                 (self.named(expr, slot, None), Tightness::Atom)
             }
-            Node::Negative(inner) => (format!("-{}", self.inside(inner, Tightness::Power)), Tightness::Product),
+            Node::Negative(inner) => {
+                (format!("-{}", self.inside(inner, Tightness::Power)), Tightness::Product)
+            }
             Node::Sum(terms) => (self.chain(terms, [" + ", " - "], Tightness::Sum), Tightness::Sum),
-            Node::Product(factors) => (self.chain(factors, [" * ", " / "], Tightness::Product), Tightness::Product),
+            Node::Product(factors) => {
+                (self.chain(factors, [" * ", " / "], Tightness::Product), Tightness::Product)
+            }
             Node::PowerInteger(base, exponent) => {
                 (format!("{} ^ {exponent}", self.inside(base, Tightness::Atom)), Tightness::Power)
             }
             Node::Power(base, exponent) => {
-                let (base, exponent) = (self.inside(base, Tightness::Atom), self.inside(exponent, Tightness::Atom));
+                let (base, exponent) =
+                    (self.inside(base, Tightness::Atom), self.inside(exponent, Tightness::Atom));
                 (format!("{base} ^ {exponent}"), Tightness::Power)
             }
             Node::Call(function, arguments) => {
@@ -83,7 +88,9 @@ impl WorkedSheet<'_> {
         }
         let Node::Constant(value) = expr.node else { return written };
         let shown_value = self.shown(value, expr.dimension, None, false);
-        format!("{} {}", significant(shown_value.value, 9), shown_value.unit.text).trim_end_matches(" 1").to_owned()
+        format!("{} {}", significant(shown_value.value, 9), shown_value.unit.text)
+            .trim_end_matches(" 1")
+            .to_owned()
     }
 
     fn named(&self, expr: &Expr, slot: Option<Slot>, unit: Option<&Unit>) -> String {
@@ -112,7 +119,9 @@ impl WorkedSheet<'_> {
             StepMember::Heat => step.heat,
             StepMember::Work => step.work,
             StepMember::Supply => step.supply,
-            StepMember::VolumeChange | StepMember::Sensible | StepMember::Latent | StepMember::Reaction => None,
+            StepMember::VolumeChange | StepMember::Sensible | StepMember::Latent | StepMember::Reaction => {
+                None
+            }
         };
         self.named(expr, slot, None)
     }

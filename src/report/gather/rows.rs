@@ -9,8 +9,8 @@ use crate::diagnostic::Severity;
 use crate::program::{Condition, DutyId, Entry, Expr, Limit, Node, QuantityId, Role, SpeciesId, StateId};
 use crate::report::conventions::standing_conventions;
 use crate::report::model::{
-    Caution, DutyRow, Finding, InputRow, Item, MixtureRow, Quantity, Report, RequirementRow, ResultRow, SiteRow,
-    StateRow, TableColumn, TableRows,
+    Caution, DutyRow, Finding, InputRow, Item, MixtureRow, Quantity, Report, RequirementRow, ResultRow,
+    SiteRow, StateRow, TableColumn, TableRows,
 };
 use crate::units::{Dimension, Unit, Zero, engineering_unit};
 
@@ -122,12 +122,24 @@ impl WorkedSheet<'_> {
             name: state.name.clone(),
             written: state.text.clone(),
             flow: state.flow,
-            temperature: self.shown(self.value(slots.temperature), Dimension::TEMPERATURE, temperature_unit.as_ref(), false),
+            temperature: self.shown(
+                self.value(slots.temperature),
+                Dimension::TEMPERATURE,
+                temperature_unit.as_ref(),
+                false,
+            ),
             temperature_settled: matches!(state.temperature, Condition::Unknown(_)),
-            pressure: self.shown(self.value(slots.pressure), Dimension::PRESSURE, asked(&state.pressure).as_ref(), false),
+            pressure: self.shown(
+                self.value(slots.pressure),
+                Dimension::PRESSURE,
+                asked(&state.pressure).as_ref(),
+                false,
+            ),
             pressure_settled: matches!(state.pressure, Condition::Unknown(_)),
             mass: self.shown(self.value(slots.mass), rate(Dimension::MASS), None, false),
-            amount: slots.amount.map(|slot| self.shown(self.value(slot), rate(Dimension::AMOUNT), None, false)),
+            amount: slots
+                .amount
+                .map(|slot| self.shown(self.value(slot), rate(Dimension::AMOUNT), None, false)),
             phases,
             phases_by_mole: by_mole,
         })
@@ -137,13 +149,16 @@ impl WorkedSheet<'_> {
     fn phases(&self, id: StateId) -> (Vec<(String, f64)>, bool) {
         let contents = self.contents(id);
         let species = |id: SpeciesId| self.program.species.get(id.0);
-        let by_mole = contents.iter().all(|(part, ..)| species(part.species).is_some_and(|s| s.molar_mass.is_some()));
+        let by_mole =
+            contents.iter().all(|(part, ..)| species(part.species).is_some_and(|s| s.molar_mass.is_some()));
         let mut phases: Vec<(String, f64)> = Vec::new();
         for (part, mass, place) in contents {
             let (Some(species), Some(place)) = (species(part.species), place) else { continue };
             let amount = if by_mole { mass / species.molar_mass.unwrap_or(1.0) } else { mass };
             let present = species.curve.phases_at(place);
-            for (phase, share) in std::iter::once(present.lower).chain(present.upper).filter(|(_, share)| *share > 0.0) {
+            for (phase, share) in
+                std::iter::once(present.lower).chain(present.upper).filter(|(_, share)| *share > 0.0)
+            {
                 let name = species.in_phase(phase);
                 match phases.iter_mut().find(|(known, _)| *known == name) {
                     Some((_, sum)) => *sum += amount * share,
@@ -188,7 +203,8 @@ impl WorkedSheet<'_> {
             Limit::Compared(_, limit) | Limit::Within(limit, _) => limit,
         };
         let shown_in = self.limit_unit(&requirement.value, first, value);
-        let show = |si: f64, expr: &Expr| self.shown(si, expr.dimension, Some(&shown_in), is_difference(expr));
+        let show =
+            |si: f64, expr: &Expr| self.shown(si, expr.dimension, Some(&shown_in), is_difference(expr));
         Some(RequirementRow {
             written: requirement.text.clone(),
             found: show(value, &requirement.value),
@@ -204,7 +220,9 @@ impl WorkedSheet<'_> {
             Node::Quantity(id) => self.unit_of(*id),
             Node::Constant(_) | Node::Gauge(_) => {
                 let text = self.sources.line_of(expr.span);
-                text.split_once(' ').and_then(|(_, unit_text)| unit(unit_text)).filter(|unit| unit.dimension == expr.dimension)
+                text.split_once(' ')
+                    .and_then(|(_, unit_text)| unit(unit_text))
+                    .filter(|unit| unit.dimension == expr.dimension)
             }
             _ => None,
         };
@@ -214,10 +232,17 @@ impl WorkedSheet<'_> {
     fn table_rows(&self, at: usize) -> Option<TableRows> {
         let (table, values) = (self.program.tables.get(at)?, self.tables.get(at)?);
         let varied = self.program.quantities.get(table.over.0)?;
-        let first_of = |column: usize| values.iter().find_map(|row| row.get(column).copied().flatten()).unwrap_or(0.0);
-        let mut columns = vec![self.table_column(&varied.name, &varied.value, varied.display.as_ref(), first_of(0))];
+        let first_of =
+            |column: usize| values.iter().find_map(|row| row.get(column).copied().flatten()).unwrap_or(0.0);
+        let mut columns =
+            vec![self.table_column(&varied.name, &varied.value, varied.display.as_ref(), first_of(0))];
         for (index, column) in table.columns.iter().enumerate() {
-            columns.push(self.table_column(&column.name, &column.value, column.display.as_ref(), first_of(index + 1)));
+            columns.push(self.table_column(
+                &column.name,
+                &column.value,
+                column.display.as_ref(),
+                first_of(index + 1),
+            ));
         }
         let show = |row: &Vec<Option<f64>>| -> Vec<Option<f64>> {
             row.iter()
@@ -241,7 +266,11 @@ impl WorkedSheet<'_> {
         self.findings
             .iter()
             .filter(|found| found.severity() == Severity::Warning)
-            .map(|found| Finding { code: found.code.as_str(), message: found.message.clone(), line: line(found) })
+            .map(|found| Finding {
+                code: found.code.as_str(),
+                message: found.message.clone(),
+                line: line(found),
+            })
             .collect()
     }
 
@@ -260,9 +289,11 @@ impl WorkedSheet<'_> {
     /// What holds for every sheet, and what for this one.
     fn conventions(&self) -> Vec<String> {
         let mut sentences = standing_conventions();
-        let gauge = self.program.quantities.iter().any(|quantity| {
-            quantity.display.as_ref().is_some_and(|unit| unit.zero == Zero::Atmosphere)
-        });
+        let gauge = self
+            .program
+            .quantities
+            .iter()
+            .any(|quantity| quantity.display.as_ref().is_some_and(|unit| unit.zero == Zero::Atmosphere));
         if gauge {
             sentences.push("Gauge readings count from the site's atmosphere.".to_owned());
         }

@@ -10,7 +10,9 @@ use crate::units::{Dimension, quantity};
 impl WorkedSheet<'_> {
     pub(super) fn step_row(&self, id: StepId) -> Option<StepRow> {
         let (step, slots) = (self.program.steps.get(id.0)?, self.map.steps.get(id.0)?);
-        let optional = |slot: Option<crate::plan::Slot>| slot.map(|slot| self.value(slot)).filter(|value| value.is_finite());
+        let optional = |slot: Option<crate::plan::Slot>| {
+            slot.map(|slot| self.value(slot)).filter(|value| value.is_finite())
+        };
         Some(StepRow {
             name: step.name.clone(),
             written: step.text.clone(),
@@ -39,7 +41,8 @@ impl WorkedSheet<'_> {
         for (start, end) in self.paired(step) {
             let Some(species) = self.program.species.get(start.constituent.species.0) else { continue };
             let part = |parcel: &super::usage::Parcel| {
-                let added = species.curve.condensed_pressure_enthalpy(parcel.place, quantity(parcel.pressure));
+                let added =
+                    species.curve.condensed_pressure_enthalpy(parcel.place, quantity(parcel.pressure));
                 added.map_or(0.0, |added| added.value)
             };
             let change = start.mass * (part(&end) - part(&start));
@@ -75,10 +78,14 @@ impl WorkedSheet<'_> {
     fn leg_row(&self, id: SpeciesId, mass: f64, leg: &Leg) -> LegRow {
         let species = self.program.species.get(id.0);
         let name = |phase: usize| {
-            species.and_then(|species| species.phases.get(phase)).map_or(String::new(), |phase| phase.name.clone())
+            species
+                .and_then(|species| species.phases.get(phase))
+                .map_or(String::new(), |phase| phase.name.clone())
         };
         let (kind, phase, datum) = match leg.kind {
-            thermo::LegKind::Sensible { phase } => (LegKind::Sensible, name(phase), self.law_text(id, phase, leg)),
+            thermo::LegKind::Sensible { phase } => {
+                (LegKind::Sensible, name(phase), self.law_text(id, phase, leg))
+            }
             thermo::LegKind::SensibleInRange { link } => (
                 LegKind::Sensible,
                 format!("{} and {}", name(link), name(link + 1)),
@@ -108,9 +115,12 @@ impl WorkedSheet<'_> {
         let Some(species) = self.program.species.get(id.0) else { return String::new() };
         let middle = 0.5 * (leg.from.value + leg.to.value);
         let of_phase = || {
-            species.data.iter().filter(|datum| matches!(datum.kind, DatumKind::HeatCapacity { phase: of, .. } if of == phase))
+            species.data.iter().filter(
+                |datum| matches!(datum.kind, DatumKind::HeatCapacity { phase: of, .. } if of == phase),
+            )
         };
-        let holds = |datum: &&crate::program::Datum| datum.valid.is_some_and(|(lo, hi)| lo <= middle && middle <= hi);
+        let holds =
+            |datum: &&crate::program::Datum| datum.valid.is_some_and(|(lo, hi)| lo <= middle && middle <= hi);
         of_phase().find(holds).or_else(|| of_phase().next()).map_or(String::new(), |datum| datum.text.clone())
     }
 
@@ -150,9 +160,19 @@ impl WorkedSheet<'_> {
                 let (member, value) = match settles.unknown {
                     Unknown::Temperature => {
                         let unit = super::display::unit("degC");
-                        ("T", self.shown(self.value(slots.temperature), Dimension::TEMPERATURE, unit.as_ref(), false))
+                        (
+                            "T",
+                            self.shown(
+                                self.value(slots.temperature),
+                                Dimension::TEMPERATURE,
+                                unit.as_ref(),
+                                false,
+                            ),
+                        )
                     }
-                    Unknown::Pressure => ("P", self.shown(self.value(slots.pressure), Dimension::PRESSURE, None, false)),
+                    Unknown::Pressure => {
+                        ("P", self.shown(self.value(slots.pressure), Dimension::PRESSURE, None, false))
+                    }
                 };
                 Some(format!("{}.{member} = {}", state.name, shown(&value)))
             })
@@ -176,7 +196,8 @@ impl WorkedSheet<'_> {
                     "The formation enthalpy of {} at 298.15 K is taken with its heat capacity stretched down to 298.15 K, by at most 2 K.",
                     species.name
                 );
-                if species.curve.formation_extrapolated() && self.turns_matter(step) && !notes.contains(&note) {
+                if species.curve.formation_extrapolated() && self.turns_matter(step) && !notes.contains(&note)
+                {
                     notes.push(note);
                 }
             }
@@ -193,12 +214,15 @@ impl WorkedSheet<'_> {
         let mut names = Vec::new();
         for id in step.from.iter().chain(&step.to) {
             for (part, _, place) in self.contents(*id) {
-                let (Some(place), Some(species)) = (place, self.program.species.get(part.species.0)) else { continue };
+                let (Some(place), Some(species)) = (place, self.program.species.get(part.species.0)) else {
+                    continue;
+                };
                 let present = species.curve.phases_at(place);
                 for (phase, share) in std::iter::once(present.lower).chain(present.upper) {
                     let condensed = species.curve.phase_class(phase) != Some(PhaseClass::Gas);
                     let name = species.in_phase(phase);
-                    if share > 0.0 && condensed && !species.curve.has_density(phase) && !names.contains(&name) {
+                    if share > 0.0 && condensed && !species.curve.has_density(phase) && !names.contains(&name)
+                    {
                         names.push(name);
                     }
                 }
@@ -230,7 +254,11 @@ fn work_formula(step: &Step, path: Path) -> String {
         Path::ConstantPressure | Path::ConstantTemperatureAndPressure => "no shaft work but what is stated",
         Path::NoShaftWork | Path::Throttled => "no shaft work",
     };
-    if step.working.is_some() { format!("{own}, and the work that ends in the matter") } else { own.to_owned() }
+    if step.working.is_some() {
+        format!("{own}, and the work that ends in the matter")
+    } else {
+        own.to_owned()
+    }
 }
 
 fn heat_formula(step: &Step, path: Path) -> String {
@@ -243,7 +271,9 @@ fn heat_formula(step: &Step, path: Path) -> String {
     let closed = !step.flow || path == Path::ConstantVolume;
     let working = if step.working.is_some() { " − the work that ends in the matter" } else { "" };
     match path {
-        Path::ConstantPressure | Path::ConstantTemperatureAndPressure | Path::NoShaftWork => format!("ΔH{working}"),
+        Path::ConstantPressure | Path::ConstantTemperatureAndPressure | Path::NoShaftWork => {
+            format!("ΔH{working}")
+        }
         Path::IsothermalReversible if closed => "ΔU − W".to_owned(),
         Path::IsothermalReversible => "ΔH − W".to_owned(),
         _ => format!("ΔU{working}"),

@@ -58,7 +58,10 @@ impl Usage {
     /// What a state uses at its own temperature: the heat capacity and the density of its phases.
     fn state(&mut self, sheet: &WorkedSheet<'_>, id: StateId) {
         for (constituent, _, place) in sheet.contents(id) {
-            let (Some(place), Some(species)) = (place, sheet.program.species.get(constituent.species.0)) else { continue };
+            let (Some(place), Some(species)) = (place, sheet.program.species.get(constituent.species.0))
+            else {
+                continue;
+            };
             let t = place.temperature().value;
             let present = species.curve.phases_at(place);
             for (phase, share) in std::iter::once(present.lower).chain(present.upper) {
@@ -79,8 +82,12 @@ impl Usage {
         match leg.kind {
             LegKind::Sensible { phase } => self.sensible(sheet, id, phase, span),
             LegKind::SensibleInRange { link } => self.note(id, DatumKind::Transition { below: link }, span),
-            LegKind::Transition { link: Some(link), .. } => self.note(id, DatumKind::Transition { below: link }, span),
-            LegKind::Transition { .. } => self.note(id, DatumKind::Formation { phase: None }, (298.15, 298.15)),
+            LegKind::Transition { link: Some(link), .. } => {
+                self.note(id, DatumKind::Transition { below: link }, span)
+            }
+            LegKind::Transition { .. } => {
+                self.note(id, DatumKind::Formation { phase: None }, (298.15, 298.15))
+            }
         }
     }
 
@@ -126,7 +133,8 @@ impl Usage {
         }
         for id in asked {
             for (constituent, _, place) in sheet.contents(id) {
-                let (Some(place), Some(species)) = (place, sheet.program.species.get(constituent.species.0)) else {
+                let (Some(place), Some(species)) = (place, sheet.program.species.get(constituent.species.0))
+                else {
                     continue;
                 };
                 for kind in species.data.iter().map(|datum| datum.kind) {
@@ -155,7 +163,10 @@ impl WorkedSheet<'_> {
         let program = self.program;
         program.quantities.iter().for_each(|quantity| quantity.value.walk(see));
         for step in &program.steps {
-            [&step.losing, &step.working, &step.efficiency].into_iter().flatten().for_each(|expr| expr.walk(see));
+            [&step.losing, &step.working, &step.efficiency]
+                .into_iter()
+                .flatten()
+                .for_each(|expr| expr.walk(see));
             if let crate::program::Heat::Taking(expr) = &step.heat {
                 expr.walk(see);
             }
@@ -177,7 +188,9 @@ impl WorkedSheet<'_> {
         ids.iter()
             .flat_map(|id| {
                 let pressure = self.map.states.get(id.0).map_or(f64::NAN, |slots| self.value(slots.pressure));
-                self.contents(*id).into_iter().map(move |(constituent, mass, place)| (constituent, mass, place, pressure))
+                self.contents(*id)
+                    .into_iter()
+                    .map(move |(constituent, mass, place)| (constituent, mass, place, pressure))
             })
             .filter_map(|(constituent, mass, place, pressure)| {
                 Some(Parcel { constituent, mass, place: place?, pressure })

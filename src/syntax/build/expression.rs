@@ -61,7 +61,11 @@ impl Builder<'_> {
             let span = value.span.to(exponent.span);
             value = Expression { kind: ExpressionKind::Power(Box::new(value), Box::new(exponent)), span };
         }
-        Some(if negative { Expression { kind: ExpressionKind::Negative(Box::new(value)), span } } else { value })
+        Some(if negative {
+            Expression { kind: ExpressionKind::Negative(Box::new(value)), span }
+        } else {
+            value
+        })
     }
 
     fn primary(&mut self, pair: Pair<'_, Rule>) -> Option<Expression> {
@@ -91,7 +95,9 @@ impl Builder<'_> {
         let member = self.member_name(&inner.next()?);
         let subject = match inner.next() {
             None => None,
-            Some(part) if part.as_rule() == Rule::expr => Some(Subject::Value(Box::new(self.expression(part)?))),
+            Some(part) if part.as_rule() == Rule::expr => {
+                Some(Subject::Value(Box::new(self.expression(part)?)))
+            }
             Some(part) => {
                 let mut inner = parts(part);
                 let species = self.species_name(inner.next()?)?;

@@ -3,8 +3,8 @@
 use super::builder::{Builder, parts};
 use crate::syntax::grammar::Rule;
 use crate::syntax::tree::{
-    Coefficient, CoefficientForm, Datum, HeatCapacityEntry, LawText, PhaseEntry, Row, SpeciesEntry, Suffixes, Text,
-    TransitionEntry, TransitionKind, TransitionPlace, VapourPressure, Word,
+    Coefficient, CoefficientForm, Datum, HeatCapacityEntry, LawText, PhaseEntry, Row, SpeciesEntry, Suffixes,
+    Text, TransitionEntry, TransitionKind, TransitionPlace, VapourPressure, Word,
 };
 use pest::iterators::Pair;
 
@@ -130,7 +130,9 @@ impl Builder<'_> {
             match part.as_rule() {
                 Rule::expr => form = Some(CoefficientForm::Formula(self.expression(part)?)),
                 Rule::form => name = Some(self.word(&part)),
-                Rule::coefficients => form = Some(CoefficientForm::Published(name.take()?, self.coefficients(part)?)),
+                Rule::coefficients => {
+                    form = Some(CoefficientForm::Published(name.take()?, self.coefficients(part)?))
+                }
                 Rule::tabled => {
                     let linear = part.clone().into_inner().any(|inner| inner.as_rule() == Rule::kw_linear);
                     form = Some(CoefficientForm::Table(self.rows(parts(part).next()?)?, linear));
@@ -155,8 +157,11 @@ impl Builder<'_> {
             }
         }
         let from = from?;
-        let form =
-            if mean { CoefficientForm::MeanTable(from, rows) } else { CoefficientForm::EnthalpyTable(from, rows) };
+        let form = if mean {
+            CoefficientForm::MeanTable(from, rows)
+        } else {
+            CoefficientForm::EnthalpyTable(from, rows)
+        };
         Some(LawText { value: HeatCapacityEntry { form, range: None }, suffixes, span })
     }
 

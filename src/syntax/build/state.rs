@@ -3,8 +3,8 @@
 use super::builder::{Builder, parts};
 use crate::syntax::grammar::Rule;
 use crate::syntax::tree::{
-    Clause, ClauseKind, Condition, ConditionKind, Conversion, Duty, DutyClause, Expression, Matter, MatterKind, Part,
-    State, Step, Word,
+    Clause, ClauseKind, Condition, ConditionKind, Conversion, Duty, DutyClause, Expression, Matter,
+    MatterKind, Part, State, Step, Word,
 };
 use pest::iterators::Pair;
 
@@ -17,7 +17,9 @@ impl Builder<'_> {
         let (mut after, mut conditions) = (Vec::new(), Vec::new());
         for part in inner {
             match part.as_rule() {
-                Rule::after => after = parts(part).map(|part| self.conversion(part)).collect::<Option<_>>()?,
+                Rule::after => {
+                    after = parts(part).map(|part| self.conversion(part)).collect::<Option<_>>()?
+                }
                 Rule::conditions => {
                     conditions = parts(part).map(|part| self.condition(part)).collect::<Option<_>>()?;
                 }

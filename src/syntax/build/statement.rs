@@ -3,9 +3,9 @@
 use super::builder::{Builder, parts};
 use crate::syntax::grammar::Rule;
 use crate::syntax::tree::{
-    Allow, BalanceEntry, Column, Comparison, Correlate, Expression, Input, InputRole, InputValue, Mixture, Participant,
-    Portion, PortionShare, Reaction, Require, Requirement, ResultLine, Settle, Sought, Statement, Suffixes, Table, Text,
-    Use, UseFrom, Word,
+    Allow, BalanceEntry, Column, Comparison, Correlate, Expression, Input, InputRole, InputValue, Mixture,
+    Participant, Portion, PortionShare, Reaction, Require, Requirement, ResultLine, Settle, Sought,
+    Statement, Suffixes, Table, Text, Use, UseFrom, Word,
 };
 use pest::iterators::Pair;
 

@@ -11,12 +11,12 @@ mod statement;
 pub use expression::{Expression, ExpressionKind, Factor, Subject};
 pub use quantity::{Datum, Interval, IntervalMark, Literal, Spread, Suffixes, Text, UnitText, Word};
 pub use species::{
-    Coefficient, CoefficientForm, HeatCapacityEntry, LawText, PhaseBlock, PhaseEntry, Row, SpeciesBlock, SpeciesEntry,
-    SpeciesName, TransitionEntry, TransitionKind, TransitionPlace, VapourPressure,
+    Coefficient, CoefficientForm, HeatCapacityEntry, LawText, PhaseBlock, PhaseEntry, Row, SpeciesBlock,
+    SpeciesEntry, SpeciesName, TransitionEntry, TransitionKind, TransitionPlace, VapourPressure,
 };
 pub use statement::{
-    Allow, Balance, BalanceEntry, Clause, ClauseKind, Column, Comparison, Condition, ConditionKind, Conversion, Correlate,
-    Duty, DutyClause, Head, Input, InputRole, InputValue, Item, Matter, MatterKind, Mixture, Participant, Part, Portion,
-    PortionShare, Reaction, Require, Requirement, ResultLine, Settle, Sought, State, Statement, Step, Table, Tree, Use,
-    UseFrom,
+    Allow, Balance, BalanceEntry, Clause, ClauseKind, Column, Comparison, Condition, ConditionKind,
+    Conversion, Correlate, Duty, DutyClause, Head, Input, InputRole, InputValue, Item, Matter, MatterKind,
+    Mixture, Part, Participant, Portion, PortionShare, Reaction, Require, Requirement, ResultLine, Settle,
+    Sought, State, Statement, Step, Table, Tree, Use, UseFrom,
 };

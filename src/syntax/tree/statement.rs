@@ -1,8 +1,6 @@
 //! Statements, in the order of the sheet.
 
-use super::{
-    Datum, Expression, Interval, SpeciesBlock, SpeciesName, Suffixes, Text, UnitText, Word,
-};
+use super::{Datum, Expression, Interval, SpeciesBlock, SpeciesName, Suffixes, Text, UnitText, Word};
 use crate::span::Span;
 
 /// A file as read: its statements in order.
@@ -421,4 +419,3 @@ pub struct Allow {
     /// Why.
     pub because: Option<Text>,
 }
-
