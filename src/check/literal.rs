@@ -149,7 +149,7 @@ impl Checker<'_> {
                     Code::BelowAbsoluteZero,
                     format!("`{}` is below absolute zero", self.written(datum.span)),
                 )
-                .label(datum.span, format!("{what}"))
+                .label(datum.span, what)
                 .help("0 K is -273.15 degC, or -459.67 degF"),
             );
             return None;

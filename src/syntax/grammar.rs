@@ -15,8 +15,6 @@ pub(super) fn is_keyword(rule: Rule) -> bool {
 
 #[cfg(test)]
 mod tests {
-    use super::*;
-
     #[test]
     fn keywords_stand_last_in_the_grammar() {
         let grammar = include_str!("../../grammar/sheet.pest");

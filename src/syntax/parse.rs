@@ -102,8 +102,7 @@ impl<'a> Reader<'a> {
     /// Keeps the words of a piece that could not be read, so that nobody complains of them again.
     fn give_up(&mut self, piece: &Piece) {
         let slice = &self.text[piece.range.clone()];
-        let head = &slice[..slice.floor_char_boundary(400)];
-        let declared = head.split(['=', ':', '{', '"']).next().unwrap_or_default();
+        let declared = slice.split(['=', ':', '{', '"']).next().unwrap_or_default();
         let words =
             declared.split(|c: char| !(c.is_alphanumeric() || c == '_')).filter(|word| !word.is_empty());
         self.broken.extend(words.skip(1).map(str::to_owned));

@@ -95,6 +95,7 @@ pub struct Input {
 
 /// The value of an input.
 #[derive(Debug, Clone, PartialEq)]
+#[allow(clippy::large_enum_variant)] // the large one is the usual one
 pub enum InputValue {
     /// `?`.
     Unknown(Span),
@@ -137,6 +138,7 @@ pub struct Portion {
 
 /// How much of a species a mixture holds.
 #[derive(Debug, Clone, PartialEq)]
+#[allow(clippy::large_enum_variant)] // the large one is the usual one
 pub enum PortionShare {
     /// What the others leave.
     Rest,
@@ -361,6 +363,7 @@ pub enum Comparison {
 
 /// What is required of a value.
 #[derive(Debug, Clone, PartialEq)]
+#[allow(clippy::large_enum_variant)] // a sheet has few of them
 pub enum Requirement {
     /// `<= limit` and its like.
     Compared(Comparison, Expression),
