@@ -2,7 +2,8 @@
 
 use super::checker::{Checker, Declared, Material};
 use crate::diagnostic::{Code, Diagnostic, nearest};
-use crate::library::{LoadError, Loaded, families, family};
+use crate::library::{LoadError, Loaded, NoFiles, families, family};
+use crate::source::Sources;
 use crate::program::Species;
 use crate::span::Span;
 use crate::syntax::parse_sheet;
@@ -155,6 +156,18 @@ impl Checker<'_> {
             Material::Species(id) => program.species.get(id.0).cloned(),
             _ => None,
         };
-        (!failed).then(|| materials.values().filter_map(usable).collect())
+        let mut declared: Vec<&Declared<Material>> = materials.values().collect();
+        declared.sort_by_key(|declared| declared.span);
+        (!failed).then(|| declared.into_iter().filter_map(usable).collect())
     }
+}
+
+/// The species of a family of the shipped library in the order of its sheet; `None` where there is no such family or
+/// it is at fault.
+pub fn check_family(name: &str) -> Option<Vec<Species>> {
+    let text = family(name)?.to_owned();
+    let mut sources = Sources::new();
+    let identity = format!("library:{name}");
+    let mut checker = Checker::new(&mut sources, &NoFiles, String::new());
+    checker.read_species(&Loaded { identity, name: format!("{name}.heat"), text })
 }

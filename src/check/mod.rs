@@ -34,3 +34,4 @@ mod unknowns;
 mod wanted;
 
 pub use checker::{Checked, check_sheet};
+pub use import::check_family;
