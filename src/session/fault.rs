@@ -8,6 +8,7 @@ use crate::report::number::significant;
 use crate::source::Sources;
 use crate::study::Sweep;
 use crate::thermo::{LocateError, SettleError};
+use crate::units::{Dimension, engineering_unit};
 
 /// Unknowns that wait for each other.
 pub(super) fn circle(program: &Program, step: StepId, state: StateId) -> Diagnostic {
@@ -56,10 +57,8 @@ pub(super) fn explain_row(
     let first = sweep.refused.first()?;
     let why = explain(program, lowered, &first.failure);
     let variable = program.quantities.get(table.over.0)?;
-    let unit = variable
-        .display
-        .clone()
-        .unwrap_or_else(|| crate::units::engineering_unit(variable.value.dimension, first.at));
+    let unit =
+        variable.display.clone().unwrap_or_else(|| engineering_unit(variable.value.dimension, first.at));
     let at = format!("{} {}", significant(unit.from_si(first.at, program.site.atmosphere), 8), unit.text);
     let line = why.place().map_or(0, |span| sources.line_column(span.file, span.start).0);
     let rows = count(sweep.refused.len(), "row");
@@ -103,6 +102,19 @@ impl Teller<'_> {
             _ => return "",
         };
         self.program.steps.get(id.0).map_or("", |step| step.name.as_str())
+    }
+
+    /// What the duty takes, W or J, in an engineer's unit.
+    fn duty_value(&self, si: f64) -> String {
+        let dimension = match &self.origin.kind {
+            OriginKind::Duty(id) => self.program.duties.get(id.0).map(|duty| match duty.over {
+                Some(_) => Dimension::POWER,
+                None => duty.value.dimension,
+            }),
+            _ => None,
+        };
+        let unit = engineering_unit(dimension.unwrap_or(Dimension::ENERGY), si);
+        format!("{} {}", significant(unit.from_si(si, 0.0), 6), unit.text)
     }
 
     fn locate(&self, error: LocateError, kelvin: f64, pascal: f64) -> Diagnostic {
@@ -262,13 +274,13 @@ impl Teller<'_> {
                 .found(
                     Code::PressuresDiffer,
                     format!(
-                        "`{step}` is at constant pressure, but leads from {} kPa to {} kPa abs",
+                        "`{step}` is at constant pressure, but its states stand at {} kPa and at {} kPa abs",
                         significant(a / 1e3, 6),
                         significant(b / 1e3, 6)
                     ),
                     "this step",
                 )
-                .help("give both ends one pressure, or choose another path"),
+                .help("give all its states one pressure, or choose another path"),
             Check::AgreedPressure => self
                 .found(
                     Code::PressureUnsaid,
@@ -284,13 +296,13 @@ impl Teller<'_> {
                 .found(
                     Code::TemperaturesDiffer,
                     format!(
-                        "`{step}` is at constant temperature, but leads from {} to {}",
+                        "`{step}` is at constant temperature, but its states stand at {} and at {}",
                         temperature(a),
                         temperature(b)
                     ),
                     "this step",
                 )
-                .help("give both ends one temperature, or choose another path"),
+                .help("give all its states one temperature, or choose another path"),
             Check::SameVolume => self
                 .found(
                     Code::VolumeChanges,
@@ -318,7 +330,7 @@ impl Teller<'_> {
             Check::Heating => self
                 .found(
                     Code::EfficiencyOnCooling,
-                    format!("an efficiency on a duty that cools, {x} W or J"),
+                    format!("an efficiency on a duty that cools, {}", self.duty_value(a)),
                     "this duty",
                 )
                 .help("leave the efficiency out: what a cooler takes away is the heat itself"),
