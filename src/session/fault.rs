@@ -138,9 +138,9 @@ impl Teller<'_> {
             }
             LocateError::OutsideRange { phase: at, lo, hi } => {
                 let (what, end) = if kelvin < lo.value {
-                    ("below", format!("from {} K", significant(kelvin, 7)))
+                    ("below", format!("from {} K", kelvin.floor()))
                 } else {
-                    ("above", format!("to {} K", significant(kelvin, 7)))
+                    ("above", format!("to {} K", kelvin.ceil()))
                 };
                 let (low, high) = (significant(lo.value, 7), significant(hi.value, 7));
                 self.found(
@@ -157,19 +157,22 @@ impl Teller<'_> {
                     format!("`{state}` lies at {here}, where `{name}` decomposes (above {} K)", significant(at.value, 7)),
                     format!("at {here}"),
                 )
-                .help(format!("if it can be defended: `allow {} to {} K because \"...\"`", phase(last), significant(kelvin, 7)))
+                .help(format!("if it can be defended: `allow {} to {} K because \"...\"`", phase(last), kelvin.ceil()))
             }
             LocateError::BoilingPressure { temperature: at } => self
                 .found(
                     Code::BoilingPressure,
                     format!(
-                        "`{state}` lies across the boiling point of `{name}`, {} K at 101.325 kPa, but at {} kPa abs",
-                        significant(at.value, 7),
-                        significant(pascal / 1e3, 6)
+                        "`{state}` stands at {} kPa abs, and the boiling point of `{name}`, {} K, holds at 101.325 kPa only",
+                        significant(pascal / 1e3, 6),
+                        significant(at.value, 7)
                     ),
                     format!("at {here}: liquid or gas?"),
                 )
-                .help(format!("name the phase where its matter is declared, such as `{}`", species.map_or(String::new(), gas_or_last))),
+                .help(format!(
+                    "name the phase where its matter is declared, such as `{}`",
+                    species.map_or(String::new(), |species| beside_boiling(species, kelvin > at.value))
+                )),
             LocateError::NoTransition => self
                 .found(
                     Code::ShareWithoutPlateau,
@@ -405,9 +408,9 @@ impl Teller<'_> {
     }
 }
 
-/// The gas phase of a species, or its last.
-fn gas_or_last(species: &Species) -> String {
-    species.in_phase(species.phases.len().saturating_sub(1))
+/// The phase above or below the boiling point: the last, or the one before it.
+fn beside_boiling(species: &Species, above: bool) -> String {
+    species.in_phase(species.phases.len().saturating_sub(if above { 1 } else { 2 }))
 }
 
 /// A temperature in both scales: `692.7 K (419.55 degC)`.
