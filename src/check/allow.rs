@@ -59,10 +59,31 @@ impl Checker<'_> {
             self.admits_nothing(span, &label, "leave it out, or give an end beyond the data");
             return;
         }
+        let again = species.allowances.iter().find(|first| {
+            let both = |a: Option<f64>, b: Option<f64>| a.is_some() && b.is_some();
+            first.phase == phase && (both(first.from, from) || both(first.to, to))
+        });
+        if let Some(first) = again.map(|first| first.span) {
+            self.allowed_twice(&allow.species.to_text(), first, span);
+            return;
+        }
         let allowance = Allowance { phase, from, to, because: because.text.clone(), span };
         if let Some(species) = self.program.species.get_mut(id.0) {
             species.allowances.push(allowance);
         }
+    }
+
+    /// Two reasons for one end: a report could not say which of them holds.
+    fn allowed_twice(&mut self, phase: &str, first: Span, span: Span) {
+        self.report(
+            Diagnostic::new(
+                Code::DatumTwice,
+                format!("a second allowance for one end of the data of `{phase}`"),
+            )
+            .label(span, "allowed again here")
+            .label(first, "allowed first here")
+            .help("keep one line for each end, with the reason that holds for all of it"),
+        );
     }
 
     fn admits_nothing(&mut self, span: Span, label: &str, help: &str) {

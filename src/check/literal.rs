@@ -46,9 +46,14 @@ impl Checker<'_> {
         negative: bool,
         span: Span,
     ) -> Option<Expr> {
-        let UnitError::Unknown { word, .. } = error else {
-            self.report(unit_error(error, text));
-            return None;
+        let word = match error {
+            UnitError::Unknown { word, .. } => word,
+            // a word that stands for several units, but for one value of this sheet
+            UnitError::Ambiguous { word, .. } if self.is_name(word) => word,
+            _ => {
+                self.report(unit_error(error, text));
+                return None;
+            }
         };
         if let Some(quotient) = self.quotient_by_names(literal, text) {
             let value = self.expression(&quotient)?;

@@ -206,7 +206,7 @@ impl Checker<'_> {
         };
         let mut parts: Vec<(Vec<(Constituent, f64)>, f64)> = Vec::new();
         let shares = self.shares(mixture);
-        let mut complete = shares.is_some();
+        let mut complete = shares.is_some() && self.each_once(mixture);
         for (at, portion) in mixture.portions.iter().enumerate() {
             let share = shares.as_ref().and_then(|shares| shares.get(at)).copied().unwrap_or(0.0);
             match self.portion(&portion.species, counted) {
@@ -228,6 +228,25 @@ impl Checker<'_> {
             .collect();
         self.phases_said(&by_mass.iter().map(|(part, _)| *part).collect::<Vec<_>>(), &pinned)?;
         Some(Blend { portions: by_mass })
+    }
+
+    /// A part given twice is a slip as likely as a sum.
+    fn each_once(&mut self, mixture: &Mixture) -> bool {
+        let text = |at: usize| mixture.portions.get(at).map(|portion| portion.species.to_text());
+        let again = (1..mixture.portions.len())
+            .find_map(|at| (0..at).find(|first| text(*first) == text(at)).map(|first| (first, at)));
+        let Some((first, at)) = again else { return true };
+        let (first, again) = (&mixture.portions[first], &mixture.portions[at]);
+        self.report(
+            Diagnostic::new(
+                Code::ShareWrong,
+                format!("`{}` is given twice in one mixture", again.species.to_text()),
+            )
+            .label(again.span, "given again here")
+            .label(first.span, "given first here")
+            .help("give each part once, with the share of all of it"),
+        );
+        false
     }
 
     fn named(&self, part: &Constituent, name: &SpeciesName) -> bool {
@@ -262,7 +281,7 @@ impl Checker<'_> {
         }
         let sum: f64 = shares.iter().sum();
         match rest {
-            Some((at, _)) if sum < 1.0 => {
+            Some((at, _)) if sum < 1.0 - CLOSURE => {
                 shares[at] = 1.0 - sum;
                 Some(shares)
             }

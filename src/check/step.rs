@@ -262,6 +262,17 @@ impl Checker<'_> {
                 );
                 None
             }
+            Path::IsothermalReversible | Path::AdiabaticReversible if from.len() > 1 || to.len() > 1 => {
+                self.report(
+                    Diagnostic::new(
+                        Code::ReversibleMixing,
+                        format!("`{}` of several states at once", path.as_str()),
+                    )
+                    .label(span, "streams that mix or part are not reversible")
+                    .help("declare `state all = a + b at ...` before the step, and let it lead from one state to one state"),
+                );
+                None
+            }
             _ => Some(()),
         }
     }

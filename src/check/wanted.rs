@@ -2,7 +2,7 @@
 
 use super::checker::Checker;
 use crate::diagnostic::{Code, Diagnostic, or_list};
-use crate::program::Expr;
+use crate::program::{Expr, Node};
 use crate::span::Span;
 use crate::syntax::tree::Expression;
 use crate::units::{Dimension, Kind};
@@ -29,10 +29,11 @@ impl Checker<'_> {
             return Some(());
         }
         let text = self.written(value.span);
+        let term = if matches!(value.node, Node::Sum(_)) { format!("({text})") } else { text.clone() };
         let way_out = if value.dimension == Dimension::TEMPERATURE {
-            format!("add it to a temperature: `20 degC + {text}`")
+            format!("add it to a temperature: `20 degC + {term}`")
         } else {
-            format!("add it to a pressure: `1 bar + {text}`")
+            format!("add it to a pressure: `1 bar + {term}`")
         };
         self.report(
             Diagnostic::new(

@@ -143,6 +143,7 @@ codes! {
     FlowAndBatch "T611" Error "a flow beside a batch";
     GasPathOnly "T614" Error "a path for gases only";
     FlowPathOnly "T615" Error "a path for flows only";
+    ReversibleMixing "T616" Error "a reversible path that mixes or parts states";
     MaterialTurned "T617" Error "one material turned into another without formation enthalpies";
     ShareWithoutPlateau "T618" Error "a share of a phase that cannot be placed";
     SymbolWanted "T619" Error "a species whose phase is not said";

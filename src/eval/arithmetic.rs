@@ -110,6 +110,9 @@ pub(super) fn log_mean(a: f64, b: f64) -> f64 {
     let ratio = a / b;
     if a == b && a != 0.0 {
         a
+    } else if (0.5..=2.0).contains(&ratio) {
+        // near one another the difference is exact, and the logarithm of the rounded ratio is not
+        (a - b) / math::ln_1p((a - b) / b)
     } else if ratio > 0.0 {
         (a - b) / math::ln(ratio)
     } else {

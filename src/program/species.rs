@@ -122,6 +122,17 @@ impl Species {
         }
     }
 
+    /// What allows this phase at a temperature in K beyond its data, or where the species decomposes.
+    pub fn allowed(&self, phase: usize, kelvin: f64) -> Option<&Allowance> {
+        let (lo, hi) = self.curve.phase_span(phase)?;
+        let decomposed = self.curve.decomposes_at().is_some_and(|at| kelvin > at.value);
+        let (below, above) = (kelvin < lo.value, kelvin > hi.value || decomposed);
+        self.allowances.iter().find(|allowance| {
+            let reaches = (below && allowance.from.is_some()) || (above && allowance.to.is_some());
+            allowance.phase == phase && reaches
+        })
+    }
+
     /// Whether it can be a gas and something else, so that its phase beside another gas must be said.
     pub fn can_condense(&self) -> bool {
         let gas = self.phases.iter().any(|phase| phase.class == PhaseClass::Gas);

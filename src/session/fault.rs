@@ -8,6 +8,7 @@ use crate::report::number::significant;
 use crate::source::Sources;
 use crate::study::Sweep;
 use crate::thermo::{LocateError, SettleError};
+use crate::units::{Dimension, engineering_unit};
 
 /// Unknowns that wait for each other.
 pub(super) fn circle(program: &Program, step: StepId, state: StateId) -> Diagnostic {
@@ -56,10 +57,8 @@ pub(super) fn explain_row(
     let first = sweep.refused.first()?;
     let why = explain(program, lowered, &first.failure);
     let variable = program.quantities.get(table.over.0)?;
-    let unit = variable
-        .display
-        .clone()
-        .unwrap_or_else(|| crate::units::engineering_unit(variable.value.dimension, first.at));
+    let unit =
+        variable.display.clone().unwrap_or_else(|| engineering_unit(variable.value.dimension, first.at));
     let at = format!("{} {}", significant(unit.from_si(first.at, program.site.atmosphere), 8), unit.text);
     let line = why.place().map_or(0, |span| sources.line_column(span.file, span.start).0);
     let rows = count(sweep.refused.len(), "row");
@@ -105,6 +104,19 @@ impl Teller<'_> {
         self.program.steps.get(id.0).map_or("", |step| step.name.as_str())
     }
 
+    /// What the duty takes, W or J, in an engineer's unit.
+    fn duty_value(&self, si: f64) -> String {
+        let dimension = match &self.origin.kind {
+            OriginKind::Duty(id) => self.program.duties.get(id.0).map(|duty| match duty.over {
+                Some(_) => Dimension::POWER,
+                None => duty.value.dimension,
+            }),
+            _ => None,
+        };
+        let unit = engineering_unit(dimension.unwrap_or(Dimension::ENERGY), si);
+        format!("{} {}", significant(unit.from_si(si, 0.0), 6), unit.text)
+    }
+
     fn locate(&self, error: LocateError, kelvin: f64, pascal: f64) -> Diagnostic {
         let (state, species) = self.state();
         let name = species.map_or("the species", |species| species.name.as_str());
@@ -126,9 +138,9 @@ impl Teller<'_> {
             }
             LocateError::OutsideRange { phase: at, lo, hi } => {
                 let (what, end) = if kelvin < lo.value {
-                    ("below", format!("from {} K", significant(kelvin, 7)))
+                    ("below", format!("from {} K", kelvin.floor()))
                 } else {
-                    ("above", format!("to {} K", significant(kelvin, 7)))
+                    ("above", format!("to {} K", kelvin.ceil()))
                 };
                 let (low, high) = (significant(lo.value, 7), significant(hi.value, 7));
                 self.found(
@@ -145,19 +157,22 @@ impl Teller<'_> {
                     format!("`{state}` lies at {here}, where `{name}` decomposes (above {} K)", significant(at.value, 7)),
                     format!("at {here}"),
                 )
-                .help(format!("if it can be defended: `allow {} to {} K because \"...\"`", phase(last), significant(kelvin, 7)))
+                .help(format!("if it can be defended: `allow {} to {} K because \"...\"`", phase(last), kelvin.ceil()))
             }
             LocateError::BoilingPressure { temperature: at } => self
                 .found(
                     Code::BoilingPressure,
                     format!(
-                        "`{state}` lies across the boiling point of `{name}`, {} K at 101.325 kPa, but at {} kPa abs",
-                        significant(at.value, 7),
-                        significant(pascal / 1e3, 6)
+                        "`{state}` stands at {} kPa abs, and the boiling point of `{name}`, {} K, holds at 101.325 kPa only",
+                        significant(pascal / 1e3, 6),
+                        significant(at.value, 7)
                     ),
                     format!("at {here}: liquid or gas?"),
                 )
-                .help(format!("name the phase where its matter is declared, such as `{}`", species.map_or(String::new(), gas_or_last))),
+                .help(format!(
+                    "name the phase where its matter is declared, such as `{}`",
+                    species.map_or(String::new(), |species| beside_boiling(species, kelvin > at.value))
+                )),
             LocateError::NoTransition => self
                 .found(
                     Code::ShareWithoutPlateau,
@@ -262,13 +277,13 @@ impl Teller<'_> {
                 .found(
                     Code::PressuresDiffer,
                     format!(
-                        "`{step}` is at constant pressure, but leads from {} kPa to {} kPa abs",
+                        "`{step}` is at constant pressure, but its states stand at {} kPa and at {} kPa abs",
                         significant(a / 1e3, 6),
                         significant(b / 1e3, 6)
                     ),
                     "this step",
                 )
-                .help("give both ends one pressure, or choose another path"),
+                .help("give all its states one pressure, or choose another path"),
             Check::AgreedPressure => self
                 .found(
                     Code::PressureUnsaid,
@@ -284,13 +299,13 @@ impl Teller<'_> {
                 .found(
                     Code::TemperaturesDiffer,
                     format!(
-                        "`{step}` is at constant temperature, but leads from {} to {}",
+                        "`{step}` is at constant temperature, but its states stand at {} and at {}",
                         temperature(a),
                         temperature(b)
                     ),
                     "this step",
                 )
-                .help("give both ends one temperature, or choose another path"),
+                .help("give all its states one temperature, or choose another path"),
             Check::SameVolume => self
                 .found(
                     Code::VolumeChanges,
@@ -318,7 +333,7 @@ impl Teller<'_> {
             Check::Heating => self
                 .found(
                     Code::EfficiencyOnCooling,
-                    format!("an efficiency on a duty that cools, {x} W or J"),
+                    format!("an efficiency on a duty that cools, {}", self.duty_value(a)),
                     "this duty",
                 )
                 .help("leave the efficiency out: what a cooler takes away is the heat itself"),
@@ -393,9 +408,9 @@ impl Teller<'_> {
     }
 }
 
-/// The gas phase of a species, or its last.
-fn gas_or_last(species: &Species) -> String {
-    species.in_phase(species.phases.len().saturating_sub(1))
+/// The phase above or below the boiling point: the last, or the one before it.
+fn beside_boiling(species: &Species, above: bool) -> String {
+    species.in_phase(species.phases.len().saturating_sub(if above { 1 } else { 2 }))
 }
 
 /// A temperature in both scales: `692.7 K (419.55 degC)`.

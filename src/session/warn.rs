@@ -21,7 +21,7 @@ fn extrapolated(sheet: &WorkedSheet<'_>) -> Vec<Diagnostic> {
             };
             let Some(species) = sheet.program.species.get(part.species.0) else { continue };
             let phase = species.curve.phases_at(place).lower.0;
-            let allowed = species.allowances.iter().find(|allowance| allowance.phase == phase);
+            let allowed = species.allowed(phase, place.temperature().value);
             let why =
                 allowed.map_or(String::new(), |allowance| format!(", allowed because {}", allowance.because));
             let message = format!(

@@ -93,11 +93,17 @@ fn evaluated(program: &Program, lowered: &Lowered, diagnostics: &mut Vec<Diagnos
     let needed = lowered.plan.needed(&required(program, &lowered.map));
     for failure in frame.failures.iter().filter(|failure| needed.get(failure.op) == Some(&true)) {
         let found = explain(program, lowered, failure);
-        if !diagnostics.contains(&found) {
+        if !diagnostics.iter().any(|known| says_the_same(known, &found)) {
             diagnostics.push(found);
         }
     }
     frame
+}
+
+/// Whether a finding tells nothing new: a step between three pressures has one mistake, not two.
+fn says_the_same(known: &Diagnostic, found: &Diagnostic) -> bool {
+    let once = matches!(found.code, Code::PressuresDiffer | Code::TemperaturesDiffer);
+    known == found || (once && known.code == found.code && known.place() == found.place())
 }
 
 fn tables(

@@ -161,6 +161,19 @@ fn warnings_stand_in_the_report_and_not_beside_it() {
     assert_eq!(printed.pointer("/diagnostics/0/code").and_then(Value::as_str), Some("W102"));
 }
 
+/// A pressure drop is neither absolute nor gauge, whatever name it goes by.
+#[test]
+fn a_difference_of_pressures_is_not_marked_absolute() {
+    let sheet = "basis before = 3 bar\nbasis after = 2.5 bar\nlet drop = before - after\nresult fall = drop in mbar\n\
+                 table \"Falls\": fall, drop in kPa, before over before from 3 bar to 4 bar by 1 bar\n";
+    let ran = heatpath_reading(&["run", "-"], sheet.as_bytes());
+    assert_eq!(ran.status, Some(0), "{}", ran.stderr);
+    let words: Vec<_> =
+        ran.stdout.lines().map(|line| line.split_whitespace().collect::<Vec<_>>().join(" ")).collect();
+    assert!(words.iter().any(|line| line == "= 500 mbar"), "{}", ran.stdout);
+    assert!(words.iter().any(|line| line == "bar abs mbar kPa bar abs"), "{}", ran.stdout);
+}
+
 #[test]
 fn what_is_piped_is_plain_unless_colour_is_asked_for() {
     let escape = '\u{1b}';

@@ -55,7 +55,6 @@ fn data_row(species: &Species, datum: &Datum, (from, to): (f64, f64)) -> DataRow
     let dated = !matches!(datum.kind, DatumKind::MolarMass | DatumKind::Decomposition);
     let beyond = datum.valid.is_some_and(|(lo, hi)| from < lo - 1e-9 || to > hi + 1e-9);
     let extrapolated = beyond && matches!(datum.kind, DatumKind::HeatCapacity { .. });
-    let allowed = species.allowances.iter().find(|allowance| Some(allowance.phase) == at);
     DataRow {
         species: species.name.clone(),
         phase: name,
@@ -67,8 +66,19 @@ fn data_row(species: &Species, datum: &Datum, (from, to): (f64, f64)) -> DataRow
         interval: datum.interval.clone(),
         spread: datum.spread.clone(),
         extrapolated,
-        because: allowed.filter(|_| extrapolated).map(|allowance| allowance.because.clone()),
+        because: at.filter(|_| extrapolated).and_then(|at| reasons(species, at, (from, to))),
     }
+}
+
+/// Why the data of a phase are used beyond their ends, below and above.
+fn reasons(species: &Species, phase: usize, (from, to): (f64, f64)) -> Option<String> {
+    let mut reasons: Vec<&str> = [from, to]
+        .into_iter()
+        .filter_map(|kelvin| species.allowed(phase, kelvin))
+        .map(|one| one.because.as_str())
+        .collect();
+    reasons.dedup();
+    (!reasons.is_empty()).then(|| reasons.join("; "))
 }
 
 /// The word that a transition's line begins with.

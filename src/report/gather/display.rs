@@ -26,7 +26,20 @@ impl WorkedSheet<'_> {
             (Node::Quantity(id), None) => self.unit_of(*id),
             _ => None,
         };
-        self.shown(si, expr.dimension, own.as_ref(), is_difference(expr))
+        self.shown(si, expr.dimension, own.as_ref(), self.is_difference(expr))
+    }
+
+    /// Whether a pressure or temperature is a difference: known as one, or made by taking one from another, here or
+    /// where its name is given its value.
+    pub(super) fn is_difference(&self, expr: &Expr) -> bool {
+        match (&expr.node, expr.kind) {
+            (_, Kind::Difference) => true,
+            (Node::Sum(terms), Kind::Open) => terms.iter().any(|(taken_away, _)| *taken_away),
+            (Node::Quantity(id), Kind::Open) => {
+                self.program.quantities.get(id.0).is_some_and(|named| self.is_difference(&named.value))
+            }
+            _ => false,
+        }
     }
 
     /// The unit in which a named quantity is shown.
@@ -38,15 +51,6 @@ impl WorkedSheet<'_> {
 /// A unit of the table of units, by its text.
 pub(super) fn unit(text: &str) -> Option<Unit> {
     read_unit(text).ok()
-}
-
-/// Whether a pressure or temperature is a difference: known as one, or made by taking one from another.
-pub(super) fn is_difference(expr: &Expr) -> bool {
-    match (&expr.node, expr.kind) {
-        (_, Kind::Difference) => true,
-        (Node::Sum(terms), Kind::Open) => terms.iter().any(|(taken_away, _)| *taken_away),
-        _ => false,
-    }
 }
 
 fn pressure_basis(unit: &Unit, difference: bool) -> PressureBasis {

@@ -1,6 +1,5 @@
 //! Formulas with numbers put in.
 
-use super::display::is_difference;
 use super::worked::WorkedSheet;
 use crate::plan::Slot;
 use crate::program::{DutyMember, Expr, Node, StateMember, StepMember};
@@ -95,7 +94,7 @@ impl WorkedSheet<'_> {
 
     fn named(&self, expr: &Expr, slot: Option<Slot>, unit: Option<&Unit>) -> String {
         let Some(slot) = slot else { return self.sources.line_of(expr.span) };
-        shown(&self.shown(self.value(slot), expr.dimension, unit, is_difference(expr)))
+        shown(&self.shown(self.value(slot), expr.dimension, unit, self.is_difference(expr)))
     }
 
     fn state_member(&self, expr: &Expr, id: usize, member: &StateMember) -> String {

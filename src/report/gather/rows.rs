@@ -2,7 +2,7 @@
 
 use super::caution::advice;
 use super::data::species_row;
-use super::display::{is_difference, unit};
+use super::display::unit;
 use super::usage::Usage;
 use super::worked::WorkedSheet;
 use crate::diagnostic::Severity;
@@ -209,7 +209,7 @@ impl WorkedSheet<'_> {
         };
         let shown_in = self.limit_unit(&requirement.value, first, value);
         let show =
-            |si: f64, expr: &Expr| self.shown(si, expr.dimension, Some(&shown_in), is_difference(expr));
+            |si: f64, expr: &Expr| self.shown(si, expr.dimension, Some(&shown_in), self.is_difference(expr));
         Some(RequirementRow {
             written: requirement.text.clone(),
             found: show(value, &requirement.value),
