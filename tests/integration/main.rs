@@ -2,6 +2,7 @@
 
 mod cli;
 mod corpus;
+mod examples;
 mod mutated;
 mod program;
 mod reference;
