@@ -6,6 +6,7 @@ mod corpus;
 mod examples;
 mod mutated;
 mod program;
+mod readme;
 mod reference;
 mod reference_pages;
 mod robust;
