@@ -9,6 +9,7 @@ mod arithmetic;
 mod call;
 mod checker;
 mod condition;
+mod consistency;
 mod constant;
 mod curve_error;
 mod datum;

@@ -5,7 +5,8 @@ use super::status::Status;
 use super::streams::{complain, print};
 use crate::diagnostic::nearest;
 use crate::report::{
-    SpeciesPage, render_plot, render_species_json, render_species_list, render_species_list_json, render_species_page,
+    SpeciesPage, render_plot, render_species_json, render_species_list, render_species_list_json,
+    render_species_page,
 };
 use crate::session::library_pages;
 
@@ -25,7 +26,9 @@ pub(super) fn species(arguments: &SpeciesArguments) -> Status {
     }
     let text = match arguments.format {
         Format::Json => render_species_json(&found),
-        Format::Text => found.iter().map(|page| page_text(page, arguments.plot)).collect::<Vec<_>>().join("\n"),
+        Format::Text => {
+            found.iter().map(|page| page_text(page, arguments.plot)).collect::<Vec<_>>().join("\n")
+        }
     };
     print(&text, Status::Well)
 }
@@ -45,7 +48,8 @@ fn found<'a>(pages: &'a [SpeciesPage], word: &str) -> Vec<&'a SpeciesPage> {
 }
 
 fn unknown(pages: &[SpeciesPage], word: &str) -> Status {
-    let names = pages.iter().flat_map(|page| std::iter::once(page.name.as_str()).chain(page.label.as_deref()));
+    let names =
+        pages.iter().flat_map(|page| std::iter::once(page.name.as_str()).chain(page.label.as_deref()));
     let help = match nearest(word.trim(), names) {
         Some(near) => format!("`{near}` is the nearest; `heatpath species` lists all"),
         None => "`heatpath species` lists all; a sheet can bring its own with a `species` block".to_owned(),

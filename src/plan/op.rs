@@ -157,7 +157,11 @@ pub enum Op {
         to: Slot,
     },
     /// `value` goes on where `given` is known: it is the same, without its rounding.
-    Known { value: Slot, given: Slot, to: Slot },
+    Known {
+        value: Slot,
+        given: Slot,
+        to: Slot,
+    },
     /// `value` goes on where the check holds.
     Guard {
         check: Check,

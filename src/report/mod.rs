@@ -25,7 +25,7 @@ pub use model::{
     TableRow, TableRows,
 };
 pub use species::{
-    PageChange, PageDatum, PagePhase, PageRow, SpeciesPage, render_plot, render_species_json, render_species_list,
-    render_species_list_json, render_species_page, species_page,
+    PageChange, PageDatum, PagePhase, PageRow, SpeciesPage, render_plot, render_species_json,
+    render_species_list, render_species_list_json, render_species_page, species_page,
 };
 pub use text::{Style, render_text};

@@ -31,7 +31,8 @@ impl Builder<'_> {
         let change = self.change_or_stated(step, Total::Enthalpy, Law::Enthalpy)?;
         let enthalpy_change = self.conserved(id, step, change)?;
         self.from(step.span, OriginKind::Step(id));
-        let internal_energy_change = self.change_or_stated(step, Total::InternalEnergy, Law::InternalEnergy)?;
+        let internal_energy_change =
+            self.change_or_stated(step, Total::InternalEnergy, Law::InternalEnergy)?;
         let volume_change = self.change(step, Total::VolumeOrNothing)?;
         let mut slots = StepSlots {
             enthalpy_change,

@@ -78,7 +78,8 @@ fn place(species: &Species, phase: usize, kelvin: f64) -> Option<Place> {
 /// The enthalpy from which a page counts: that of the stable phase at 298.15 K.
 fn reference(species: &Species) -> Option<f64> {
     let allowance = Allowance::none();
-    let at = species.curve.place(quantity(298.15), quantity(ATMOSPHERE), Pin::Stable, None, allowance).ok()?;
+    let at =
+        species.curve.place(quantity(298.15), quantity(ATMOSPHERE), Pin::Stable, None, allowance).ok()?;
     Some(species.curve.enthalpy(at).value)
 }
 
@@ -104,7 +105,8 @@ fn rows(species: &Species, phases: &[PagePhase]) -> Vec<PageRow> {
 
 /// The temperatures between the transitions beside a phase, as far as it has data.
 fn stable_span(species: &Species, phase: usize, info: &PagePhase) -> (f64, f64) {
-    let below = phase.checked_sub(1).and_then(|link| species.curve.transition(link)).map(|change| change.to.value);
+    let below =
+        phase.checked_sub(1).and_then(|link| species.curve.transition(link)).map(|change| change.to.value);
     let above = species.curve.transition(phase).map(|change| change.from.value);
     let decomposes = species.curve.decomposes_at().map_or(f64::INFINITY, |at| at.value);
     let lo = below.unwrap_or(info.kelvin.0);

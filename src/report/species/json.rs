@@ -99,7 +99,11 @@ fn full(page: &SpeciesPage) -> Full<'_> {
         molar_mass_kg_mol: page.molar_mass,
         decomposes_K: page.decomposes,
         absolute: page.absolute,
-        ranges_K: page.phases.iter().map(|phase| (phase.name.as_str(), phase.kelvin.0, phase.kelvin.1)).collect(),
+        ranges_K: page
+            .phases
+            .iter()
+            .map(|phase| (phase.name.as_str(), phase.kelvin.0, phase.kelvin.1))
+            .collect(),
         transitions: page
             .changes
             .iter()

@@ -93,7 +93,8 @@ impl SpeciesPage {
     /// Whether a word finds it: a part of its name, its plain name or its formula, or its CAS number.
     pub fn matches(&self, word: &str) -> bool {
         let word = word.trim().to_lowercase();
-        let holds = |text: &Option<String>| text.as_ref().is_some_and(|text| text.to_lowercase().contains(&word));
+        let holds =
+            |text: &Option<String>| text.as_ref().is_some_and(|text| text.to_lowercase().contains(&word));
         self.name.to_lowercase() == word
             || self.formula.as_ref().is_some_and(|formula| formula.to_lowercase() == word)
             || holds(&self.label)

@@ -29,7 +29,10 @@ fn mark(phase: usize) -> char {
 
 fn drawn(points: &[(usize, f64, f64)]) -> String {
     let ends = |of: fn(&(usize, f64, f64)) -> f64| {
-        points.iter().map(of).fold((f64::INFINITY, f64::NEG_INFINITY), |(lo, hi), value| (lo.min(value), hi.max(value)))
+        points
+            .iter()
+            .map(of)
+            .fold((f64::INFINITY, f64::NEG_INFINITY), |(lo, hi), value| (lo.min(value), hi.max(value)))
     };
     let (left, right) = ends(|point| point.1);
     let (mut low, high) = ends(|point| point.2);

@@ -107,7 +107,11 @@ fn wrapped(indent: &str, text: &str) -> String {
 fn heating(page: &SpeciesPage) -> String {
     let mut rows = Vec::new();
     for (at, phase) in page.phases.iter().enumerate() {
-        let by = if phase.linked { String::new() } else { format!("reached by its symbol, {}({})", page.name, phase.symbol) };
+        let by = if phase.linked {
+            String::new()
+        } else {
+            format!("reached by its symbol, {}({})", page.name, phase.symbol)
+        };
         let class = if phase.class == phase.name { String::new() } else { format!(", {}", phase.class) };
         rows.push(vec![
             format!("  {}{class}", phase.name),
@@ -116,8 +120,14 @@ fn heating(page: &SpeciesPage) -> String {
         ]);
         let name = &phase.name;
         let next = page.phases.get(at + 1).map(|phase| &phase.name);
-        if let Some(change) = page.changes.iter().find(|change| &change.between.0 == name && Some(&change.between.1) == next) {
-            rows.push(vec![format!("    to {}", change.between.1), range("", change.kelvin.0, change.kelvin.1), takes(change, page)]);
+        if let Some(change) =
+            page.changes.iter().find(|change| &change.between.0 == name && Some(&change.between.1) == next)
+        {
+            rows.push(vec![
+                format!("    to {}", change.between.1),
+                range("", change.kelvin.0, change.kelvin.1),
+                takes(change, page),
+            ]);
         }
     }
     columns(rows, &[])
