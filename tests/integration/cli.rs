@@ -174,6 +174,18 @@ fn a_difference_of_pressures_is_not_marked_absolute() {
     assert!(words.iter().any(|line| line == "bar abs mbar kPa bar abs"), "{}", ran.stdout);
 }
 
+/// Data that begin just above 298.15 K carry an absolute enthalpy from there, and the report says so.
+#[test]
+fn an_absolute_enthalpy_shows_the_range_that_it_uses() {
+    let sheet = "species Ar \"argon\" {\n formula Ar\n source \"invented\"\n formation 0 kJ/mol at 298.15 K\n phase gas {\n\
+                 cp = 20.786 J/(mol K) for 300 K to 1000 K\n }\n}\nstate hot = 1 mol of Ar at 400 K\nresult h = hot.H in kJ\n";
+    let ran = heatpath_reading(&["run", "-"], sheet.as_bytes());
+    assert_eq!(ran.status, Some(0), "{}", ran.stderr);
+    let text = ran.stdout.split_whitespace().collect::<Vec<_>>().join(" ");
+    assert!(text.contains("valid 300 K to 1000 K; used 298.15 K to 400 K"), "{text}");
+    assert!(text.contains("no more than 2 K above 298.15 K"), "{text}");
+}
+
 #[test]
 fn what_is_piped_is_plain_unless_colour_is_asked_for() {
     let escape = '\u{1b}';

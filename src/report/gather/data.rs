@@ -77,6 +77,9 @@ fn reasons(species: &Species, phase: usize, (from, to): (f64, f64)) -> Option<St
         .filter_map(|kelvin| species.allowed(phase, kelvin))
         .map(|one| one.because.as_str())
         .collect();
+    if reasons.is_empty() && from >= 298.15 - 1e-9 {
+        reasons.push("it begins no more than 2 K above 298.15 K, where enthalpies are counted from");
+    }
     reasons.dedup();
     (!reasons.is_empty()).then(|| reasons.join("; "))
 }
