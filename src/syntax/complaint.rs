@@ -171,7 +171,8 @@ fn blank_in_unit(place: &Place<'_>) -> Option<Diagnostic> {
     let tail_len =
         place.rest().find(|c: char| c.is_whitespace() || ",)}#".contains(c)).unwrap_or(place.rest().len());
     let tail = &place.rest()[..tail_len];
-    if !(digits && unit_like) || words::find(words::STATEMENTS, word).is_some() || word.chars().count() > 4 {
+    let no_unit = words::find(words::STATEMENTS, word).is_some() || words::RESERVED.contains(&word);
+    if !(digits && unit_like) || no_unit || word.chars().count() > 4 {
         return None;
     }
     let whole = match unit.rsplit_once('/') {
@@ -193,11 +194,7 @@ fn blank_further_on(place: &Place<'_>) -> Option<Diagnostic> {
     let next = first_word(rest[first.len()..].trim_start());
     let number = place.before().ends_with(|c: char| c.is_ascii_digit());
     let unit_like = first.starts_with(char::is_alphabetic) && !first.contains(['=', ',', '}']);
-    if !number
-        || !unit_like
-        || next.is_empty()
-        || ["in", "of", "at", "to", "by", "from", "for", "is", "takes"].contains(&next)
-    {
+    if !number || !unit_like || next.is_empty() || words::RESERVED.contains(&next) {
         return None;
     }
     blank_in_unit(&Place {
