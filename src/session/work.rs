@@ -2,7 +2,7 @@
 
 use super::fault::{circle, explain, explain_row};
 use super::outputs::required;
-use super::warn::warnings;
+use super::warn::{densities_beyond, warnings};
 use crate::check::check_sheet;
 use crate::diagnostic::{Code, Diagnostic};
 use crate::eval::{self, Frame};
@@ -79,6 +79,11 @@ pub fn run(name: &str, identity: &str, text: &str, loader: &dyn Loader) -> Worke
         findings: &[],
         file: name,
     };
+    diagnostics.extend(densities_beyond(&sheet));
+    if diagnostics.iter().any(Diagnostic::is_error) {
+        in_order(&mut diagnostics);
+        return Worked { sources, diagnostics, report: None };
+    }
     diagnostics.extend(warnings(&sheet));
     diagnostics.extend(find_cautions(&sheet));
     in_order(&mut diagnostics);

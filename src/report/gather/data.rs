@@ -54,7 +54,8 @@ fn data_row(species: &Species, datum: &Datum, (from, to): (f64, f64)) -> DataRow
     };
     let dated = !matches!(datum.kind, DatumKind::MolarMass | DatumKind::Decomposition);
     let beyond = datum.valid.is_some_and(|(lo, hi)| from < lo - 1e-9 || to > hi + 1e-9);
-    let extrapolated = beyond && matches!(datum.kind, DatumKind::HeatCapacity { .. });
+    let extrapolated =
+        beyond && matches!(datum.kind, DatumKind::HeatCapacity { .. } | DatumKind::Density { .. });
     DataRow {
         species: species.name.clone(),
         phase: name,
