@@ -264,7 +264,13 @@ impl Checker<'_> {
                 if state.constituents.iter().any(|part| part.species != first) {
                     let example =
                         self.program.species.get(first.0).map_or("Zn", |species| species.name.as_str());
-                    let help = format!("write `fraction({example}(l))`");
+                    let symbol = match name.name.as_str() {
+                        "solid" => "s",
+                        "liquid" => "l",
+                        "gas" | "vapour" | "vapor" => "g",
+                        other => other,
+                    };
+                    let help = format!("write `fraction({example}({symbol}))`");
                     self.report(
                         Diagnostic::new(
                             Code::UnknownPhase,

@@ -74,6 +74,11 @@ impl Checker<'_> {
                 return;
             }
         }
+        if let Limit::Within(low, high) = &limit
+            && self.turned_round(low, high)
+        {
+            return;
+        }
         self.program.requirements.push(program::Requirement {
             text: self.sources.line_of(line.condition),
             value,
@@ -82,6 +87,20 @@ impl Checker<'_> {
             span: line.condition,
         });
         self.program.order.push(Entry::Requirement(self.program.requirements.len() - 1));
+    }
+
+    /// No value lies from a higher limit to a lower one.
+    fn turned_round(&mut self, low: &Expr, high: &Expr) -> bool {
+        let empty = value_of(low).zip(value_of(high)).is_some_and(|(low, high)| low > high);
+        if empty {
+            let (from, to) = (self.written(low.span), self.written(high.span));
+            self.report(
+                Diagnostic::new(Code::BadInterval, format!("no value lies from `{from}` to `{to}`"))
+                    .label(low.span.to(high.span), "the lower limit comes first")
+                    .help(format!("write `within {to} to {from}`")),
+            );
+        }
+        empty
     }
 
     fn can_compare(&mut self, value: &Expr, limit: &Expr) -> Option<()> {

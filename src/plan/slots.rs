@@ -3,6 +3,7 @@
 use super::{PlaceSlot, Slot};
 use crate::program::{DutyId, StateId, StepId, Unknown};
 use crate::span::Span;
+use std::collections::BTreeMap;
 
 /// What an operation was made for.
 #[derive(Debug, Clone, PartialEq)]
@@ -120,6 +121,8 @@ pub struct SlotMap {
     pub requirements: Vec<LimitSlots>,
     /// The tables.
     pub tables: Vec<TableSlots>,
+    /// The members of states and steps, `cold.V` or `heat_up.latent`, by their places in the sheet.
+    pub members: BTreeMap<Span, Slot>,
     /// The origins of the operations.
     pub origins: Vec<Origin>,
 }

@@ -1,7 +1,7 @@
 //! Warnings that only a worked sheet can give.
 
 use crate::diagnostic::{Code, Diagnostic, and_list};
-use crate::program::{Node, StepId, StepMember};
+use crate::program::{DatumKind, Node, StateId, StateMember, StepId, StepMember};
 use crate::report::WorkedSheet;
 use std::collections::BTreeSet;
 
@@ -35,6 +35,57 @@ fn extrapolated(sheet: &WorkedSheet<'_>) -> Vec<Diagnostic> {
                 diagnostic = diagnostic.label(allowance.span, "allowed here");
             }
             found.push(diagnostic.help("look for data that reach there"));
+        }
+    }
+    found
+}
+
+/// States whose volume is asked, and condensed matter in them whose density is not given at their temperature.
+pub(super) fn densities_beyond(sheet: &WorkedSheet<'_>) -> Vec<Diagnostic> {
+    let mut asked: BTreeSet<StateId> = BTreeSet::new();
+    sheet.each_expression(&mut |expr| match &expr.node {
+        Node::State(id, StateMember::Volume | StateMember::Density) => {
+            asked.insert(*id);
+        }
+        Node::Step(id, StepMember::InternalEnergyChange | StepMember::VolumeChange | StepMember::Work) => {
+            let states = sheet.program.steps.get(id.0).map(|step| step.from.iter().chain(&step.to));
+            asked.extend(states.into_iter().flatten());
+        }
+        _ => {}
+    });
+    asked.into_iter().flat_map(|id| density_beyond(sheet, id)).collect()
+}
+
+fn density_beyond(sheet: &WorkedSheet<'_>, id: StateId) -> Vec<Diagnostic> {
+    let (Some(state), Some(slots)) = (sheet.program.states.get(id.0), sheet.map.states.get(id.0)) else {
+        return Vec::new();
+    };
+    let mut found = Vec::new();
+    for (part, place) in state.constituents.iter().zip(&slots.places) {
+        let (Some(place), Some(species)) =
+            (sheet.frame.placed(*place), sheet.program.species.get(part.species.0))
+        else {
+            continue;
+        };
+        let t = place.temperature().value;
+        let present = species.curve.phases_at(place);
+        for (phase, _) in
+            std::iter::once(present.lower).chain(present.upper).filter(|(_, share)| *share > 0.0)
+        {
+            let given = species.data.iter().find(|datum| datum.kind == DatumKind::Density { phase });
+            let Some((lo, hi)) = given.and_then(|datum| datum.valid) else { continue };
+            if t < lo - 1e-9 || t > hi + 1e-9 {
+                let message = format!(
+                    "the volume of `{}` is asked at {t:.2} K, outside the density of `{}`, {lo} K to {hi} K",
+                    state.name,
+                    species.in_phase(phase)
+                );
+                found.push(
+                    Diagnostic::new(Code::OutsideRange, message)
+                        .label(state.span, format!("at {t:.2} K"))
+                        .help("give a density whose range reaches there, with its source"),
+                );
+            }
         }
     }
     found

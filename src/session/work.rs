@@ -2,17 +2,18 @@
 
 use super::fault::{circle, explain, explain_row};
 use super::outputs::required;
-use super::warn::warnings;
+use super::warn::{densities_beyond, warnings};
 use crate::check::check_sheet;
 use crate::diagnostic::{Code, Diagnostic};
 use crate::eval::{self, Frame};
 use crate::library::Loader;
 use crate::plan::{Lowered, lower};
-use crate::program::Program;
+use crate::program::{Program, Quantity};
 use crate::report::{Report, TableValues, WorkedSheet, find_cautions, gather};
 use crate::source::Sources;
 use crate::span::FileId;
 use crate::study::sweep;
+use crate::units::Zero;
 
 /// What came of a sheet.
 #[derive(Debug)]
@@ -78,6 +79,11 @@ pub fn run(name: &str, identity: &str, text: &str, loader: &dyn Loader) -> Worke
         findings: &[],
         file: name,
     };
+    diagnostics.extend(densities_beyond(&sheet));
+    if diagnostics.iter().any(Diagnostic::is_error) {
+        in_order(&mut diagnostics);
+        return Worked { sources, diagnostics, report: None };
+    }
     diagnostics.extend(warnings(&sheet));
     diagnostics.extend(find_cautions(&sheet));
     in_order(&mut diagnostics);
@@ -97,7 +103,28 @@ fn evaluated(program: &Program, lowered: &Lowered, diagnostics: &mut Vec<Diagnos
             diagnostics.push(found);
         }
     }
+    diagnostics.extend(
+        program
+            .quantities
+            .iter()
+            .zip(&lowered.map.quantities)
+            .filter_map(|(quantity, slot)| below_zero(quantity, frame.value(*slot))),
+    );
     frame
+}
+
+/// A value that is shown as a reading, and lies where no reading is: a difference may have been meant.
+fn below_zero(quantity: &Quantity, si: f64) -> Option<Diagnostic> {
+    let unit = quantity.display.as_ref().filter(|unit| unit.zero != Zero::None && si < 0.0)?;
+    let (code, message, plain) = match unit.zero {
+        Zero::Atmosphere => (Code::PressureNotPositive, "an absolute pressure below zero", "bar"),
+        Zero::None | Zero::Kelvin(_) => (Code::BelowAbsoluteZero, "a temperature below absolute zero", "K"),
+    };
+    Some(
+        Diagnostic::new(code, format!("`{}` is shown in `{}`, and is {message}", quantity.name, unit.text))
+            .label(quantity.value.span, "worked here")
+            .help(format!("if a difference was meant, write `in {plain}`")),
+    )
 }
 
 /// Whether a finding tells nothing new: a step between three pressures has one mistake, not two.

@@ -161,6 +161,19 @@ fn warnings_stand_in_the_report_and_not_beside_it() {
     assert_eq!(printed.pointer("/diagnostics/0/code").and_then(Value::as_str), Some("W102"));
 }
 
+/// Members are put in as numbers, those too that the report lists nowhere else.
+#[test]
+fn every_member_of_a_formula_is_put_in() {
+    let sheet = "species steel \"steel\" {\n source \"invented\"\n phase solid {\n cp = 0.63 kJ/(kg K) for 273.15 K to 1200 K\n\
+                 density 7850 kg/m3\n }\n}\nstate cold = 785 kg of steel at 20 degC\nstate hot = cold at 120 degC\n\
+                 step heat_up: cold -> hot\nresult twice = cold.V * 2 in L\nresult half = heat_up.sensible / 2 in MJ\n";
+    let ran = heatpath_reading(&["run", "-"], sheet.as_bytes());
+    assert_eq!(ran.status, Some(0), "{}", ran.stderr);
+    // by hand: 785 kg / 7850 kg/m3 = 0.1 m3; 785 kg * 0.63 kJ/(kg K) * 100 K = 49.455 MJ
+    assert!(ran.stdout.contains("= 0.1 m3 * 2"), "{}", ran.stdout);
+    assert!(ran.stdout.contains("= 49.455 MJ / 2"), "{}", ran.stdout);
+}
+
 /// A pressure drop is neither absolute nor gauge, whatever name it goes by.
 #[test]
 fn a_difference_of_pressures_is_not_marked_absolute() {
@@ -172,6 +185,18 @@ fn a_difference_of_pressures_is_not_marked_absolute() {
         ran.stdout.lines().map(|line| line.split_whitespace().collect::<Vec<_>>().join(" ")).collect();
     assert!(words.iter().any(|line| line == "= 500 mbar"), "{}", ran.stdout);
     assert!(words.iter().any(|line| line == "bar abs mbar kPa bar abs"), "{}", ran.stdout);
+}
+
+/// Data that begin just above 298.15 K carry an absolute enthalpy from there, and the report says so.
+#[test]
+fn an_absolute_enthalpy_shows_the_range_that_it_uses() {
+    let sheet = "species Ar \"argon\" {\n formula Ar\n source \"invented\"\n formation 0 kJ/mol at 298.15 K\n phase gas {\n\
+                 cp = 20.786 J/(mol K) for 300 K to 1000 K\n }\n}\nstate hot = 1 mol of Ar at 400 K\nresult h = hot.H in kJ\n";
+    let ran = heatpath_reading(&["run", "-"], sheet.as_bytes());
+    assert_eq!(ran.status, Some(0), "{}", ran.stderr);
+    let text = ran.stdout.split_whitespace().collect::<Vec<_>>().join(" ");
+    assert!(text.contains("valid 300 K to 1000 K; used 298.15 K to 400 K"), "{text}");
+    assert!(text.contains("no more than 2 K above 298.15 K"), "{text}");
 }
 
 #[test]

@@ -32,6 +32,14 @@ impl Builder<'_> {
     }
 
     fn node(&mut self, expr: &Expr) -> Lowering<Slot> {
+        let slot = self.value(expr)?;
+        if matches!(expr.node, Node::State(..) | Node::Step(..)) {
+            self.map.members.insert(expr.span, slot);
+        }
+        Ok(slot)
+    }
+
+    fn value(&mut self, expr: &Expr) -> Lowering<Slot> {
         match &expr.node {
             Node::Constant(value) => Ok(self.constant(*value)),
             Node::Gauge(value) => Ok(self.constant(value + self.program.site.atmosphere)),

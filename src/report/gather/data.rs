@@ -54,7 +54,8 @@ fn data_row(species: &Species, datum: &Datum, (from, to): (f64, f64)) -> DataRow
     };
     let dated = !matches!(datum.kind, DatumKind::MolarMass | DatumKind::Decomposition);
     let beyond = datum.valid.is_some_and(|(lo, hi)| from < lo - 1e-9 || to > hi + 1e-9);
-    let extrapolated = beyond && matches!(datum.kind, DatumKind::HeatCapacity { .. });
+    let extrapolated =
+        beyond && matches!(datum.kind, DatumKind::HeatCapacity { .. } | DatumKind::Density { .. });
     DataRow {
         species: species.name.clone(),
         phase: name,
@@ -77,6 +78,9 @@ fn reasons(species: &Species, phase: usize, (from, to): (f64, f64)) -> Option<St
         .filter_map(|kelvin| species.allowed(phase, kelvin))
         .map(|one| one.because.as_str())
         .collect();
+    if reasons.is_empty() && from >= 298.15 - 1e-9 {
+        reasons.push("it begins no more than 2 K above 298.15 K, where enthalpies are counted from");
+    }
     reasons.dedup();
     (!reasons.is_empty()).then(|| reasons.join("; "))
 }

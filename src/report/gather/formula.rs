@@ -2,7 +2,7 @@
 
 use super::worked::WorkedSheet;
 use crate::plan::Slot;
-use crate::program::{DutyMember, Expr, Node, StateMember, StepMember};
+use crate::program::{DutyMember, Expr, Node};
 use crate::report::number::{shown, significant};
 use crate::units::Unit;
 
@@ -34,8 +34,10 @@ impl WorkedSheet<'_> {
                 let slot = self.map.quantities.get(id.0).copied();
                 (self.named(expr, slot, self.unit_of(*id).as_ref()), Tightness::Atom)
             }
-            Node::State(id, member) => (self.state_member(expr, id.0, member), Tightness::Atom),
-            Node::Step(id, member) => (self.step_member(expr, id.0, *member), Tightness::Atom),
+            Node::State(..) | Node::Step(..) => {
+                let slot = self.map.members.get(&expr.span).copied();
+                (self.named(expr, slot, None), Tightness::Atom)
+            }
             Node::Duty(id, member) => {
                 let slot = self.map.duties.get(id.0).map(|duty| match member {
                     DutyMember::Useful => duty.useful,
@@ -95,34 +97,6 @@ impl WorkedSheet<'_> {
     fn named(&self, expr: &Expr, slot: Option<Slot>, unit: Option<&Unit>) -> String {
         let Some(slot) = slot else { return self.sources.line_of(expr.span) };
         shown(&self.shown(self.value(slot), expr.dimension, unit, self.is_difference(expr)))
-    }
-
-    fn state_member(&self, expr: &Expr, id: usize, member: &StateMember) -> String {
-        let Some(state) = self.map.states.get(id) else { return self.sources.line_of(expr.span) };
-        let slot = match member {
-            StateMember::Temperature => Some(state.temperature),
-            StateMember::Pressure => Some(state.pressure),
-            StateMember::Mass => Some(state.mass),
-            StateMember::Amount => state.amount,
-            StateMember::Enthalpy => Some(state.enthalpy),
-            _ => None,
-        };
-        self.named(expr, slot, None)
-    }
-
-    fn step_member(&self, expr: &Expr, id: usize, member: StepMember) -> String {
-        let Some(step) = self.map.steps.get(id) else { return self.sources.line_of(expr.span) };
-        let slot = match member {
-            StepMember::EnthalpyChange => Some(step.enthalpy_change),
-            StepMember::InternalEnergyChange => Some(step.internal_energy_change),
-            StepMember::Heat => step.heat,
-            StepMember::Work => step.work,
-            StepMember::Supply => step.supply,
-            StepMember::VolumeChange | StepMember::Sensible | StepMember::Latent | StepMember::Reaction => {
-                None
-            }
-        };
-        self.named(expr, slot, None)
     }
 }
 

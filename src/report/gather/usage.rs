@@ -1,8 +1,8 @@
 //! Which data the answers rest on, and over which temperatures.
 
 use super::worked::WorkedSheet;
-use crate::program::{Constituent, DatumKind, Node, SpeciesId, StateId, StateMember, Step};
-use crate::thermo::{Leg, LegKind, Pin, Place};
+use crate::program::{Constituent, DatumKind, Node, Species, SpeciesId, StateId, StateMember, Step};
+use crate::thermo::{Allowance, Leg, LegKind, Pin, Place};
 use crate::units::quantity;
 use std::collections::BTreeMap;
 
@@ -147,7 +147,7 @@ impl Usage {
                     quantity(101_325.0),
                     Pin::Stable,
                     None,
-                    crate::thermo::Allowance::none(),
+                    &from_298(species),
                 );
                 for leg in start.map(|start| species.curve.route(start, place)).unwrap_or_default() {
                     self.leg(sheet, constituent.species, &leg);
@@ -155,6 +155,18 @@ impl Usage {
             }
         }
     }
+}
+
+/// Data that begin up to 2 K above 298.15 K hold from there for an absolute enthalpy.
+fn from_298(species: &Species) -> Allowance {
+    (0..species.phases.len()).fold(Allowance::default(), |allowance, phase| {
+        match species.curve.phase_span(phase) {
+            Some((lo, hi)) if lo.value > 298.15 && lo.value <= 300.15 => {
+                allowance.allow(phase, quantity(298.15), hi)
+            }
+            _ => allowance,
+        }
+    })
 }
 
 impl WorkedSheet<'_> {
