@@ -52,7 +52,7 @@ fn jumps(species: &Species) -> Vec<Diagnostic> {
             continue;
         };
         let (Some((_, joint)), Some((lo, hi))) = (pair[0].valid, pair[1].valid) else { continue };
-        if phase != next || !(lo < hi) {
+        if phase != next || lo >= hi {
             continue;
         }
         let (Some(below), Some(above)) =
