@@ -2,6 +2,8 @@
 
 mod cli;
 mod corpus;
+mod library;
+mod library_values;
 mod mutated;
 mod program;
 mod reference;
