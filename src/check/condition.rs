@@ -24,6 +24,8 @@ struct Read {
     pressure: Option<(Condition, Span)>,
     share: Option<((usize, Expr), Span)>,
     saturated: Option<Span>,
+    /// Whether it is saturated vapour or saturated liquid, not a mixture of the two.
+    all_one_phase: bool,
     failed: bool,
 }
 
@@ -40,10 +42,13 @@ impl Checker<'_> {
                 read.failed = true;
             }
         }
+        if let (Some(span), true) = (read.saturated, read.temperature.is_none()) {
+            read.temperature = Some((Condition::Boiling, span));
+        }
         for condition in conditions.iter().filter(|condition| condition.kind == ConditionKind::Unknown) {
             self.unknown_condition(condition.span, &mut read);
         }
-        self.refuse_other_saturation(&mut read);
+        self.saturation(&mut read, matter);
         if read.failed {
             return None;
         }
@@ -110,7 +115,7 @@ impl Checker<'_> {
         }
     }
 
-    /// `40 % liquid`: how much has changed; of vapour without a temperature, at the boiling point.
+    /// `40 % liquid`: how much has changed; `95 % vapour` is a saturated state.
     fn share_condition(
         &mut self,
         value: &Expression,
@@ -127,27 +132,52 @@ impl Checker<'_> {
             return None;
         }
         read.share = Some(((at, value), span));
-        if matches!(phase.text.as_str(), "vapour" | "vapor") && read.temperature.is_none() {
-            read.temperature = Some((Condition::Boiling, span));
+        if matches!(phase.text.as_str(), "vapour" | "vapor") {
             read.saturated = Some(span);
         }
         Some(())
     }
 
-    /// Saturation is known at 101.325 kPa only: another pressure wants a vapour-pressure law.
-    fn refuse_other_saturation(&mut self, read: &mut Read) {
-        let (Some(span), Some((Condition::Value(pressure), _))) = (read.saturated, &read.pressure) else {
-            return;
-        };
-        let absolute = match pressure.node {
-            Node::Constant(value) => value,
-            Node::Gauge(value) => value + self.program.site.atmosphere,
-            _ => return,
-        };
-        if (absolute / STANDARD_ATMOSPHERE - 1.0).abs() > 0.02 {
-            self.later_saturated(span);
-            read.failed = true;
+    /// A saturated state has a temperature or a pressure; the other follows from the vapour pressure, without which
+    /// it is known at 101.325 kPa only.
+    fn saturation(&mut self, read: &mut Read, matter: &Gathered) {
+        let Some(span) = read.saturated else { return };
+        let species = matter.constituents.first().and_then(|part| self.program.species.get(part.species.0));
+        let Some(species) = species else { return };
+        let law = species.curve.vapour_pressure().is_some();
+        let said = matches!(read.temperature, Some((Condition::Value(_), _)));
+        match (said, law, &read.pressure) {
+            (true, true, None) => read.pressure = Some((Condition::Boiling, span)),
+            (true, false, None) if read.all_one_phase => {
+                let message = format!("the pressure of a saturated state of `{}` is not known", species.name);
+                self.without_vapour_pressure(span, message, "or give the pressure as well");
+                read.failed = true;
+            }
+            (false, false, Some((Condition::Value(pressure), _))) => {
+                let absolute = match pressure.node {
+                    Node::Constant(value) => value,
+                    Node::Gauge(value) => value + self.program.site.atmosphere,
+                    _ => return,
+                };
+                if (absolute / STANDARD_ATMOSPHERE - 1.0).abs() > 0.02 {
+                    let message = format!("a saturated state of `{}` away from 101.325 kPa", species.name);
+                    let other = "elsewhere give the temperature and a state symbol";
+                    self.without_vapour_pressure(span, message, other);
+                    read.failed = true;
+                }
+            }
+            _ => {}
         }
+    }
+
+    fn without_vapour_pressure(&mut self, span: Span, message: String, other: &str) {
+        self.report(
+            Diagnostic::new(Code::VapourPressureMissing, message)
+                .label(span, "its species has no vapour pressure")
+                .help(format!(
+                    "add `vapour_pressure antoine {{ A = ..., B = ... K, C = ... K, p = 1 bar }} for ... K to ... K`; {other}"
+                )),
+        );
     }
 
     /// The phase of the one species that a share is said of.
@@ -201,18 +231,18 @@ impl Checker<'_> {
             );
             return None;
         }
-        read.saturated = Some(span);
-        if read.temperature.is_some() {
-            self.later_saturated(span);
+        if let Some((_, first)) = &read.share {
+            let first = *first;
+            self.said_twice("share", span, first);
             return None;
         }
+        (read.saturated, read.all_one_phase) = (Some(span), true);
         let one = Expr {
             span,
             dimension: Dimension::ONE,
             kind: crate::units::Kind::Plain,
             node: Node::Constant(1.0),
         };
-        read.temperature = Some((Condition::Boiling, span));
         read.share = Some(((at, one), span));
         Some(())
     }

@@ -30,6 +30,12 @@ pub(super) struct Claim {
     pub(super) enthalpy: f64,
 }
 
+/// By how much the stated boiling point may lie off that of the vapour pressure, K.
+const BOILING: f64 = 0.5;
+
+/// By how much a latent heat may lie off that of the vapour pressure's slope, relative.
+const SLOPE: f64 = 0.05;
+
 impl Checker<'_> {
     /// Warns where the data of a species do not agree.
     pub(super) fn warn_of_inconsistency(&mut self, species: &Species, claims: &[Claim]) {
@@ -37,6 +43,8 @@ impl Checker<'_> {
         found.extend(contradictions(species, claims));
         found.extend(wide_spreads(species));
         found.extend(unsourced(species));
+        found.extend(boiling_off_law(species));
+        found.extend(latent_off_slope(species));
         let answered = |code: Code| species.remarks.iter().any(|remark| remark.starts_with(code.as_str()));
         self.diagnostics.extend(found.into_iter().filter(|found| !answered(found.code)));
     }
@@ -145,4 +153,42 @@ fn unsourced(species: &Species) -> Option<Diagnostic> {
             .label(first.span, "where does this come from?")
             .help("add `source \"...\"` behind it, or once to the block"),
     )
+}
+
+/// A stated boiling point at which the vapour pressure is not 101.325 kPa.
+fn boiling_off_law(species: &Species) -> Option<Diagnostic> {
+    let shift = species.curve.boiling_shift().filter(|shift| shift.abs() >= BOILING)?;
+    let datum = species.data.iter().find(|datum| datum.kind == DatumKind::VapourPressure)?;
+    Some(
+        Diagnostic::new(
+            Code::BoilingContradiction,
+            format!(
+                "the stated boiling point of `{}` lies {shift:+.2} K off that of its vapour pressure",
+                species.name
+            ),
+        )
+        .label(datum.span, "this law is moved to meet the stated point")
+        .help("check both data; boiling is stated at 101.325 kPa"),
+    )
+}
+
+/// A latent heat that the slope of the vapour pressure contradicts, by the equation of Clausius and Clapeyron.
+fn latent_off_slope(species: &Species) -> Option<Diagnostic> {
+    let (by_slope, latent) = species.curve.latent_by_slope()?;
+    let off = latent.value / by_slope.value - 1.0;
+    let datum = species.data.iter().find(|datum| datum.kind == DatumKind::VapourPressure)?;
+    (off.abs() >= SLOPE).then(|| {
+        Diagnostic::new(
+            Code::LatentSlope,
+            format!(
+                "the latent heat of boiling of `{}`, {:.1} kJ/kg, lies {:+.1} % off the {:.1} kJ/kg of its vapour pressure",
+                species.name,
+                latent.value / 1e3,
+                off * 100.0,
+                by_slope.value / 1e3
+            ),
+        )
+        .label(datum.span, "its slope gives R T²/M d ln p/dT, the vapour taken as ideal")
+        .help("check both data, and whether the vapour is of the molecules that `formula` says")
+    })
 }

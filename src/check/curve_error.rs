@@ -12,6 +12,7 @@ pub(super) struct Places<'a> {
     pub(super) densities: &'a [Option<Span>],
     pub(super) names: &'a [String],
     pub(super) links: &'a [Span],
+    pub(super) vapour_pressure: Option<Span>,
     pub(super) formation: Option<Span>,
 }
 
@@ -39,6 +40,9 @@ impl Places<'_> {
 
 /// A curve error as a diagnostic.
 pub(super) fn explain(error: CurveError, at: &Places<'_>) -> Diagnostic {
+    if let CurveError::VapourPressure(fault) = error {
+        return super::vapour_pressure::misfit(fault, at.vapour_pressure.unwrap_or(at.block));
+    }
     ranges(error, at).or_else(|| transitions(error, at)).unwrap_or_else(|| enthalpies(error, at))
 }
 

@@ -246,7 +246,7 @@ impl Checker<'_> {
         Some(Claim { span: context.span, kelvin, enthalpy: own_enthalpy(form, numbers, constant, kelvin)? })
     }
 
-    fn coefficients_fit(
+    pub(super) fn coefficients_fit(
         &mut self,
         form: &Word,
         given: &[Coefficient],

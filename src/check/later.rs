@@ -45,12 +45,6 @@ impl Checker<'_> {
         self.later(Code::LaterSettle, "`settle` is", span, help);
     }
 
-    pub(super) fn later_vapour_pressure(&mut self, span: Span) {
-        let help =
-            "leave the law out; boiling holds at 101.325 kPa, and a state symbol says the phase elsewhere";
-        self.later(Code::LaterVapourPressure, "vapour pressure laws are", span, help);
-    }
-
     pub(super) fn later_steam(&mut self, span: Span) {
         let help = "give water a `species` block with the values of a steam table and its edition as source";
         self.later(Code::LaterSteam, "steam tables are", span, help);
@@ -69,11 +63,6 @@ impl Checker<'_> {
     pub(super) fn later_parted(&mut self, span: Span) {
         let help = "declare the part as a state of its own, by its amounts";
         self.later(Code::LaterParted, "parting a state by phase is", span, help);
-    }
-
-    pub(super) fn later_saturated(&mut self, span: Span) {
-        let help = "saturated states are worked for one species at 101.325 kPa; elsewhere give the temperature and a state symbol";
-        self.later(Code::LaterSaturated, "saturated states off the normal boiling point are", span, help);
     }
 
     /// Whether a material is one whose mistake is already reported.

@@ -32,6 +32,7 @@ mod step;
 mod transition;
 mod unit;
 mod unknowns;
+mod vapour_pressure;
 mod wanted;
 
 pub use checker::{Checked, check_sheet};

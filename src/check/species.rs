@@ -13,6 +13,7 @@ use crate::syntax::tree::{
 };
 use crate::thermo::{
     Composition, CurveData, CurveError, Density, Fault, HeatingCurve, LawRange, Link, PhaseClass, PhaseData,
+    VapourPressure,
 };
 use crate::units::{Dimension, quantity};
 
@@ -85,7 +86,7 @@ impl Checker<'_> {
         draft.molar_mass = given.or(from_formula).or(poison.then_some(1.0));
         let formation = self.species_formation(&mut draft);
         let decomposes = self.decomposition(&mut draft);
-        self.refuse_vapour_pressure(block);
+        let vapour_pressure = self.species_vapour_pressure(&mut draft);
         let (phases, links, link_spans) = self.phases(&mut draft, formation.is_some())?;
         if self.error_count() > before || block.damaged {
             return None;
@@ -96,6 +97,7 @@ impl Checker<'_> {
             links,
             formation: formation.map(quantity),
             decomposes_at: decomposes.map(quantity),
+            vapour_pressure,
             molar_mass: draft.molar_mass.map(quantity),
         };
         let curve = match HeatingCurve::build(data) {
@@ -267,12 +269,16 @@ impl Checker<'_> {
         self.datum_temperature(&entry.value, "the temperature of decomposition")
     }
 
-    fn refuse_vapour_pressure(&mut self, block: &SpeciesBlock) {
-        for entry in &block.entries {
-            if let SpeciesEntry::VapourPressure(law) = entry {
-                self.later_vapour_pressure(law.span);
-            }
-        }
+    fn species_vapour_pressure(&mut self, draft: &mut Draft<'_>) -> Option<VapourPressure> {
+        let entry = self.single(draft.block, |entry| match entry {
+            SpeciesEntry::VapourPressure(entry) => Some((entry.clone(), entry.span)),
+            _ => None,
+        })?;
+        let law = self.vapour_pressure(&entry);
+        let valid = law.map(|law| law.span()).map(|(lo, hi)| (lo.value, hi.value));
+        let datum = self.datum(draft, DatumKind::VapourPressure, &entry.suffixes, entry.span, valid);
+        draft.data.push(datum);
+        law
     }
 
     /// Phases and the links between them, in the order of the block.
@@ -515,6 +521,10 @@ impl Checker<'_> {
                 densities: &phases.iter().map(|phase| phase.density).collect::<Vec<_>>(),
                 names: &phases.iter().map(|phase| phase.data.name.clone()).collect::<Vec<_>>(),
                 links,
+                vapour_pressure: block.entries.iter().find_map(|entry| match entry {
+                    SpeciesEntry::VapourPressure(entry) => Some(entry.span),
+                    _ => None,
+                }),
                 formation: block.entries.iter().find_map(|entry| match entry {
                     SpeciesEntry::Formation(value, _) => Some(value.span),
                     _ => None,

@@ -129,6 +129,8 @@ codes! {
     AllowWrong "M526" Error "an allowance that admits nothing";
     LatentContradiction "M527" Error "a latent heat that contradicts the formation enthalpies";
     DensityMissing "M528" Error "a volume of matter without density";
+    VapourPressureMissing "M529" Error "a saturated state without a vapour pressure";
+    VapourPressureWrong "M530" Error "a vapour pressure that cannot be";
 
     TemperatureMissing "T601" Error "a state without a temperature";
     PressureUnsaid "T602" Error "a pressure that does not follow";
@@ -169,17 +171,16 @@ codes! {
     EfficiencyOnCooling "R715" Error "an efficiency on a cooling duty";
     ShareOutOfBounds "R716" Error "a share outside 0 % to 100 %";
     DatumNotPositive "R719" Error "a heat capacity or a density that is not positive";
+    OutsideVapourPressure "R720" Error "a pressure outside the vapour-pressure law";
 
     LaterReaction "L901" Error "reactions are not worked yet";
     LaterEquilibrium "L902" Error "equilibria are not worked yet";
-    LaterVapourPressure "L903" Error "vapour pressure laws are not worked yet";
     LaterSteam "L904" Error "steam tables are not worked yet";
     LaterCarrier "L905" Error "carriers are not worked yet";
     LaterBalance "L906" Error "balances are not worked yet";
     LaterSettle "L907" Error "`settle` is not worked yet";
     LaterCorrelate "L908" Error "correlated inputs are not worked yet";
     LaterParted "L909" Error "parting a state by phase is not worked yet";
-    LaterSaturated "L910" Error "saturated states off the normal boiling point are not worked yet";
 
     UnitAndName "W101" Warning "a word that is both a unit and a name";
     FractionOfUnit "W102" Warning "a number over a quantity with its unit";
@@ -191,6 +192,8 @@ codes! {
     EnthalpyConstant "W108" Warning "an enthalpy constant that contradicts the enthalpies";
     SourcesDiffer "W109" Warning "two sources that differ";
     SourceMissing "W110" Warning "a datum without a source";
+    BoilingContradiction "W111" Warning "a boiling point that contradicts the vapour pressure";
+    LatentSlope "W112" Warning "a latent heat that contradicts the vapour pressure";
 
     ClosedVolume "C801" Caution "a closed volume is heated";
     WaterBesideHot "C802" Caution "water beside something hotter than its boiling point";

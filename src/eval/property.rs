@@ -2,7 +2,7 @@
 
 use super::frame::{Fault, Frame};
 use crate::plan::{Material, PhaseSet, PlaceSlot, Plan, Slot};
-use crate::thermo::{PhaseClass, Place, Side};
+use crate::thermo::{LocateError, PhaseClass, Place, Side};
 use crate::units::quantity;
 
 /// The material of an operation; a Plan names only materials it holds.
@@ -134,10 +134,61 @@ pub(super) fn latent<const N: usize>(
     frame: &mut Frame<N>,
     which: u32,
     place: PlaceSlot,
+    p: Slot,
     to: Slot,
 ) {
     let curve = &material(plan, which).curve;
-    each(frame, place, to, None, |place, _| Some(curve.latent(place).value));
+    let p = frame.slots[p.0 as usize];
+    each(frame, place, to, None, |place, lane| Some(curve.latent_at(place, quantity(p[lane])).value));
+}
+
+pub(super) fn boiling_temperature<const N: usize>(
+    plan: &Plan,
+    frame: &mut Frame<N>,
+    at: usize,
+    which: u32,
+    p: Slot,
+    to: Slot,
+) {
+    let curve = &material(plan, which).curve;
+    for (lane, pascal) in frame.get(p).into_iter().enumerate() {
+        let found = (!pascal.is_nan()).then(|| curve.boiling_temperature(quantity(pascal)));
+        saturated(frame, (at, lane), found.map(|t| t.map(|t| t.value)), (f64::NAN, pascal), to);
+    }
+}
+
+pub(super) fn saturation_pressure<const N: usize>(
+    plan: &Plan,
+    frame: &mut Frame<N>,
+    at: usize,
+    which: u32,
+    t: Slot,
+    to: Slot,
+) {
+    let curve = &material(plan, which).curve;
+    for (lane, kelvin) in frame.get(t).into_iter().enumerate() {
+        let found = (!kelvin.is_nan()).then(|| curve.saturation_pressure(quantity(kelvin)));
+        saturated(frame, (at, lane), found.map(|p| p.map(|p| p.value)), (kelvin, f64::NAN), to);
+    }
+}
+
+/// What saturation gives goes to its slot; a failure is kept with the temperature and the pressure asked.
+fn saturated<const N: usize>(
+    frame: &mut Frame<N>,
+    (at, lane): (usize, usize),
+    found: Option<Result<f64, LocateError>>,
+    (kelvin, pascal): (f64, f64),
+    to: Slot,
+) {
+    let value = match found {
+        Some(Ok(value)) => value,
+        Some(Err(error)) => {
+            frame.fail(at, lane, Fault::Locate { error, kelvin, pascal });
+            f64::NAN
+        }
+        None => f64::NAN,
+    };
+    frame.slots[to.0 as usize][lane] = value;
 }
 
 pub(super) fn pressure_part<const N: usize>(

@@ -57,7 +57,13 @@ fn step<const N: usize>(plan: &Plan, frame: &mut Frame<N>, at: usize, op: &Op) {
         Op::InternalEnergy { material, place, to } => {
             property::internal_energy(plan, frame, at, material, place, to)
         }
-        Op::Latent { material, place, to } => property::latent(plan, frame, material, place, to),
+        Op::Latent { material, place, p, to } => property::latent(plan, frame, material, place, p, to),
+        Op::BoilingTemperature { material, p, to } => {
+            property::boiling_temperature(plan, frame, at, material, p, to)
+        }
+        Op::SaturationPressure { material, t, to } => {
+            property::saturation_pressure(plan, frame, at, material, t, to)
+        }
         Op::PressurePart { material, place, p, to } => {
             property::pressure_part(plan, frame, material, place, p, to)
         }

@@ -199,10 +199,23 @@ pub enum Op {
         place: PlaceSlot,
         to: Slot,
     },
-    /// Latent heat passed, per mass.
+    /// Latent heat passed, per mass, boiling where it is at the pressure `p`.
     Latent {
         material: u32,
         place: PlaceSlot,
+        p: Slot,
+        to: Slot,
+    },
+    /// The temperature at which a liquid boils at a pressure.
+    BoilingTemperature {
+        material: u32,
+        p: Slot,
+        to: Slot,
+    },
+    /// The pressure at which a liquid boils at a temperature.
+    SaturationPressure {
+        material: u32,
+        t: Slot,
         to: Slot,
     },
     /// What the pressure adds to the enthalpy, per mass.

@@ -32,15 +32,16 @@ fn reads(op: &Op, plan: &Plan, slot: &mut impl FnMut(Slot), place: &mut impl FnM
         }
         Op::Place { t, p, share, .. } => [t, p, share].into_iter().for_each(slot),
         Op::Enthalpy { place: at, p, .. }
+        | Op::Latent { place: at, p, .. }
         | Op::PressurePart { place: at, p, .. }
         | Op::Volume { place: at, p, .. } => {
             place(at.0);
             slot(p);
         }
         Op::InternalEnergy { place: at, .. }
-        | Op::Latent { place: at, .. }
         | Op::HeatCapacity { place: at, .. }
         | Op::PhaseShare { place: at, .. } => place(at.0),
+        Op::BoilingTemperature { p: a, .. } | Op::SaturationPressure { t: a, .. } => slot(a),
         Op::GasOnly { place: at, value, .. } => {
             place(at.0);
             slot(value);
@@ -88,6 +89,8 @@ fn writes(op: &Op) -> (Option<Slot>, Option<Slot>, Option<u32>) {
         | Op::Enthalpy { to, .. }
         | Op::InternalEnergy { to, .. }
         | Op::Latent { to, .. }
+        | Op::BoilingTemperature { to, .. }
+        | Op::SaturationPressure { to, .. }
         | Op::PressurePart { to, .. }
         | Op::HeatCapacity { to, .. }
         | Op::Volume { to, .. }

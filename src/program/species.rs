@@ -31,6 +31,8 @@ pub enum DatumKind {
     },
     /// The molar mass, where it is given.
     MolarMass,
+    /// The vapour pressure.
+    VapourPressure,
     /// The temperature at which it decomposes.
     Decomposition,
 }

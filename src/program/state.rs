@@ -75,7 +75,7 @@ pub enum Condition {
     Atmosphere,
     /// Not known; settled by a step.
     Unknown(Span),
-    /// Where the species boils.
+    /// Where the species boils: the temperature that belongs to the pressure, or the pressure to the temperature.
     Boiling,
 }
 

@@ -123,6 +123,31 @@ impl Teller<'_> {
         let phase = |at: usize| species.map_or(String::new(), |species| species.in_phase(at));
         let here = temperature(kelvin);
         match error {
+            LocateError::OutsideVapourPressure { liquid_below, gas_above, lo, hi } => {
+                let stands = if pascal.is_nan() {
+                    format!("`{state}` is saturated at {here}")
+                } else {
+                    format!("`{state}` stands at {} kPa abs", significant(pascal / 1e3, 6))
+                };
+                let sure = match (liquid_below.value > 0.0, gas_above.value.is_finite()) {
+                    (true, _) => format!("liquid is sure up to {} K only", significant(liquid_below.value, 6)),
+                    (false, true) => format!("gas is sure from {} K only", significant(gas_above.value, 6)),
+                    (false, false) => "beyond the law".to_owned(),
+                };
+                self.found(
+                    Code::OutsideVapourPressure,
+                    format!(
+                        "{stands}, and the vapour pressure of `{name}` is known from {} kPa to {} kPa only",
+                        significant(lo.value / 1e3, 6),
+                        significant(hi.value / 1e3, 6)
+                    ),
+                    sure,
+                )
+                .help(format!(
+                    "name the phase where its matter is declared, such as `{}`, or give a law that reaches further",
+                    species.map_or(String::new(), |species| beside_boiling(species, kelvin > gas_above.value))
+                ))
+            }
             LocateError::NotATemperature => self
                 .found(Code::BelowAbsoluteZero, format!("`{state}` lies at {here}, not above absolute zero"), "this state")
                 .help("0 K is -273.15 degC: check the unit and the sign of its temperature"),

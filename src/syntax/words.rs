@@ -50,7 +50,7 @@ pub(super) const SPECIES_ENTRIES: &[Opening] = &[
     opening(
         "vapour_pressure",
         Rule::species_entry,
-        "vapour_pressure antoine { A = ..., B = ..., C = ... } for A to B",
+        "vapour_pressure antoine { A = 5.2, B = 1731 K, C = -40 K, p = 1 bar } for 334 K to 480 K",
     ),
     opening("decomposes", Rule::species_entry, "decomposes at 1172 K"),
 ];

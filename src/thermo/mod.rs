@@ -14,11 +14,12 @@ pub mod ideal_gas;
 pub mod path_work;
 pub mod settle;
 mod si;
+pub mod vapour_pressure;
 
 pub use composition::{Composition, CompositionError, Fault};
 pub use curve::{
     Allowance, CurveData, CurveError, Density, HeatingCurve, LawRange, Leg, LegKind, Link, LocateError,
-    MeltingFault, PhaseClass, PhaseData, PhaseShares, Pin, Place, Side,
+    MeltingFault, PhaseClass, PhaseData, PhaseShares, Pin, Place, SaturationFault, Side,
 };
 pub use element::Element;
 pub use heat_capacity::{Basis, HeatCapacity, HeatCapacityError, MaierKelley};
@@ -26,3 +27,4 @@ pub use settle::{
     Part, SettleError, Settled, Unreachable, temperature_for_enthalpy, temperature_for_internal_energy,
     temperature_isentropic,
 };
+pub use vapour_pressure::{VapourPressure, VapourPressureError, VapourPressureForm};

@@ -13,7 +13,6 @@ pub(super) enum Total {
     Amount,
     Enthalpy,
     InternalEnergy,
-    Latent,
     PressurePart,
     Volume,
     VolumeOrNothing,
@@ -76,7 +75,13 @@ impl Builder<'_> {
                 )
             }
             Condition::Unknown(_) => self.settled(id, Unknown::Pressure)?,
-            Condition::Atmosphere | Condition::Boiling => self.map.atmosphere.unwrap_or(Slot(0)),
+            Condition::Boiling => {
+                let t = self.temperature(id)?.slot;
+                let material = self.first_material(id);
+                self.from(state.span, OriginKind::State(id, 0));
+                self.emit(|to| Op::SaturationPressure { material, t, to })
+            }
+            Condition::Atmosphere => self.map.atmosphere.unwrap_or(Slot(0)),
         };
         self.back(before);
         self.pressures.insert(id, slot);
@@ -111,6 +116,14 @@ impl Builder<'_> {
                 let share = share.unwrap_or_else(|| self.constant(f64::NAN));
                 Temperature { slot, placing: Placing::Settled(share) }
             }
+            Condition::Boiling if self.follows_law(id) => {
+                let p = self.pressure(id)?;
+                let material = self.first_material(id);
+                let before = self.from(state.span, OriginKind::State(id, 0));
+                let slot = self.emit(|to| Op::BoilingTemperature { material, p, to });
+                self.back(before);
+                Temperature { slot, placing: said }
+            }
             Condition::Boiling | Condition::Atmosphere | Condition::Agreed(..) => {
                 let kelvin = self.boiling_point(id);
                 Temperature { slot: self.constant(kelvin), placing: said }
@@ -118,6 +131,30 @@ impl Builder<'_> {
         };
         self.temperatures.insert(id, temperature);
         Ok(temperature)
+    }
+
+    /// Whether a vapour-pressure law says where the one species of a state boils.
+    fn follows_law(&self, id: StateId) -> bool {
+        let only = self.program_state(id).and_then(|state| state.constituents.first());
+        only.and_then(|part| self.program.species.get(part.species.0))
+            .is_some_and(|species| species.curve.vapour_pressure().is_some())
+    }
+
+    fn first_material(&mut self, id: StateId) -> u32 {
+        self.constituents(id).first().map_or(u32::MAX, |part| self.material(part))
+    }
+
+    /// The latent heat passed by a state, boiling where it is at the pressure `p`.
+    pub(super) fn latent_sum(&mut self, id: StateId, p: Slot) -> Lowering<Slot> {
+        let masses = self.masses(id)?;
+        let mut terms = Vec::new();
+        for (at, (mass, part)) in masses.iter().zip(&self.constituents(id)).enumerate() {
+            let place = self.place(id, at)?;
+            let material = self.material(part);
+            let specific = self.emit(|to| Op::Latent { material, place, p, to });
+            terms.push(self.multiply(*mass, specific));
+        }
+        Ok(self.total(&terms))
     }
 
     /// The boiling point of a state's one species.
@@ -334,7 +371,6 @@ impl Builder<'_> {
         let p = self.pressure(id)?;
         Ok(self.emit(|to| match total {
             Total::InternalEnergy => Op::InternalEnergy { material, place, to },
-            Total::Latent => Op::Latent { material, place, to },
             Total::PressurePart => Op::PressurePart { material, place, p, to },
             Total::HeatCapacity => Op::HeatCapacity { material, place, to },
             Total::Volume => Op::Volume { material, place, p, neglect: false, to },

@@ -86,8 +86,21 @@ impl Builder<'_> {
         Ok(self.emit(|to| Op::Known { value: stated, given: change, to }))
     }
 
+    /// The latent heats of a step, boiling where it is at the pressure of its end.
     pub(super) fn latent(&mut self, id: StepId) -> Lowering<Slot> {
-        self.part_of_change(id, Total::Latent)
+        let program = self.program;
+        let Some(step) = program.steps.get(id.0) else { return Ok(self.constant(f64::NAN)) };
+        let before = self.from(step.span, OriginKind::Step(id));
+        let last = step.to.first().copied().unwrap_or(StateId(usize::MAX));
+        let p = self.pressure(last)?;
+        let mut side = |states: &[StateId]| {
+            let terms = states.iter().map(|id| self.latent_sum(*id, p)).collect::<Lowering<Vec<Slot>>>()?;
+            Ok(self.total(&terms))
+        };
+        let (start, end) = (side(&step.from)?, side(&step.to)?);
+        let slot = self.subtract(end, start);
+        self.back(before);
+        Ok(slot)
     }
 
     fn part_of_change(&mut self, id: StepId, total: Total) -> Lowering<Slot> {

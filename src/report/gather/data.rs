@@ -50,6 +50,7 @@ fn data_row(species: &Species, datum: &Datum, (from, to): (f64, f64)) -> DataRow
         }
         DatumKind::Formation { phase: at } => (at.map_or(String::new(), phase), "formation", at),
         DatumKind::MolarMass => (String::new(), "molar mass", None),
+        DatumKind::VapourPressure => (String::new(), "vapour pressure", None),
         DatumKind::Decomposition => (String::new(), "decomposition", None),
     };
     let dated = !matches!(datum.kind, DatumKind::MolarMass | DatumKind::Decomposition);

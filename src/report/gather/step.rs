@@ -93,6 +93,7 @@ impl WorkedSheet<'_> {
             ),
             thermo::LegKind::Transition { from, to, link } => {
                 let datum = match link {
+                    Some(link) if self.boils_by_law(id, link, leg.from.value) => DatumKind::VapourPressure,
                     Some(link) => DatumKind::Transition { below: link },
                     None => DatumKind::Formation { phase: Some(from.max(to)) },
                 };
@@ -202,9 +203,40 @@ impl WorkedSheet<'_> {
                 }
             }
         }
+        for note in self.boilings(step) {
+            if !notes.contains(&note) {
+                notes.push(note);
+            }
+        }
         if let Some((Path::ConstantPressure, _)) = step.path {
             let p = self.map.states.get(step.from[0].0).map_or(f64::NAN, |slots| self.value(slots.pressure));
             notes.push(format!("Pressure {} kPa abs throughout.", significant(p / 1e3, 6)));
+        }
+        notes
+    }
+
+    /// What boils by its vapour pressure, and what the latent heat there rests on.
+    fn boilings(&self, step: &Step) -> Vec<String> {
+        let mut notes = Vec::new();
+        for (parcel, legs) in self.ways(step) {
+            let id = parcel.constituent.species;
+            let Some(species) = self.program.species.get(id.0) else { continue };
+            for leg in legs {
+                let thermo::LegKind::Transition { link: Some(link), .. } = leg.kind else { continue };
+                let Some(latent) = species
+                    .curve
+                    .boiling_latent(leg.from)
+                    .filter(|_| self.boils_by_law(id, link, leg.from.value))
+                else {
+                    continue;
+                };
+                notes.push(format!(
+                    "{} boils at {} K by its vapour pressure; its latent heat there, {} kJ/kg, is the difference of the enthalpies of both phases, the vapour taken as ideal.",
+                    species.name,
+                    significant(leg.from.value, 6),
+                    significant(latent.value / 1e3, 5)
+                ));
+            }
         }
         notes
     }

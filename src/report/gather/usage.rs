@@ -2,7 +2,7 @@
 
 use super::worked::WorkedSheet;
 use crate::program::{Constituent, DatumKind, Node, Species, SpeciesId, StateId, StateMember, Step};
-use crate::thermo::{Allowance, Leg, LegKind, Pin, Place};
+use crate::thermo::{Allowance, Leg, LegKind, PhaseClass, Pin, Place};
 use crate::units::quantity;
 use std::collections::BTreeMap;
 
@@ -73,6 +73,9 @@ impl Usage {
             if present.upper.is_some_and(|(_, share)| share > 0.0 && share < 1.0) {
                 self.note(constituent.species, DatumKind::Transition { below: present.lower.0 }, (t, t));
             }
+            if present.upper.is_some() && sheet.boils_by_law(constituent.species, present.lower.0, t) {
+                self.note(constituent.species, DatumKind::VapourPressure, (t, t));
+            }
             self.note(constituent.species, DatumKind::MolarMass, (t, t));
         }
     }
@@ -83,7 +86,10 @@ impl Usage {
             LegKind::Sensible { phase } => self.sensible(sheet, id, phase, span),
             LegKind::SensibleInRange { link } => self.note(id, DatumKind::Transition { below: link }, span),
             LegKind::Transition { link: Some(link), .. } => {
-                self.note(id, DatumKind::Transition { below: link }, span)
+                self.note(id, DatumKind::Transition { below: link }, span);
+                if sheet.boils_by_law(id, link, leg.from.value) {
+                    self.note(id, DatumKind::VapourPressure, span);
+                }
             }
             LegKind::Transition { .. } => {
                 self.note(id, DatumKind::Formation { phase: None }, (298.15, 298.15))
@@ -188,6 +194,15 @@ impl WorkedSheet<'_> {
         program.tables.iter().flat_map(|table| &table.columns).for_each(|column| column.value.walk(see));
     }
 
+    /// Whether a species boils at a temperature by its vapour pressure, not at its stated boiling point.
+    pub(super) fn boils_by_law(&self, id: SpeciesId, link: usize, kelvin: f64) -> bool {
+        self.program.species.get(id.0).is_some_and(|species| {
+            let stated = species.curve.transition(link).map(|transition| transition.from.value);
+            let gas = species.curve.phase_class(link + 1) == Some(PhaseClass::Gas);
+            gas && species.curve.vapour_pressure().is_some() && stated != Some(kelvin)
+        })
+    }
+
     /// Whether a step turns one species into another.
     pub(super) fn turns_matter(&self, step: &Step) -> bool {
         let species = |ids: &[StateId]| -> std::collections::BTreeSet<SpeciesId> {
@@ -213,11 +228,13 @@ impl WorkedSheet<'_> {
 
     /// The ways of a step: each species' mass from a place at the start to one at the end, with the legs per kilogram.
     pub(super) fn ways(&self, step: &Step) -> Vec<(Parcel, Vec<Leg>)> {
+        let last = step.to.first().and_then(|id| self.map.states.get(id.0));
+        let pressure = quantity(last.map_or(f64::NAN, |slots| self.value(slots.pressure)));
         self.paired(step)
             .into_iter()
             .filter_map(|(start, end)| {
                 let species = self.program.species.get(start.constituent.species.0)?;
-                Some((start, species.curve.route(start.place, end.place)))
+                Some((start, species.curve.route_at(start.place, end.place, pressure)))
             })
             .collect()
     }

@@ -4,6 +4,7 @@ use std::ops::Range;
 
 use uom::si::f64::MolarMass;
 
+use super::boiling::Saturation;
 use super::check::{check_curve, link_span, phase_span};
 use super::data::{CurveData, Density, Link, PhaseClass, PhaseData};
 use super::error::CurveError;
@@ -23,6 +24,7 @@ pub struct HeatingCurve {
     pub(super) joints: Vec<Joint>,
     pub(super) segments: Vec<Segment>,
     pub(super) tracks: Tracks,
+    pub(super) saturation: Option<Saturation>,
     pub(super) molar_mass: Option<MolarMass>,
     pub(super) decomposes_at: Option<f64>,
     pub(super) stable: Range<usize>,
@@ -66,11 +68,13 @@ impl HeatingCurve {
                 return Err(CurveError::DecompositionOrder { temperature: t });
             }
         }
+        let saturation = Saturation::place(&data).map_err(CurveError::VapourPressure)?;
         let formations = Formations::place(&data, &stable)?;
         let mut links = lay_links(&data, &laid);
         let (shifts, absolute) = shift_runs(&data, &laid, &links, &formations)?;
         settle_latents(&data, &laid, &shifts, &mut links)?;
-        Ok(flatten(data, laid, &links, &shifts, stable, (absolute, formations.extrapolated)))
+        let grounds = (absolute, formations.extrapolated);
+        Ok(flatten(data, laid, &links, &shifts, stable, (grounds, saturation)))
     }
 
     /// Whether enthalpies count from the elements at 298.15 K, not from the curve's lowest temperature.
@@ -257,7 +261,7 @@ fn flatten(
     links: &[LaidLink],
     shifts: &[f64],
     stable: Range<usize>,
-    (absolute, formation_extrapolated): (bool, bool),
+    ((absolute, formation_extrapolated), saturation): ((bool, bool), Option<Saturation>),
 ) -> HeatingCurve {
     let (mut segments, mut phases, mut joints) = (Vec::new(), Vec::new(), Vec::new());
     let mut latent = 0.0;
@@ -298,6 +302,7 @@ fn flatten(
         joints,
         segments,
         tracks: Tracks::default(),
+        saturation,
         molar_mass: data.molar_mass,
         decomposes_at: data.decomposes_at.map(|t| t.value),
         stable,

@@ -3,7 +3,7 @@
 use uom::si::f64::{AvailableEnergy, MassDensity, MolarMass, ThermodynamicTemperature};
 
 use crate::numeric::Formula;
-use crate::thermo::HeatCapacity;
+use crate::thermo::{HeatCapacity, VapourPressure};
 
 /// Solid, liquid or gas; the order is that of heating.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash)]
@@ -105,6 +105,8 @@ pub struct CurveData {
     pub formation: Option<AvailableEnergy>,
     /// Temperature above which the species decomposes.
     pub decomposes_at: Option<ThermodynamicTemperature>,
+    /// The vapour pressure of the liquid that boils.
+    pub vapour_pressure: Option<VapourPressure>,
     /// Molar mass, of use for gas volumes.
     pub molar_mass: Option<MolarMass>,
 }

@@ -2,6 +2,8 @@
 
 use uom::si::f64::{AvailableEnergy, ThermodynamicTemperature};
 
+use super::boiling::SaturationFault;
+
 /// What is wrong with the data of a species.
 #[derive(Debug, Clone, Copy, PartialEq)]
 #[allow(missing_docs)]
@@ -54,6 +56,8 @@ pub enum CurveError {
     DensityNotPositive { phase: usize, temperature: ThermodynamicTemperature },
     /// A molar mass that is not positive.
     MolarMass,
+    /// A vapour-pressure law that does not fit the curve.
+    VapourPressure(SaturationFault),
     /// A decomposition temperature below all data.
     DecompositionOrder { temperature: ThermodynamicTemperature },
 }

@@ -3,6 +3,7 @@
 use uom::si::f64::{Pressure, ThermodynamicTemperature};
 
 use super::assemble::HeatingCurve;
+use super::boiling::Moved;
 use super::data::PhaseClass;
 use super::place::{Allowance, Pin, Place, Side};
 use super::segment::Body;
@@ -11,6 +12,9 @@ use crate::thermo::si::typed;
 
 /// Within how many kelvin of a transition the side has to be named.
 const TRANSITION_BAND: f64 = 0.5;
+
+/// How far beyond a range, relative, a temperature still counts as its end.
+const TOUCH: f64 = 1e-9;
 
 /// Why a temperature has no place on a curve; phases by their index.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -28,6 +32,14 @@ pub enum LocateError {
     Decomposes { at: ThermodynamicTemperature },
     /// Across the boiling point at a pressure where it does not hold.
     BoilingPressure { temperature: ThermodynamicTemperature },
+    /// The vapour-pressure law does not hold at the pressure: what is liquid below and what is gas above two
+    /// temperatures is known, what lies between is not.
+    OutsideVapourPressure {
+        liquid_below: ThermodynamicTemperature,
+        gas_above: ThermodynamicTemperature,
+        lo: Pressure,
+        hi: Pressure,
+    },
     /// A side named where no transition of that phase is near.
     NoTransition,
     /// A share that is not from 0 to 1.
@@ -91,6 +103,24 @@ impl HeatingCurve {
         if !(t > 0.0 && t.is_finite()) {
             return Err(LocateError::NotATemperature);
         }
+        match self.moved(track, pressure, allowance) {
+            None => self.locate_along(track, t, pressure, side, allowance),
+            Some(Moved::Whole(track)) => self.locate_along(&track, t, pressure, side, allowance),
+            Some(Moved::Parted(halves)) if side.is_some() && nearest_point(track, t, side).is_none() => {
+                Err(halves.on_plateau())
+            }
+            Some(Moved::Parted(halves)) => self.locate_along(halves.at(t)?, t, pressure, side, allowance),
+        }
+    }
+
+    fn locate_along(
+        &self,
+        track: &Track,
+        t: f64,
+        pressure: f64,
+        side: Option<Side>,
+        allowance: &Allowance,
+    ) -> Result<Place, LocateError> {
         if let Some((at, link)) = nearest_point(track, t, side) {
             return self.on_point(track, (at, link), side, (pressure, allowance));
         }
@@ -120,12 +150,29 @@ impl HeatingCurve {
         if !(t > 0.0 && t.is_finite()) {
             return Err(LocateError::NotATemperature);
         }
-        let limits = self.limits(track, allowance, pressure.value);
+        match self.moved(track, pressure.value, allowance) {
+            None => self.place_along(track, t, pressure.value, upper_share, allowance),
+            Some(Moved::Whole(track)) => self.place_along(&track, t, pressure.value, upper_share, allowance),
+            Some(Moved::Parted(halves)) => {
+                self.place_along(halves.at(t)?, t, pressure.value, upper_share, allowance)
+            }
+        }
+    }
+
+    fn place_along(
+        &self,
+        track: &Track,
+        t: f64,
+        pressure: f64,
+        upper_share: Option<f64>,
+        allowance: &Allowance,
+    ) -> Result<Place, LocateError> {
+        let limits = self.limits(track, allowance, pressure);
         let share = upper_share.unwrap_or(if limits.gas_only && limits.lo == t { 1.0 } else { 0.0 });
         if !(0.0..=1.0).contains(&share) {
             return Err(LocateError::ShareOutOfBounds);
         }
-        self.check_limits(track, t, pressure.value, allowance)?;
+        self.check_limits(track, t, pressure, allowance)?;
         match track.points.iter().find(|(at, _)| *at == t) {
             Some(&(at, link)) => Ok(self.plateau(at, link, share)),
             None => Ok(self.place_on(track, t)),
@@ -141,7 +188,7 @@ impl HeatingCurve {
     ) -> Result<Place, LocateError> {
         let boils = self.phases.get(link + 1).is_some_and(|upper| upper.class == PhaseClass::Gas);
         let limits = self.limits(track, allowance, pressure);
-        if boils && (limits.gas_only || limits.condensed_only) {
+        if boils && track.cut.is_none() && (limits.gas_only || limits.condensed_only) {
             return Err(LocateError::BoilingPressure { temperature: typed(at) });
         }
         let Some(Side { phase, share }) = side else {
@@ -158,7 +205,9 @@ impl HeatingCurve {
 
     fn plateau(&self, temperature: f64, link: usize, share: f64) -> Place {
         let segment = self.joints.get(link).map_or(0, |joint| joint.segments.start);
-        Place { segment, temperature, share, extrapolated: false }
+        let beyond =
+            |phase: usize| self.phases.get(phase).is_some_and(|phase| !near(phase.lo, phase.hi, temperature));
+        Place { segment, temperature, share, extrapolated: beyond(link) || beyond(link + 1) }
     }
 
     fn check_limits(
@@ -200,7 +249,8 @@ impl HeatingCurve {
         let piece = track.pieces.iter().find(|piece| t < piece.hi).or(track.pieces.last());
         let segment = piece.map_or(0, |piece| piece.segment);
         let inside = self.segments.get(segment).is_some_and(|segment| t >= segment.lo && t <= segment.hi);
-        let edge = piece.is_some_and(|piece| t >= piece.lo && t <= piece.hi);
+        let edge = piece.is_some_and(|piece| t >= piece.lo && t <= piece.hi)
+            && self.segments.get(segment).is_some_and(|segment| near(segment.lo, segment.hi, t));
         let decomposed = self.decomposes_at.is_some_and(|at| t > at);
         let share = self.melting_share(segment, t);
         Place { segment, temperature: t, share, extrapolated: !(inside || edge) || decomposed }
@@ -213,6 +263,11 @@ impl HeatingCurve {
             _ => 0.0,
         }
     }
+}
+
+/// Whether `t` lies between two temperatures, but for rounding.
+fn near(lo: f64, hi: f64, t: f64) -> bool {
+    t >= lo * (1.0 - TOUCH) && t <= hi * (1.0 + TOUCH)
 }
 
 /// The nearest point transition within the band; with a side, one that its phase takes part in.

@@ -28,11 +28,18 @@ impl HeatingCurve {
     /// Enthalpy at a place, at 101.325 kPa. Absolute when [`HeatingCurve::absolute`].
     #[inline]
     pub fn enthalpy(&self, place: Place) -> AvailableEnergy {
-        let segment = self.segments.get(place.segment);
-        typed(segment.map_or(f64::NAN, |segment| segment.enthalpy(place.temperature, place.share)))
+        let Some(segment) = self.segments.get(place.segment) else { return typed(f64::NAN) };
+        typed(match segment.body {
+            Body::Plateau { link, .. } if place.temperature != segment.lo => {
+                let (below, above) = self.enthalpies_beside(link, place.temperature);
+                below + place.share * (above - below)
+            }
+            _ => segment.enthalpy(place.temperature, place.share),
+        })
     }
 
-    /// Latent heat passed from the first phase of the place's chain up to the place.
+    /// Latent heat passed from the first phase of the place's chain up to the place, boiling where it is at
+    /// 101.325 kPa.
     #[inline]
     pub fn latent(&self, place: Place) -> AvailableEnergy {
         let segment = self.segments.get(place.segment);

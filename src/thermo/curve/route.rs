@@ -1,11 +1,11 @@
 //! The way from one place to another, leg by leg.
 
-use uom::si::f64::{AvailableEnergy, ThermodynamicTemperature};
+use uom::si::f64::{AvailableEnergy, Pressure, ThermodynamicTemperature};
 
 use super::assemble::{HeatingCurve, segment_at};
 use super::place::Place;
 use super::segment::Body;
-use crate::thermo::constants::REFERENCE_TEMPERATURE;
+use crate::thermo::constants::{REFERENCE_TEMPERATURE, STANDARD_ATMOSPHERE};
 use crate::thermo::si::typed;
 
 /// What happens on a leg.
@@ -71,22 +71,63 @@ impl Stop {
     }
 }
 
+/// A boiling link and where it boils, if not where the curve has it.
+type Moved = Option<(usize, f64)>;
+
+/// A stop as it is, or on the plateau of a link its lower and its upper phase, by weight.
+fn apart(stop: Stop, link: usize) -> Vec<(f64, Stop)> {
+    if stop.at != 2 * link + 1 {
+        return vec![(1.0, stop)];
+    }
+    let phase = |phase: usize| Stop::phase(phase, stop.temperature);
+    vec![(1.0 - stop.share, phase(link)), (stop.share, phase(link + 1))]
+}
+
 impl HeatingCurve {
     /// The legs from one place to another, in order; their sum is the difference of the enthalpies. The way
     /// leads through every phase and transition between; a phase that stands past its transition first goes
     /// back to it. Between phases apart it crosses over at 298.15 K, or at the nearest temperature at which
     /// both have data.
     pub fn route(&self, from: Place, to: Place) -> Vec<Leg> {
+        self.route_at(from, to, typed(STANDARD_ATMOSPHERE))
+    }
+
+    /// As [`HeatingCurve::route`], boiling where a vapour-pressure law has it at `pressure`. Of a wet vapour that
+    /// stands at another pressure, liquid and gas go their ways each.
+    pub fn route_at(&self, from: Place, to: Place, pressure: Pressure) -> Vec<Leg> {
         let (Some(start), Some(end)) = (self.stop(from), self.stop(to)) else { return Vec::new() };
+        let Some((link, t)) = self.boiling_moved(pressure.value) else { return self.way(start, end, None) };
+        let stands_off = |stop: Stop| stop.at == 2 * link + 1 && stop.temperature != t;
+        if !stands_off(start) && !stands_off(end) {
+            return self.way(start, end, Some((link, t)));
+        }
+        let mut legs = Vec::new();
+        let mut ends = apart(end, link);
+        for (weight, start) in apart(start, link) {
+            let mut left = weight;
+            for (open, end) in &mut ends {
+                let share = open.min(left);
+                if share > 0.0 {
+                    let part = self.way(start, *end, Some((link, t)));
+                    legs.extend(part.into_iter().map(|leg| Leg { enthalpy: leg.enthalpy * share, ..leg }));
+                    left -= share;
+                    *open -= share;
+                }
+            }
+        }
+        legs
+    }
+
+    fn way(&self, start: Stop, end: Stop, moved: Moved) -> Vec<Leg> {
         let mut legs = Vec::new();
         if self.linked(start.at / 2, end.at.div_ceil(2)) {
-            self.along(start, end, &mut legs);
+            self.along(start, end, moved, &mut legs);
         } else {
             let crossing = self.crossing(start.at / 2, end.at / 2);
             let (leave, enter) = (Stop::phase(start.at / 2, crossing.0), Stop::phase(end.at / 2, crossing.1));
-            self.along(start, leave, &mut legs);
+            self.along(start, leave, moved, &mut legs);
             legs.push(self.cross(leave, enter));
-            self.along(enter, end, &mut legs);
+            self.along(enter, end, moved, &mut legs);
         }
         legs
     }
@@ -105,13 +146,13 @@ impl HeatingCurve {
         (low..high).all(|link| self.joints.get(link).is_some_and(|joint| joint.span.is_some()))
     }
 
-    fn along(&self, start: Stop, end: Stop, legs: &mut Vec<Leg>) {
+    fn along(&self, start: Stop, end: Stop, moved: Moved, legs: &mut Vec<Leg>) {
         let place = |stop: Stop| (stop.at, stop.share, stop.temperature);
         if place(start) <= place(end) {
-            self.upwards(start, end, legs);
+            self.upwards(start, end, moved, legs);
         } else {
             let first = legs.len();
-            self.upwards(end, start, legs);
+            self.upwards(end, start, moved, legs);
             if let Some(new) = legs.get_mut(first..) {
                 new.reverse();
                 new.iter_mut().for_each(|leg| *leg = leg.reversed());
@@ -119,19 +160,22 @@ impl HeatingCurve {
         }
     }
 
-    fn upwards(&self, start: Stop, end: Stop, legs: &mut Vec<Leg>) {
+    fn upwards(&self, start: Stop, end: Stop, moved: Moved, legs: &mut Vec<Leg>) {
+        let span_of = |link: usize| match moved {
+            Some((boils, t)) if boils == link => Some((t, t)),
+            _ => self.link_span(link),
+        };
         for at in start.at..=end.at {
             let index = at / 2;
             let from = (at == start.at).then_some(start);
             let to = (at == end.at).then_some(end);
             if at % 2 == 0 {
-                let below =
-                    index.checked_sub(1).and_then(|link| self.link_span(link)).map_or(f64::NAN, |s| s.1);
-                let above = self.link_span(index).map_or(f64::NAN, |span| span.0);
+                let below = index.checked_sub(1).and_then(span_of).map_or(f64::NAN, |span| span.1);
+                let above = span_of(index).map_or(f64::NAN, |span| span.0);
                 let from = from.map_or(below, |stop| stop.temperature);
                 let to = to.map_or(above, |stop| stop.temperature);
                 self.sensible(index, (from, to), legs);
-            } else if let Some((begin, finish)) = self.link_span(index) {
+            } else if let Some((begin, finish)) = span_of(index) {
                 let from = from.unwrap_or(Stop { at, temperature: begin, share: 0.0 });
                 let to = to.unwrap_or(Stop { at, temperature: finish, share: 1.0 });
                 self.through(index, from, to, legs);
@@ -154,7 +198,13 @@ impl HeatingCurve {
     fn through(&self, link: usize, from: Stop, to: Stop, legs: &mut Vec<Leg>) {
         let Some(joint) = self.joints.get(link) else { return };
         let span = (from.temperature, to.temperature);
-        let latent = (to.share - from.share) * joint.latent;
+        let height = if self.boils_off(link, from.temperature) {
+            let (below, above) = self.enthalpies_beside(link, from.temperature);
+            above - below
+        } else {
+            joint.latent
+        };
+        let latent = (to.share - from.share) * height;
         if from.temperature != to.temperature {
             let rise =
                 self.range_sensible(link, to.temperature) - self.range_sensible(link, from.temperature);
@@ -179,7 +229,7 @@ impl HeatingCurve {
     }
 
     /// Enthalpy of one phase, its outermost laws stretched where need be.
-    fn phase_enthalpy(&self, phase: usize, t: f64) -> f64 {
+    pub(super) fn phase_enthalpy(&self, phase: usize, t: f64) -> f64 {
         let own = self.phases.get(phase).and_then(|phase| self.segments.get(phase.segments.clone()));
         own.and_then(|own| segment_at(own, t)).map_or(f64::NAN, |(_, segment)| segment.enthalpy(t, 0.0))
     }

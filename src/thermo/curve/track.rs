@@ -34,6 +34,10 @@ pub(in crate::thermo) struct Track {
     pub(super) points: Vec<(f64, usize)>,
     /// The boiling or sublimation point on the way.
     pub(super) boiling: Option<f64>,
+    /// Whether a vapour-pressure law moves that point.
+    pub(super) moves: bool,
+    /// Where boiling cuts the track at the pressure that it was laid for.
+    pub(super) cut: Option<(f64, f64)>,
     /// Whether the species' decomposition bounds it.
     pub(super) decomposes: bool,
 }
@@ -50,7 +54,12 @@ impl Track {
     pub(super) fn boils_at(&self, pressure: f64) -> bool {
         let (least, most) =
             ((1.0 - BOILING_BAND) * STANDARD_ATMOSPHERE, (1.0 + BOILING_BAND) * STANDARD_ATMOSPHERE);
-        self.boiling.is_none() || (pressure >= least && pressure <= most)
+        self.boiling.is_none()
+            || (if self.moves {
+                pressure == STANDARD_ATMOSPHERE
+            } else {
+                pressure >= least && pressure <= most
+            })
     }
 }
 
@@ -79,6 +88,7 @@ impl Tracks {
 /// Lays every track of a curve.
 pub(super) fn lay_tracks(curve: &HeatingCurve) -> Tracks {
     let last = curve.stable.end.saturating_sub(1);
+    let lay_track = |curve: &HeatingCurve, first, last| lay_track(curve, first, last, Course::Normal);
     let class = |class| class_phases(curve, class).map(|(first, last)| lay_track(curve, first, last));
     Tracks {
         stable: lay_track(curve, curve.stable.start, last),
@@ -96,23 +106,53 @@ fn class_phases(curve: &HeatingCurve, class: PhaseClass) -> Option<(usize, usize
     Some((first, last.unwrap_or(first)))
 }
 
-fn lay_track(curve: &HeatingCurve, first: usize, last: usize) -> Track {
+/// How boiling enters a track.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub(super) enum Course {
+    /// Where the curve has it.
+    Normal,
+    /// The plateau of this link moved to this temperature.
+    Moved(usize, f64),
+    /// Nowhere: the track ends at these temperatures at the latest.
+    Cut(f64, f64),
+}
+
+pub(super) fn lay_track(curve: &HeatingCurve, first: usize, last: usize, course: Course) -> Track {
     let decomposes = curve.stable.contains(&first) && curve.decomposes_at.is_some();
     let mut track = Track { first, last, decomposes, ..Track::default() };
-    let mut from = curve.phases.get(first).map_or(f64::NAN, |phase| phase.lo);
+    let (floor, ceiling) = match course {
+        Course::Normal => (f64::NEG_INFINITY, f64::INFINITY),
+        Course::Moved(..) => {
+            track.cut = Some((f64::NEG_INFINITY, f64::INFINITY));
+            (f64::NEG_INFINITY, f64::INFINITY)
+        }
+        Course::Cut(floor, ceiling) => {
+            track.cut = Some((floor, ceiling));
+            (floor, ceiling)
+        }
+    };
+    let mut from = curve.phases.get(first).map_or(f64::NAN, |phase| phase.lo.max(floor));
     for index in first..=last {
         let Some(phase) = curve.phases.get(index) else { continue };
         let joint = curve.joints.get(index).filter(|_| index < last);
-        let span = joint.and_then(|joint| joint.span);
-        let to = span.map_or(phase.hi, |(begin, _)| begin);
+        let moved = match course {
+            Course::Moved(link, t) if link == index => Some(t),
+            _ => None,
+        };
+        let span = moved.map(|t| (t, t)).or(joint.and_then(|joint| joint.span));
+        let to = span.map_or(phase.hi.min(ceiling), |(begin, _)| begin);
         lay_pieces(curve, phase.segments.clone(), (from, to), &mut track.pieces);
         if let (Some(joint), Some((begin, end))) = (joint, span) {
-            lay_pieces(curve, joint.segments.clone(), (begin, end), &mut track.pieces);
+            match moved {
+                Some(t) => track.pieces.push(curve.moved_plateau(index, joint.segments.start, t)),
+                None => lay_pieces(curve, joint.segments.clone(), (begin, end), &mut track.pieces),
+            }
             if begin == end {
                 track.points.push((begin, index));
             }
             if curve.phases.get(index + 1).is_some_and(|upper| upper.class == PhaseClass::Gas) {
                 track.boiling = Some(begin);
+                track.moves = moved.is_none() && curve.boils_by_law(index);
             }
             from = end;
         }
@@ -208,7 +248,14 @@ impl HeatingCurve {
     #[inline]
     pub(in crate::thermo) fn limits(&self, track: &Track, allowance: &Allowance, pressure: f64) -> Limits {
         let mut limits = self.data_limits(track, allowance);
-        if let Some(boiling) = track.boiling {
+        if let Some((floor, ceiling)) = track.cut {
+            if limits.hi >= ceiling {
+                (limits.hi, limits.condensed_only) = (ceiling, true);
+            }
+            if limits.lo <= floor {
+                (limits.lo, limits.gas_only) = (floor, true);
+            }
+        } else if let Some(boiling) = track.boiling {
             if pressure > (1.0 + BOILING_BAND) * STANDARD_ATMOSPHERE && limits.hi >= boiling {
                 (limits.hi, limits.condensed_only) = (boiling, true);
             }
@@ -221,17 +268,31 @@ impl HeatingCurve {
 
     /// A table ends where it ends: only other laws can be stretched.
     fn widen(&self, limits: &mut Limits, track: &Track, allowance: &Allowance) {
-        let span = |piece: Option<&Piece>| {
-            let segment = piece.and_then(|piece| self.segments.get(piece.segment))?;
-            match &segment.body {
-                Body::Range { law, .. } => law.span(),
-                Body::Plateau { .. } | Body::Melting { .. } => None,
-            }
-        };
-        let floor = span(track.pieces.first()).map_or(0.0, |(lo, _)| lo.value);
-        let ceiling = span(track.pieces.last()).map_or(f64::INFINITY, |(_, hi)| hi.value);
+        let (floor, ceiling) = (self.law_span(track.pieces.first()).0, self.law_span(track.pieces.last()).1);
         limits.lo = limits.lo.min(allowance.lowest(track.first).max(floor));
         limits.hi = limits.hi.max(allowance.highest(track.last).min(ceiling));
+    }
+
+    /// Between which temperatures the law of a piece can be asked at all.
+    fn law_span(&self, piece: Option<&Piece>) -> (f64, f64) {
+        let everywhere = (0.0, f64::INFINITY);
+        let segment = piece.and_then(|piece| self.segments.get(piece.segment));
+        match segment.map(|segment| &segment.body) {
+            Some(Body::Range { law, .. }) => law.span().map_or(everywhere, |(lo, hi)| (lo.value, hi.value)),
+            _ => everywhere,
+        }
+    }
+
+    /// The temperatures between which a phase may be used: its data, widened by what is allowed.
+    pub(super) fn reach(&self, phase: usize, allowance: &Allowance) -> (f64, f64) {
+        let Some(track) = self.track(Pin::Phase(phase)) else { return (f64::NAN, f64::NAN) };
+        let lo = track.pieces.first().map_or(f64::NAN, |piece| piece.lo);
+        let hi = track.pieces.last().map_or(f64::NAN, |piece| piece.hi);
+        let mut limits = Limits { lo, hi, gas_only: false, condensed_only: false, decomposes: false };
+        if !allowance.is_none() {
+            self.widen(&mut limits, track, allowance);
+        }
+        (limits.lo, limits.hi)
     }
 
     fn cut(&self, limits: &mut Limits, track: &Track, allowance: &Allowance) {

@@ -2,6 +2,7 @@
 
 use super::part::{Part, SettleError, Settled, Unreachable};
 use crate::numeric::find_rising_root;
+use crate::thermo::constants::STANDARD_ATMOSPHERE;
 use crate::thermo::curve::{Measure, Track};
 use crate::thermo::si::typed;
 
@@ -13,6 +14,8 @@ pub(super) struct Sum<'a> {
     pub(super) parts: &'a [Part<'a>],
     pub(super) measure: Measure,
     pub(super) pressure: f64,
+    /// The tracks that the pressure makes other than the curves have them; empty where there are none.
+    moved: Vec<Option<Track>>,
 }
 
 /// The temperatures that all parts share.
@@ -33,8 +36,23 @@ struct End {
 }
 
 impl<'a> Sum<'a> {
-    pub(super) fn tracks(&self) -> impl Iterator<Item = (usize, Option<&'a Track>)> + use<'a> {
-        self.parts.iter().map(|part| part.curve.track(part.pin)).enumerate()
+    pub(super) fn new(parts: &'a [Part<'a>], measure: Measure, pressure: f64) -> Sum<'a> {
+        let moved = |part: &Part<'_>| part.curve.sought_track(part.pin, pressure, part.allowance);
+        let moves = pressure != STANDARD_ATMOSPHERE && parts.iter().any(|part| part.curve.follows_law());
+        let moved = if moves { parts.iter().map(moved).collect() } else { Vec::new() };
+        Sum { parts, measure, pressure, moved }
+    }
+
+    pub(super) fn tracks(&self) -> impl Iterator<Item = (usize, Option<&Track>)> {
+        self.parts.iter().enumerate().map(|(at, part)| (at, self.track(at, part)))
+    }
+
+    #[inline]
+    fn track(&self, at: usize, part: &Part<'a>) -> Option<&Track> {
+        match self.moved.get(at) {
+            Some(Some(track)) => Some(track),
+            _ => part.curve.track(part.pin),
+        }
     }
 
     /// The total at `t`, on plateaus at their lower or their `upper` end.
@@ -46,8 +64,8 @@ impl<'a> Sum<'a> {
     #[inline]
     fn total_and_slope(&self, t: f64) -> (f64, f64) {
         let (mut total, mut slope) = (0.0, 0.0);
-        for part in self.parts {
-            let track = part.curve.track(part.pin);
+        for (at, part) in self.parts.iter().enumerate() {
+            let track = self.track(at, part);
             let (value, rise) = track
                 .map_or((f64::NAN, f64::NAN), |track| part.curve.measure_and_slope(track, self.measure, t));
             total += part.mass.value * value;
@@ -58,10 +76,10 @@ impl<'a> Sum<'a> {
 
     #[inline]
     fn over_parts(&self, of: impl Fn(&Part<'_>, &Track) -> f64) -> f64 {
-        let value = |part: &Part<'_>| {
-            part.curve.track(part.pin).map_or(f64::NAN, |track| part.mass.value * of(part, track))
+        let value = |(at, part): (usize, &Part<'a>)| {
+            self.track(at, part).map_or(f64::NAN, |track| part.mass.value * of(part, track))
         };
-        self.parts.iter().map(value).sum()
+        self.parts.iter().enumerate().map(value).sum()
     }
 
     pub(super) fn settle(&self, target: f64) -> Result<Settled, SettleError> {
@@ -103,8 +121,8 @@ impl<'a> Sum<'a> {
     fn window(&self) -> Result<Window, SettleError> {
         let (mut lo, mut hi) = (0.0_f64, f64::INFINITY);
         let mut boiling = false;
-        for part in self.parts {
-            let Some(track) = part.curve.track(part.pin) else { continue };
+        for (at, part) in self.parts.iter().enumerate() {
+            let Some(track) = self.track(at, part) else { continue };
             let limits = part.curve.limits(track, part.allowance, self.pressure);
             boiling |= (limits.gas_only && limits.lo >= lo) || (limits.condensed_only && limits.hi <= hi);
             lo = lo.max(limits.lo);

@@ -25,7 +25,7 @@ pub fn temperature_for_enthalpy(
     {
         return Ok(settled);
     }
-    let sum = Sum { parts, measure: Measure::Enthalpy { excess }, pressure: pressure.value };
+    let sum = Sum::new(parts, Measure::Enthalpy { excess }, pressure.value);
     sum.settle(target.value)
 }
 
@@ -39,7 +39,7 @@ pub fn temperature_for_internal_energy(
     target: Energy,
     pressure: Pressure,
 ) -> Result<Settled, SettleError> {
-    let sum = Sum { parts, measure: Measure::InternalEnergy, pressure: pressure.value };
+    let sum = Sum::new(parts, Measure::InternalEnergy, pressure.value);
     for (part, track) in sum.tracks() {
         let track = track.ok_or(SettleError::NoSuchPhase { part })?;
         let with_mass = parts.get(part).is_some_and(|part| part.curve.molar_mass().is_some());
@@ -60,7 +60,7 @@ pub fn temperature_isentropic(
     from: ThermodynamicTemperature,
     log_pressure_ratio: f64,
 ) -> Result<Settled, SettleError> {
-    let sum = Sum { parts, measure: Measure::Entropy, pressure: STANDARD_ATMOSPHERE };
+    let sum = Sum::new(parts, Measure::Entropy, STANDARD_ATMOSPHERE);
     let mut gain = 0.0;
     for ((index, track), part) in sum.tracks().zip(parts) {
         let track = track.ok_or(SettleError::NoSuchPhase { part: index })?;
@@ -86,7 +86,8 @@ pub fn temperature_isentropic(
 #[inline]
 fn settle_alone(part: &Part<'_>, target: f64, pressure: f64) -> Option<Settled> {
     let curve = part.curve;
-    let track = curve.track(part.pin)?;
+    let moved = curve.sought_track(part.pin, pressure, part.allowance);
+    let track = moved.as_ref().or(curve.track(part.pin))?;
     if part.mass.value.is_nan()
         || part.mass.value <= 0.0
         || !curve.pressure_free(pressure - STANDARD_ATMOSPHERE)

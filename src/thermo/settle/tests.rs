@@ -9,6 +9,7 @@ use crate::thermo::constants::GAS_CONSTANT;
 use crate::thermo::curve::tests::{at, atmosphere, data, h, j, k, phase, rich, zinc};
 use crate::thermo::curve::{Allowance, HeatingCurve, Link, PhaseClass, Pin, Side};
 use crate::thermo::si::typed;
+use crate::thermo::{VapourPressure, VapourPressureForm};
 
 fn part(curve: &HeatingCurve, pin: Pin, mass: f64) -> Part<'_> {
     Part { curve, pin, allowance: Allowance::none(), mass: typed(mass) }
@@ -294,5 +295,46 @@ proptest! {
         let rise = rich.entropy_increment(start, place).unwrap().value;
         let settled = temperature_isentropic(&parts, k(500.0), rise * 0.060 / GAS_CONSTANT).unwrap();
         prop_assert!((settled.temperature.value - t).abs() < 1e-9 * t);
+    }
+}
+
+/// The rich species with a vapour pressure that boils at 950 K at 101.325 kPa, and at 500 kPa below 1000 K.
+fn rich_with_law() -> HeatingCurve {
+    let form = VapourPressureForm::Antoine { a: 16_000.0 / 930.0, b: 16_000.0, c: -20.0, unit: 101_325.0 };
+    let mut data = crate::thermo::curve::tests::rich_data();
+    data.vapour_pressure = Some(VapourPressure::new(form, k(800.0), k(1100.0)).unwrap());
+    HeatingCurve::build(data).unwrap()
+}
+
+#[test]
+fn a_step_may_end_in_boiling_at_pressure() {
+    let rich = rich_with_law();
+    for p in [90e3, 101_325.0, 5e5] {
+        let t = rich.boiling_temperature(typed(p)).unwrap();
+        for share in [0.0, 0.35, 1.0] {
+            let side = Some(Side { phase: 3, share });
+            let place = rich.locate(t, typed(p), Pin::Stable, side, Allowance::none()).unwrap();
+            let target = energy(2.0 * rich.enthalpy(place).value);
+            for parts in [vec![part(&rich, Pin::Stable, 2.0)], vec![part(&rich, Pin::Stable, 1.0); 2]] {
+                let settled = temperature_for_enthalpy(&parts, target, typed(p)).unwrap();
+                assert!((settled.temperature.value - t.value).abs() < 1e-9, "{settled:?} for {t:?}");
+                let found = settled.upper_share.unwrap_or(if share < 0.5 { 0.0 } else { 1.0 });
+                assert!((found - share).abs() < 1e-9, "{settled:?} for {share}");
+            }
+        }
+    }
+}
+
+proptest! {
+    #[test]
+    fn a_law_of_boiling_is_undone_too(t in 250.0_f64..1900.0, p in 60e3_f64..600e3) {
+        let rich = rich_with_law();
+        if let Ok(place) = rich.locate(k(t), typed(p), Pin::Stable, None, Allowance::none()) {
+            let target = energy(rich.enthalpy(place).value);
+            for parts in [vec![part(&rich, Pin::Stable, 1.0)], vec![part(&rich, Pin::Stable, 0.5); 2]] {
+                let settled = temperature_for_enthalpy(&parts, target, typed(p)).unwrap();
+                prop_assert!((settled.temperature.value - t).abs() < 1e-9 * t, "{settled:?} for {t}");
+            }
+        }
     }
 }

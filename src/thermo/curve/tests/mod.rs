@@ -7,8 +7,9 @@ mod places;
 mod routes;
 
 use super::*;
+use crate::numeric::math;
 use crate::thermo::si::typed;
-use crate::thermo::{Basis, HeatCapacity};
+use crate::thermo::{Basis, HeatCapacity, VapourPressure, VapourPressureForm};
 
 pub(in crate::thermo) fn k(t: f64) -> ThermodynamicTemperature {
     typed(t)
@@ -35,7 +36,7 @@ pub(in crate::thermo) fn phase(name: &str, class: PhaseClass, ranges: &[TestRang
 }
 
 pub(in crate::thermo) fn data(phases: Vec<PhaseData>, links: Vec<Link>) -> CurveData {
-    CurveData { phases, links, formation: None, decomposes_at: None, molar_mass: None }
+    CurveData { phases, links, formation: None, decomposes_at: None, vapour_pressure: None, molar_mass: None }
 }
 
 /// The zinc of the demo works, per mole over 65.38 g/mol.

@@ -146,3 +146,102 @@ fn volumes_and_internal_energy() {
     assert_eq!(rich.condensed_pressure_enthalpy(gas, typed(2e5)).unwrap().value, 0.0);
     assert_eq!(rich.specific_volume(at(&rich, 300.0, Pin::Stable).unwrap(), atmosphere()), None);
 }
+
+/// The rich species with a law of Antoine's that boils at 950.2 K at 101.325 kPa: ln p is steep enough that
+/// 500 kPa lie below 1000 K, where the data of the liquid end.
+fn rich_with_law(lo: f64, hi: f64) -> HeatingCurve {
+    let (b, c) = (16_000.0, -20.0);
+    let a = b / (950.2 + c);
+    let form = VapourPressureForm::Antoine { a, b, c, unit: 101_325.0 };
+    let mut data = rich_data();
+    data.vapour_pressure = Some(VapourPressure::new(form, k(lo), k(hi)).unwrap());
+    HeatingCurve::build(data).unwrap()
+}
+
+/// Where `rich_with_law` boils, by hand: T = B/(A − log10(p/p0)) − C, moved by 950 − 950.2.
+fn boils(p: f64) -> f64 {
+    let a = 16_000.0 / 930.2;
+    16_000.0 / (a - math::log10(p / 101_325.0)) + 20.0 - 0.2
+}
+
+#[test]
+fn a_law_moves_boiling() {
+    let rich = rich_with_law(800.0, 1100.0);
+    assert_eq!(rich.boiling_temperature(atmosphere()), Ok(k(950.0)), "the stated boiling point stays");
+    let five = typed(5e5);
+    let t = rich.boiling_temperature(five).unwrap().value;
+    assert!((t - boils(5e5)).abs() < 1e-9 && t > 980.0 && t < 1000.0, "{t}");
+    let at = |t: f64, p: f64| rich.locate(k(t), typed(p), Pin::Stable, None, Allowance::none());
+    let phase = |t: f64, p: f64| rich.phases_at(at(t, p).unwrap()).lower.0;
+    assert_eq!((phase(t - 0.6, 5e5), phase(t + 0.6, 5e5)), (2, 3));
+    assert_eq!(at(t + 0.1, 5e5), Err(LocateError::OnTransition { temperature: k(t), below: 2, above: 3 }));
+    // 98 kPa lies within 2 %: without a law it would boil at 950 K.
+    let low = boils(98_000.0);
+    assert_eq!((phase(low - 0.6, 98e3), phase(low + 0.6, 98e3)), (2, 3));
+    // Enthalpies beside and on the plateau: those of the phases there, 900 J/(kg K) for the liquid.
+    let side = Some(Side { phase: 3, share: 0.25 });
+    let wet = rich.locate(k(t), five, Pin::Stable, side, Allowance::none()).unwrap();
+    let liquid = h(&rich, 940.0) + 900.0 * (t - 940.0);
+    let gas = |t: f64| {
+        rich.enthalpy(rich.place(k(t), atmosphere(), Pin::Phase(3), None, Allowance::none()).unwrap()).value
+    };
+    let expected = 0.75 * liquid + 0.25 * gas(t);
+    assert!((rich.enthalpy(wet).value - expected).abs() < 1e-6, "{:?}", rich.enthalpy(wet));
+    assert_eq!(rich.phases_at(wet).upper, Some((3, 0.25)));
+    assert!((rich.saturation_pressure(k(t)).unwrap().value - 5e5).abs() < 1e-4);
+}
+
+#[test]
+fn boiling_moves_evenly_through_the_stated_point() {
+    let rich = rich_with_law(800.0, 1100.0);
+    let mut before = 0.0;
+    for step in -200..=200 {
+        let p = 101_325.0 * (1.0 + f64::from(step) * 1e-4);
+        let t = rich.boiling_temperature(typed(p)).unwrap().value;
+        assert!(t > before && (before == 0.0 || t - before < 0.01), "{t} after {before} at {p} Pa");
+        before = t;
+    }
+}
+
+#[test]
+fn where_the_law_or_the_data_end_only_the_sure_side_is_given() {
+    let at = |curve: &HeatingCurve, t: f64, p: f64, allowance: &Allowance| {
+        curve.locate(k(t), typed(p), Pin::Stable, None, allowance)
+    };
+    // The law ends at 960 K, some 145 kPa: above that pressure liquid is sure up to 959.8 K.
+    let short = rich_with_law(800.0, 960.0);
+    let none = Allowance::none();
+    assert!(at(&short, 955.0, 5e5, none).is_ok());
+    assert!(matches!(at(&short, 970.0, 5e5, none), Err(LocateError::OutsideVapourPressure { .. })));
+    // At 2 MPa it boils near 1030 K, but the data of the liquid end at 1000 K: the gas above is sure.
+    let rich = rich_with_law(800.0, 1100.0);
+    let t = boils(2e6);
+    assert!(at(&rich, 999.0, 2e6, none).is_ok() && at(&rich, t + 1.0, 2e6, none).is_ok());
+    assert_eq!(
+        at(&rich, 1010.0, 2e6, none),
+        Err(LocateError::OutsideRange { phase: 2, lo: k(590.0), hi: k(1000.0) })
+    );
+    let allowed = Allowance::default().allow(2, k(590.0), k(1050.0));
+    assert!(at(&rich, 1010.0, 2e6, &allowed).unwrap().extrapolated());
+    assert!(!at(&rich, t + 1.0, 2e6, &allowed).unwrap().extrapolated());
+    let side = Some(Side { phase: 3, share: 0.5 });
+    assert!(rich.locate(k(t), typed(2e6), Pin::Stable, side, &allowed).unwrap().extrapolated());
+}
+
+#[test]
+fn a_law_that_cannot_belong_to_the_curve_is_refused() {
+    let law = |a: f64| {
+        let form = VapourPressureForm::Antoine { a, b: 16_000.0, c: -20.0, unit: 101_325.0 };
+        Some(VapourPressure::new(form, k(800.0), k(1100.0)).unwrap())
+    };
+    let mut data = rich_data();
+    data.vapour_pressure = law(20.0);
+    let error = HeatingCurve::build(data).unwrap_err();
+    assert!(matches!(error, CurveError::VapourPressure(SaturationFault::Contradiction { .. })), "{error:?}");
+    let mut data = zinc_data();
+    data.vapour_pressure = law(17.2);
+    assert_eq!(
+        HeatingCurve::build(data).unwrap_err(),
+        CurveError::VapourPressure(SaturationFault::NoBoiling)
+    );
+}

@@ -103,3 +103,42 @@ proptest! {
         }
     }
 }
+
+#[test]
+fn legs_at_pressure_boil_where_the_law_has_it() {
+    // T = B/(A − log10(p/p0)) − C passes through the stated 950 K.
+    let form = VapourPressureForm::Antoine { a: 16_000.0 / 930.0, b: 16_000.0, c: -20.0, unit: 101_325.0 };
+    let mut data = rich_data();
+    data.vapour_pressure = Some(VapourPressure::new(form, k(800.0), k(1100.0)).unwrap());
+    let rich = HeatingCurve::build(data).unwrap();
+    let at =
+        |t: f64, p: f64, side| rich.locate(k(t), typed(p), Pin::Stable, side, Allowance::none()).unwrap();
+    let wet = |p: f64, share: f64| {
+        let t = rich.boiling_temperature(typed(p)).unwrap().value;
+        at(t, p, Some(Side { phase: 3, share }))
+    };
+    let check = |from: Place, to: Place, p: f64, transitions: usize| {
+        let legs = rich.route_at(from, to, typed(p));
+        let sum: f64 = legs.iter().map(|leg| leg.enthalpy.value).sum();
+        let rise = rich.enthalpy(to).value - rich.enthalpy(from).value;
+        assert!((sum - rise).abs() < 1e-6 * rise.abs().max(1.0), "{sum} for {rise}: {legs:?}");
+        let is_latent = |leg: &&Leg| matches!(leg.kind, LegKind::Transition { .. });
+        let latent: f64 = legs.iter().filter(is_latent).map(|leg| leg.enthalpy.value).sum();
+        let stated = rich.latent_at(to, typed(p)).value - rich.latent_at(from, typed(p)).value;
+        assert!((latent - stated).abs() < 1e-6, "latent {latent} for {stated}: {legs:?}");
+        assert_eq!(legs.iter().filter(is_latent).count(), transitions, "{legs:?}");
+        legs
+    };
+    let t = rich.boiling_temperature(typed(5e5)).unwrap();
+    let legs = check(at(900.0, 5e5, None), at(1100.0, 5e5, None), 5e5, 1);
+    assert!(legs.iter().any(|leg| leg.from == t && leg.to == t), "{legs:?}");
+    check(at(900.0, 5e5, None), wet(5e5, 0.3), 5e5, 1);
+    check(wet(5e5, 0.3), wet(5e5, 0.8), 5e5, 1);
+    check(at(1100.0, 5e5, None), at(1100.0, 1e5, None), 1e5, 0);
+    // A flash from 500 kPa to 90 kPa: liquid and vapour go their ways, and some of the liquid boils at the end.
+    check(wet(5e5, 0.0), wet(90e3, 0.2), 90e3, 1);
+    check(wet(5e5, 0.6), wet(90e3, 0.2), 90e3, 1);
+    check(wet(5e5, 0.6), at(1100.0, 90e3, None), 90e3, 1);
+    // Two transitions of its liquid, and those and boiling of its vapour.
+    check(at(300.0, 5e5, None), wet(5e5, 0.6), 101_325.0, 5);
+}
