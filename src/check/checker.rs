@@ -71,6 +71,8 @@ pub(super) struct Checker<'a> {
     pub(super) settled: BTreeSet<String>,
     /// The species of files already read, by identity.
     pub(super) files: BTreeMap<String, super::import::FileSpecies>,
+    /// What published forms say of their enthalpies, of the species being read.
+    pub(super) claims: Vec<super::consistency::Claim>,
     /// The identities of the files being read, outermost first.
     pub(super) reading: Vec<String>,
 }
@@ -113,6 +115,7 @@ impl<'a> Checker<'a> {
             open_values: Vec::new(),
             settled: BTreeSet::new(),
             files: BTreeMap::new(),
+            claims: Vec::new(),
             reading: vec![identity],
         }
     }

@@ -1,10 +1,11 @@
 //! Heat-capacity entries to laws.
 
 use super::checker::Checker;
+use super::consistency::Claim;
 use super::law_formula::{as_powers, compiled};
 use super::wanted::with_dimension;
 use crate::diagnostic::{Code, Diagnostic, nearest};
-use crate::numeric::Shape;
+use crate::numeric::{Shape, math};
 use crate::span::Span;
 use crate::syntax::tree::{
     Coefficient, CoefficientForm, Datum, Expression, HeatCapacityEntry, LawText, Row, Word,
@@ -209,6 +210,9 @@ impl Checker<'_> {
             return None;
         };
         let molar_mass = quantity(molar_mass);
+        if let Some(claim) = self.claim(name, given, &numbers, context) {
+            self.claims.push(claim);
+        }
         let law = match (*name, numbers.as_slice()) {
             ("nasa9", &[a1, a2, a3, a4, a5, a6, a7, r]) => {
                 HeatCapacity::nasa9([a1, a2, a3, a4, a5, a6, a7], quantity(r), molar_mass)
@@ -220,6 +224,26 @@ impl Checker<'_> {
             _ => return None,
         };
         self.law(law, context)
+    }
+
+    /// What the form's own enthalpy constant says, in the middle of its range.
+    fn claim(
+        &mut self,
+        form: &str,
+        given: &[Coefficient],
+        numbers: &[f64],
+        context: &Context<'_>,
+    ) -> Option<Claim> {
+        let (low, high) = context.range?;
+        let constant_name = match form {
+            "nasa9" => "b1",
+            "nasa7" => "a6",
+            _ => "F",
+        };
+        let constant = given.iter().find(|coefficient| coefficient.name.text == constant_name)?;
+        let constant = self.pure_coefficient(constant)?;
+        let kelvin = 0.5 * (low + high);
+        Some(Claim { span: context.span, kelvin, enthalpy: own_enthalpy(form, numbers, constant, kelvin)? })
     }
 
     fn coefficients_fit(
@@ -383,4 +407,25 @@ struct Context<'a> {
     species: &'a str,
     span: Span,
     range: Option<(f64, f64)>,
+}
+
+/// The absolute enthalpy of a published form at a temperature by its own constant, J/mol: NASA 9-term
+/// (NASA/TP-2002-211556), NASA 7-term (NASA TM-4513), Shomate with t = T/1000 K.
+fn own_enthalpy(form: &str, numbers: &[f64], constant: f64, kelvin: f64) -> Option<f64> {
+    let t = kelvin;
+    match (form, numbers) {
+        ("nasa9", &[a1, a2, a3, a4, a5, a6, a7, r]) => {
+            let rising = t * (a3 + t * (a4 / 2.0 + t * (a5 / 3.0 + t * (a6 / 4.0 + t * a7 / 5.0))));
+            Some(r * (-a1 / t + a2 * math::ln(t) + rising + constant))
+        }
+        ("nasa7", &[a1, a2, a3, a4, a5, r]) => {
+            Some(r * (t * (a1 + t * (a2 / 2.0 + t * (a3 / 3.0 + t * (a4 / 4.0 + t * a5 / 5.0)))) + constant))
+        }
+        (_, &[a, b, c, d, e]) => {
+            let t = t / 1000.0;
+            let rising = t * (a + t * (b / 2.0 + t * (c / 3.0 + t * d / 4.0)));
+            Some(1e3 * (rising - e / t + constant))
+        }
+        _ => None,
+    }
 }

@@ -2,11 +2,15 @@
 
 use super::checker::{Checker, Declared, Material};
 use crate::diagnostic::{Code, Diagnostic, nearest};
-use crate::library::{LoadError, Loaded, families, family};
+use crate::library::{LoadError, Loaded, NoFiles, families, family};
 use crate::program::Species;
+use crate::source::Sources;
 use crate::span::Span;
 use crate::syntax::parse_sheet;
 use crate::syntax::tree::{SpeciesName, Statement, Text, Use, UseFrom, Word};
+
+/// How the identity of a shipped family begins; its warnings are answered where it is made.
+const LIBRARY: &str = "library:";
 
 /// The species of a file, or `None` where the file is at fault and that is reported.
 pub(super) type FileSpecies = Option<Vec<Species>>;
@@ -74,7 +78,7 @@ impl Checker<'_> {
             self.report(found.help(help));
             return None;
         };
-        let identity = format!("library:{}", word.text);
+        let identity = format!("{LIBRARY}{}", word.text);
         let loaded = Loaded { identity, name: format!("{}.heat", word.text), text: text.to_owned() };
         self.species_of(&loaded, word.span)
     }
@@ -141,6 +145,8 @@ impl Checker<'_> {
             match &item.statement {
                 Statement::Species(block) => {
                     let species = inner.species(block, Some(loaded.name.clone()));
+                    let shipped = loaded.identity.starts_with(LIBRARY);
+                    inner.warn_if_read(species.as_ref().filter(|_| !shipped));
                     inner.enter_species(&block.name, species);
                 }
                 Statement::Use(line) => inner.import(line, item.span),
@@ -155,6 +161,18 @@ impl Checker<'_> {
             Material::Species(id) => program.species.get(id.0).cloned(),
             _ => None,
         };
-        (!failed).then(|| materials.values().filter_map(usable).collect())
+        let mut declared: Vec<&Declared<Material>> = materials.values().collect();
+        declared.sort_by_key(|declared| declared.span);
+        (!failed).then(|| declared.into_iter().filter_map(usable).collect())
     }
+}
+
+/// The species of a family of the shipped library in the order of its sheet; `None` where there is no such family or
+/// it is at fault.
+pub fn check_family(name: &str) -> Option<Vec<Species>> {
+    let text = family(name)?.to_owned();
+    let mut sources = Sources::new();
+    let identity = format!("{LIBRARY}{name}");
+    let mut checker = Checker::new(&mut sources, &NoFiles, String::new());
+    checker.read_species(&Loaded { identity, name: format!("{name}.heat"), text })
 }

@@ -9,6 +9,7 @@ mod arithmetic;
 mod call;
 mod checker;
 mod condition;
+mod consistency;
 mod constant;
 mod curve_error;
 mod datum;
@@ -34,3 +35,4 @@ mod unknowns;
 mod wanted;
 
 pub use checker::{Checked, check_sheet};
+pub use import::check_family;

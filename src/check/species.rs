@@ -35,9 +35,18 @@ struct Phase {
 impl Checker<'_> {
     pub(super) fn species_statement(&mut self, block: &SpeciesBlock) {
         let species = self.species(block, None);
+        self.warn_if_read(species.as_ref());
         self.enter_species(&block.name, species);
         if let Some(Declared { what: Material::Species(id), .. }) = self.materials.get(&block.name.text) {
             self.program.order.push(Entry::Species(*id));
+        }
+    }
+
+    /// Warns of what does not agree in a species that the user wrote.
+    pub(super) fn warn_if_read(&mut self, species: Option<&Species>) {
+        let claims = std::mem::take(&mut self.claims);
+        if let Some(species) = species {
+            self.warn_of_inconsistency(species, &claims);
         }
     }
 

@@ -32,6 +32,8 @@ pub(super) enum Command {
     Run(RunArguments),
     /// Reads and unit-checks a sheet without working it
     Check(CheckArguments),
+    /// Lists the species of the shipped library, or shows those that a word finds
+    Species(SpeciesArguments),
     /// Lists the units that sheets may use
     Units(UnitsArguments),
     /// Says more about the code of a diagnostic
@@ -57,6 +59,19 @@ pub(super) struct CheckArguments {
     /// The sheet; `-` reads standard input
     pub(super) sheet: std::path::PathBuf,
     /// How to print what is found: drawn on standard error, or as JSON on standard output
+    #[arg(long, value_name = "text|json", default_value = "text", hide_possible_values = true)]
+    pub(super) format: Format,
+}
+
+/// What `species` takes.
+#[derive(Debug, clap::Args)]
+pub(super) struct SpeciesArguments {
+    /// A name, a formula or a CAS number; without it all species are listed
+    pub(super) word: Option<String>,
+    /// Draw heat capacity and enthalpy over temperature as well
+    #[arg(long)]
+    pub(super) plot: bool,
+    /// How to print what is found
     #[arg(long, value_name = "text|json", default_value = "text", hide_possible_values = true)]
     pub(super) format: Format,
 }

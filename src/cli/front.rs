@@ -3,7 +3,7 @@
 use super::arguments::{Arguments, Command};
 use super::status::Status;
 use super::streams::{complain, print, print_error};
-use super::{check, explain, run, units};
+use super::{check, explain, run, species, units};
 use clap::Parser;
 use std::ffi::OsString;
 use std::process::ExitCode;
@@ -47,6 +47,7 @@ fn obey(arguments: &Arguments) -> Status {
     match &arguments.command {
         Command::Run(run) => run::run(run, arguments.color),
         Command::Check(check) => check::check(check, arguments.color),
+        Command::Species(word) => species::species(word),
         Command::Units(units) => units::units(units),
         Command::Explain(explain) => explain::explain(explain),
     }

@@ -19,6 +19,7 @@ mod folder;
 mod front;
 mod run;
 mod sheet;
+mod species;
 mod status;
 mod streams;
 mod units;

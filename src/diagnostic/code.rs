@@ -187,6 +187,10 @@ codes! {
     TableRowRefused "W104" Warning "a table row that is refused";
     Extrapolated "W105" Warning "a datum used outside its range";
     VolumeNeglected "W106" Warning "a volume that is neglected";
+    HeatCapacityJump "W107" Warning "a heat capacity that jumps between two ranges";
+    EnthalpyConstant "W108" Warning "an enthalpy constant that contradicts the enthalpies";
+    SourcesDiffer "W109" Warning "two sources that differ";
+    SourceMissing "W110" Warning "a datum without a source";
 
     ClosedVolume "C801" Caution "a closed volume is heated";
     WaterBesideHot "C802" Caution "water beside something hotter than its boiling point";

@@ -120,6 +120,13 @@ pub(super) fn log_mean(a: f64, b: f64) -> f64 {
     }
 }
 
+/// A value that goes on where another is known.
+pub(super) fn known<const N: usize>(frame: &mut Frame<N>, value: Slot, given: Slot, to: Slot) {
+    let (value, given) = (frame.get(value), frame.get(given));
+    frame.slots[to.0 as usize] =
+        std::array::from_fn(|lane| if given[lane].is_nan() { f64::NAN } else { value[lane] });
+}
+
 pub(super) fn guard<const N: usize>(
     frame: &mut Frame<N>,
     at: usize,

@@ -45,6 +45,7 @@ fn step<const N: usize>(plan: &Plan, frame: &mut Frame<N>, at: usize, op: &Op) {
         Op::Logarithm10 { a, to } => {
             arithmetic::unary(frame, at, a, to, arithmetic::log10, |of| Fault::Logarithm { of });
         }
+        Op::Known { value, given, to } => arithmetic::known(frame, value, given, to),
         Op::Guard { check, a, b, value, to } => arithmetic::guard(frame, at, check, [a, b, value], to),
         Op::Locate { material, t, p, side, to } => {
             property::locate(plan, frame, at, material, [t, p], side, to)

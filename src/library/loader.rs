@@ -1,7 +1,16 @@
 //! The loader's contract, and the families that the program carries.
 
 /// The families of the shipped library: name and text.
-const FAMILIES: &[(&str, &str)] = &[];
+const FAMILIES: &[(&str, &str)] = &[
+    ("metals", include_str!("../../sheets/metals.heat")),
+    ("minerals", include_str!("../../sheets/minerals.heat")),
+    ("sulfides", include_str!("../../sheets/sulfides.heat")),
+    ("salts", include_str!("../../sheets/salts.heat")),
+    ("gases", include_str!("../../sheets/gases.heat")),
+    ("solvents", include_str!("../../sheets/solvents.heat")),
+    ("water", include_str!("../../sheets/water.heat")),
+    ("materials", include_str!("../../sheets/materials.heat")),
+];
 
 /// The families by name.
 pub fn families() -> impl Iterator<Item = &'static str> {

@@ -156,6 +156,12 @@ pub enum Op {
         b: Slot,
         to: Slot,
     },
+    /// `value` goes on where `given` is known: it is the same, without its rounding.
+    Known {
+        value: Slot,
+        given: Slot,
+        to: Slot,
+    },
     /// `value` goes on where the check holds.
     Guard {
         check: Check,

@@ -23,6 +23,7 @@ fn reads(op: &Op, plan: &Plan, slot: &mut impl FnMut(Slot), place: &mut impl FnM
         | Op::Exponential { a, .. }
         | Op::Logarithm { a, .. }
         | Op::Logarithm10 { a, .. } => slot(a),
+        Op::Known { value, given, .. } => [value, given].into_iter().for_each(slot),
         Op::Guard { a, b, value, .. } => [a, b, value].into_iter().for_each(slot),
         Op::Locate { t, p, side, .. } => {
             slot(t);
@@ -82,6 +83,7 @@ fn writes(op: &Op) -> (Option<Slot>, Option<Slot>, Option<u32>) {
         | Op::Logarithm { to, .. }
         | Op::Logarithm10 { to, .. }
         | Op::LogMean { to, .. }
+        | Op::Known { to, .. }
         | Op::Guard { to, .. }
         | Op::Enthalpy { to, .. }
         | Op::InternalEnergy { to, .. }

@@ -12,6 +12,7 @@ mod model;
 pub mod number;
 #[cfg(test)]
 mod sample;
+mod species;
 mod text;
 
 pub use conventions::standing_conventions;
@@ -22,5 +23,9 @@ pub use model::{
     Caution, DataRow, DutyRow, Finding, InputRow, Item, LegKind, LegRow, MixtureRow, Path, PressureBasis,
     Quantity, Report, RequirementRow, ResultRow, Side, SiteRow, SpeciesRow, StateRow, StepRow, TableColumn,
     TableRow, TableRows,
+};
+pub use species::{
+    PageChange, PageDatum, PagePhase, PageRow, SpeciesPage, render_plot, render_species_json,
+    render_species_list, render_species_list_json, render_species_page, species_page,
 };
 pub use text::{Style, render_text};

@@ -6,7 +6,9 @@
 
 mod fault;
 mod outputs;
+mod species;
 mod warn;
 mod work;
 
+pub use species::library_pages;
 pub use work::{Worked, check, run};

@@ -1,10 +1,14 @@
 //! Tests of the program as its users meet it.
 
+mod blocks;
 mod cli;
 mod corpus;
+mod examples;
 mod mutated;
 mod program;
+mod readme;
 mod reference;
+mod reference_pages;
 mod robust;
 mod rooms;
 mod sheets;

@@ -19,8 +19,8 @@ const MAY_USE: &[(&str, &[&str])] = &[
         "check",
         &["syntax", "program", "units", "thermo", "library", "diagnostic", "source", "span", "numeric"],
     ),
-    ("plan", &["program", "thermo", "units", "numeric"]),
-    ("eval", &["plan", "thermo", "numeric"]),
+    ("plan", &["program", "thermo", "units", "numeric", "span"]),
+    ("eval", &["plan", "thermo", "units", "numeric"]),
     ("study", &["plan", "eval"]),
     ("report", &["program", "plan", "eval", "study", "units", "thermo", "diagnostic", "source", "span"]),
     (

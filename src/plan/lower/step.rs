@@ -3,7 +3,7 @@
 use super::builder::{Builder, Lowering};
 use super::state::Total;
 use crate::plan::{Check, Op, OriginKind, Slot, StepSlots};
-use crate::program::{Heat, Path, SpeciesId, StateId, Step, StepId};
+use crate::program::{Heat, Law, Path, SpeciesId, StateId, Step, StepId};
 use crate::units::constants::GAS_CONSTANT;
 use std::collections::BTreeMap;
 
@@ -28,10 +28,11 @@ impl Builder<'_> {
             });
         };
         let before = self.from(step.span, OriginKind::Step(id));
-        let change = self.change(step, Total::Enthalpy)?;
+        let change = self.change_or_stated(step, Total::Enthalpy, Law::Enthalpy)?;
         let enthalpy_change = self.conserved(id, step, change)?;
         self.from(step.span, OriginKind::Step(id));
-        let internal_energy_change = self.change(step, Total::InternalEnergy)?;
+        let internal_energy_change =
+            self.change_or_stated(step, Total::InternalEnergy, Law::InternalEnergy)?;
         let volume_change = self.change(step, Total::VolumeOrNothing)?;
         let mut slots = StepSlots {
             enthalpy_change,
@@ -65,6 +66,24 @@ impl Builder<'_> {
     fn change(&mut self, step: &Step, total: Total) -> Lowering<Slot> {
         let (start, end) = (self.side(&step.from, total)?, self.side(&step.to, total)?);
         Ok(self.subtract(end, start))
+    }
+
+    /// The change of an energy; where the step settled a temperature by it, what it states of heat and work, with no
+    /// rounding of the search.
+    fn change_or_stated(&mut self, step: &Step, total: Total, law: Law) -> Lowering<Slot> {
+        let change = self.change(step, total)?;
+        if step.efficiency.is_some() || !step.settles.iter().any(|settles| settles.law == law) {
+            return Ok(change);
+        }
+        let zero = self.constant(0.0);
+        let mut stated = match &step.heat {
+            Heat::Taking(value) => self.expr(value)?,
+            Heat::Adiabatic | Heat::Follows => zero,
+        };
+        if let Some(working) = self.optional(step.working.as_ref())? {
+            stated = if stated == zero { working } else { self.add(stated, working) };
+        }
+        Ok(self.emit(|to| Op::Known { value: stated, given: change, to }))
     }
 
     pub(super) fn latent(&mut self, id: StepId) -> Lowering<Slot> {

@@ -79,7 +79,12 @@ impl WorkedSheet<'_> {
     fn quantity_item(&self, id: QuantityId, report: &mut Report) -> Option<Item> {
         let quantity = self.program.quantities.get(id.0)?;
         let si = self.value(*self.map.quantities.get(id.0)?);
-        let value = self.expression_shown(&quantity.value, si, quantity.display.as_ref());
+        let mut value = self.expression_shown(&quantity.value, si, quantity.display.as_ref());
+        if quantity.role.is_input()
+            && let Some(number) = written_number(&quantity.text, &value.unit)
+        {
+            value.value = number; // as its author wrote it, without the way to SI and back
+        }
         if quantity.role == Role::Result {
             report.results.push(ResultRow {
                 name: quantity.name.clone(),
@@ -299,4 +304,11 @@ impl WorkedSheet<'_> {
         }
         sentences
     }
+}
+
+/// The number of a literal in this unit: `25.1 degC` is 25.1, however K and degC round.
+fn written_number(text: &str, unit: &Unit) -> Option<f64> {
+    let text = text.replace('−', "-");
+    let number = text.trim_end().strip_suffix(unit.text.as_str())?.trim_end();
+    number.parse().ok()
 }

@@ -48,6 +48,25 @@ impl Builder<'_> {
         Some(Datum { negative, literal: literal?, span })
     }
 
+    /// A coefficient's value; blanks in the numerator of its unit are products.
+    pub(super) fn coefficient_datum(&mut self, pair: Pair<'_, Rule>) -> Option<Datum> {
+        let span = self.span(&pair);
+        let mut negative = false;
+        let mut literal = None;
+        for part in parts(pair) {
+            match part.as_rule() {
+                Rule::minus => negative = true,
+                _ => literal = self.literal(part),
+            }
+        }
+        let mut literal = literal?;
+        if let Some(unit) = &mut literal.unit {
+            let (numerator, rest) = unit.text.split_at(unit.text.find('/').unwrap_or(unit.text.len()));
+            unit.text = format!("{}{rest}", numerator.split_whitespace().collect::<Vec<_>>().join("·"));
+        }
+        Some(Datum { negative, literal, span })
+    }
+
     /// `for A to B`, `over A to B`: two data.
     pub(super) fn range(&mut self, pair: Pair<'_, Rule>) -> Option<(Datum, Datum)> {
         let mut data = parts(pair);

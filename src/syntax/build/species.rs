@@ -188,7 +188,7 @@ impl Builder<'_> {
             .map(|part| {
                 let mut inner = parts(part);
                 let name = self.word(&inner.next()?);
-                Some(Coefficient { name, value: self.datum(inner.next()?)? })
+                Some(Coefficient { name, value: self.coefficient_datum(inner.next()?)? })
             })
             .collect()
     }

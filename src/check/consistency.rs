@@ -1,0 +1,148 @@
+//! Whether the data of a species agree with themselves: warnings that a reviewer would raise.
+//!
+//! A remark in the block that begins with a warning's code, `| W107 ...`, gives its reason and answers it.
+
+use super::checker::Checker;
+use crate::diagnostic::{Code, Diagnostic};
+use crate::program::{DatumKind, Species};
+use crate::span::Span;
+use crate::thermo::{Allowance, Pin};
+use crate::units::quantity;
+
+/// By how much cp may jump from one range to the next, relative.
+const JUMP: f64 = 0.02;
+
+/// By how much a polynomial's own enthalpy constant may differ from what formation enthalpy and transitions give,
+/// J/mol.
+const CONTRADICTION: f64 = 50.0;
+
+/// How far a second source may lie, in per cent.
+const SPREAD: f64 = 1.0;
+
+/// What a published form says of its absolute enthalpy by its own constant.
+#[derive(Debug, Clone, Copy)]
+pub(super) struct Claim {
+    /// The entry.
+    pub(super) span: Span,
+    /// A temperature in its range, K.
+    pub(super) kelvin: f64,
+    /// The enthalpy there, J/mol.
+    pub(super) enthalpy: f64,
+}
+
+impl Checker<'_> {
+    /// Warns where the data of a species do not agree.
+    pub(super) fn warn_of_inconsistency(&mut self, species: &Species, claims: &[Claim]) {
+        let mut found = jumps(species);
+        found.extend(contradictions(species, claims));
+        found.extend(wide_spreads(species));
+        found.extend(unsourced(species));
+        let answered = |code: Code| species.remarks.iter().any(|remark| remark.starts_with(code.as_str()));
+        self.diagnostics.extend(found.into_iter().filter(|found| !answered(found.code)));
+    }
+}
+
+/// Boundaries between two ranges of a phase at which cp jumps.
+fn jumps(species: &Species) -> Vec<Diagnostic> {
+    let mut found = Vec::new();
+    for pair in species.data.windows(2) {
+        let (DatumKind::HeatCapacity { phase, .. }, DatumKind::HeatCapacity { phase: next, .. }) =
+            (pair[0].kind, pair[1].kind)
+        else {
+            continue;
+        };
+        let (Some((_, joint)), Some((lo, hi))) = (pair[0].valid, pair[1].valid) else { continue };
+        if phase != next || lo >= hi {
+            continue;
+        }
+        let (Some(below), Some(above)) =
+            (heat_capacity(species, phase, joint, false), heat_capacity(species, phase, joint, true))
+        else {
+            continue;
+        };
+        let jump = (above - below) / below;
+        if jump.abs() > JUMP {
+            let message = format!(
+                "the heat capacity of `{}` jumps by {:+.1} % at {joint} K, from one range to the next",
+                species.in_phase(phase),
+                jump * 100.0
+            );
+            found.push(
+                Diagnostic::new(Code::HeatCapacityJump, message)
+                    .label(pair[1].span, "this range begins there")
+                    .label(pair[0].span, "this one ends there")
+                    .help("check the coefficients; a transition that is missing shows like this"),
+            );
+        }
+    }
+    found
+}
+
+/// cp just below or just above a joint, by a step that no coefficient would notice.
+fn heat_capacity(species: &Species, phase: usize, joint: f64, above: bool) -> Option<f64> {
+    let kelvin = if above { joint * (1.0 + 1e-9) } else { joint * (1.0 - 1e-9) };
+    let atmosphere = quantity(101_325.0);
+    let place =
+        species.curve.place(quantity(kelvin), atmosphere, Pin::Phase(phase), None, Allowance::none()).ok()?;
+    species.curve.heat_capacity(place).map(|cp| cp.value)
+}
+
+/// Published forms whose own enthalpy constant says another enthalpy.
+fn contradictions(species: &Species, claims: &[Claim]) -> Vec<Diagnostic> {
+    let Some(molar_mass) = species.molar_mass.filter(|_| species.absolute) else { return Vec::new() };
+    let told = |claim: &Claim| {
+        let datum = species.data.iter().find(|datum| datum.span == claim.span)?;
+        let DatumKind::HeatCapacity { phase, .. } = datum.kind else { return None };
+        let (t, p) = (quantity(claim.kelvin), quantity(101_325.0));
+        let place = species.curve.place(t, p, Pin::Phase(phase), None, Allowance::none()).ok()?;
+        let built = species.curve.enthalpy(place).value * molar_mass;
+        let apart = claim.enthalpy - built;
+        (apart.abs() > CONTRADICTION).then(|| {
+            Diagnostic::new(
+                Code::EnthalpyConstant,
+                format!(
+                    "the enthalpy constant of `{}` lies {apart:+.0} J/mol off formation enthalpy and transitions",
+                    species.in_phase(phase)
+                ),
+            )
+            .label(claim.span, "its own constant is read, but not used")
+            .help("check formation enthalpy, transitions and `R`: enthalpies are built from these")
+        })
+    };
+    claims.iter().filter_map(told).collect()
+}
+
+/// Data from which a second source lies far.
+fn wide_spreads(species: &Species) -> Vec<Diagnostic> {
+    species
+        .data
+        .iter()
+        .filter_map(|datum| {
+            let spread = datum.spread.as_ref()?;
+            let percent: f64 = spread.split_once('%')?.0.trim().parse().ok()?;
+            (percent.abs() > SPREAD).then(|| {
+                Diagnostic::new(
+                    Code::SourcesDiffer,
+                    format!(
+                        "two sources of `{}` differ by {percent} %",
+                        datum.text.split_whitespace().next().unwrap_or_default()
+                    ),
+                )
+                .label(datum.span, format!("spread {spread}"))
+                .help("say in a remark that begins with `| W109` why this one is taken")
+            })
+        })
+        .collect()
+}
+
+/// A species with data of which nobody knows the source.
+fn unsourced(species: &Species) -> Option<Diagnostic> {
+    let without: Vec<_> = species.data.iter().filter(|datum| datum.source.is_none()).collect();
+    let first = without.first()?;
+    let count = crate::diagnostic::count(without.len(), "datum").replace("datums", "data");
+    Some(
+        Diagnostic::new(Code::SourceMissing, format!("`{}` has {count} without a source", species.name))
+            .label(first.span, "where does this come from?")
+            .help("add `source \"...\"` behind it, or once to the block"),
+    )
+}
