@@ -84,7 +84,6 @@ pub(super) fn unreadable(
     chained_power(&place)
         .or_else(|| two_signs(&place))
         .or_else(|| blank_in_unit(&place))
-        .or_else(|| blank_further_on(&place))
         .or_else(|| number_before_name(&place))
         .or_else(|| reserved(&place))
         .or_else(|| call_blank(&place))
@@ -185,24 +184,6 @@ fn blank_in_unit(place: &Place<'_>) -> Option<Diagnostic> {
             .label(place.span(start, place.rest_at() + tail_len), "the unit ends at the blank")
             .help(format!("write `{} {whole}`", number[digits_at..].trim())),
     )
-}
-
-/// The same where the parser stopped before the unit: `6.95e5 J K/mol` in a list.
-fn blank_further_on(place: &Place<'_>) -> Option<Diagnostic> {
-    let rest = place.rest();
-    let first = &rest[..rest.find(char::is_whitespace)?];
-    let next = first_word(rest[first.len()..].trim_start());
-    let number = place.before().ends_with(|c: char| c.is_ascii_digit());
-    let unit_like = first.starts_with(char::is_alphabetic) && !first.contains(['=', ',', '}']);
-    if !number || !unit_like || next.is_empty() || words::RESERVED.contains(&next) {
-        return None;
-    }
-    blank_in_unit(&Place {
-        at: place.rest_at() + first.len(),
-        text: place.text,
-        base: place.base,
-        file: place.file,
-    })
 }
 
 /// `2 (a + b)` or `2 (`: no product is understood without its sign.
