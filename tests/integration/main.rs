@@ -4,6 +4,8 @@ mod blocks;
 mod cli;
 mod corpus;
 mod examples;
+mod library;
+mod library_values;
 mod mutated;
 mod program;
 mod readme;
