@@ -3,7 +3,7 @@
 use super::checker::{Checker, Declared, Material};
 use crate::diagnostic::{Code, Diagnostic, nearest};
 use crate::library::{LoadError, Loaded, NoFiles, families, family};
-use crate::program::Species;
+use crate::program::{Entry, Species};
 use crate::source::Sources;
 use crate::span::Span;
 use crate::syntax::parse_sheet;
@@ -28,7 +28,13 @@ impl Checker<'_> {
         for name in &line.names {
             let word = Word { text: name.name.clone(), span: name.span };
             let species = found.as_ref().and_then(|known| self.taken(name, known, line));
+            let entered = species.is_some();
             self.enter_species(&word, species);
+            if let (true, Some(Declared { what: Material::Species(id), .. })) =
+                (entered, self.materials.get(&word.text))
+            {
+                self.program.order.push(Entry::Species(*id));
+            }
         }
     }
 
