@@ -279,7 +279,7 @@ fn rule_in_words(rule: Rule) -> String {
         Rule::unknown => "`?`",
         Rule::interval | Rule::symmetric | Rule::sided => "an interval `± ...`",
         Rule::clause => "a path or a clause",
-        Rule::comparison => "`<=`, `>=`, `<`, `>` or `within`",
+        Rule::comparison => "`<=`, `>=`, `<` or `>`",
         Rule::rows | Rule::coefficients => "a list in braces",
         _ => "",
     };
