@@ -14,10 +14,10 @@ fn called(ran: &Ran) -> (Option<i32>, &str, &str) {
 fn help_names_the_commands_and_the_exit_status() {
     let ran = heatpath(&["--help"]);
     assert_eq!((ran.status, ran.stderr.as_str()), (Some(0), ""));
-    for word in ["run ", "check ", "units ", "explain ", "--color", "Exit status: 0"] {
+    for word in ["run ", "check ", "species ", "units ", "explain ", "--color", "Exit status: 0"] {
         assert!(ran.stdout.contains(word), "{word}");
     }
-    for later in ["species", "why", "tidy", "record", "audit", "compare"] {
+    for later in ["why", "tidy", "record", "audit", "compare"] {
         assert!(!ran.stdout.contains(&format!("  {later} ")), "{later}");
         assert_eq!(heatpath(&[later, "sheet.heat"]).status, Some(2), "{later}");
     }

@@ -278,7 +278,7 @@ fn work_formula(step: &Step, path: Path) -> String {
         Path::AdiabaticReversible if step.flow => "ΔH, no heat passes",
         Path::AdiabaticReversible => "ΔU, no heat passes",
         Path::ConstantVolume => "no volume work",
-        Path::ConstantPressure | Path::ConstantTemperatureAndPressure => "no shaft work but what is stated",
+        Path::ConstantPressure | Path::ConstantTemperatureAndPressure => "no shaft work",
         Path::NoShaftWork | Path::Throttled => "no shaft work",
     };
     if step.working.is_some() {

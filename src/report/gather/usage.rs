@@ -119,7 +119,7 @@ impl Usage {
     /// Absolute enthalpies rest on formation enthalpies and on the way from 298.15 K.
     fn absolute(&mut self, sheet: &WorkedSheet<'_>) {
         let mut asked: Vec<StateId> = Vec::new();
-        sheet.each_expression(&mut |expr| {
+        sheet.program.each_expression(&mut |expr| {
             if let Node::State(
                 id,
                 StateMember::Enthalpy
@@ -173,24 +173,6 @@ fn from_298(species: &Species) -> Allowance {
 }
 
 impl WorkedSheet<'_> {
-    /// Calls `see` for every expression of the sheet, those inside others too.
-    pub fn each_expression(&self, see: &mut impl FnMut(&crate::program::Expr)) {
-        let program = self.program;
-        program.quantities.iter().for_each(|quantity| quantity.value.walk(see));
-        for step in &program.steps {
-            [&step.losing, &step.working, &step.efficiency]
-                .into_iter()
-                .flatten()
-                .for_each(|expr| expr.walk(see));
-            if let crate::program::Heat::Taking(expr) = &step.heat {
-                expr.walk(see);
-            }
-        }
-        program.duties.iter().for_each(|duty| duty.value.walk(see));
-        program.requirements.iter().for_each(|requirement| requirement.value.walk(see));
-        program.tables.iter().flat_map(|table| &table.columns).for_each(|column| column.value.walk(see));
-    }
-
     /// Whether a step turns one species into another.
     pub(super) fn turns_matter(&self, step: &Step) -> bool {
         let species = |ids: &[StateId]| -> std::collections::BTreeSet<SpeciesId> {
