@@ -156,19 +156,27 @@ fn every_family_says_which_publication_is_primary() {
 #[test]
 fn calcite_is_refused_above_its_decomposition_but_by_leave() {
     let at = |kelvin: u32, line: &str| {
-        format!("use CaCO3 from minerals\n{line}state hot = 1 mol of CaCO3 at {kelvin} K\nresult H = hot.H in kJ\n")
+        format!(
+            "use CaCO3 from minerals\n{line}state hot = 1 mol of CaCO3 at {kelvin} K\nresult H = hot.H in kJ\n"
+        )
     };
     assert_eq!(refusals(&at(1173, "")), Vec::<String>::new());
     assert_eq!(refusals(&at(1180, "")), ["R702"]);
-    assert_eq!(refusals(&at(1180, "allow CaCO3(s) to 1200 K because \"short stay\"\n")), Vec::<String>::new());
+    assert_eq!(
+        refusals(&at(1180, "allow CaCO3(s) to 1200 K because \"short stay\"\n")),
+        Vec::<String>::new()
+    );
 }
 
 #[test]
 fn changes_without_latent_heat_are_no_transitions() {
     // 1424 K of fluorite and 306 K of chromium(III) oxide: cp peaks, nothing is taken up at one temperature
-    for (species, family, from, to) in
-        [("CaF2", "salts", 1300, 1600), ("Cr2O3", "minerals", 300, 320), ("Fe2O3", "minerals", 900, 1000), ("NaOH", "minerals", 500, 560)]
-    {
+    for (species, family, from, to) in [
+        ("CaF2", "salts", 1300, 1600),
+        ("Cr2O3", "minerals", 300, 320),
+        ("Fe2O3", "minerals", 900, 1000),
+        ("NaOH", "minerals", 500, 560),
+    ] {
         let sheet = format!(
             "use {species} from {family}\nstate a = 1 mol of {species} at {from} K\nstate b = a at {to} K\n\
              step heat: a -> b, at constant pressure\nresult latent = heat.latent in J\n"
