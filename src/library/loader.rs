@@ -46,8 +46,8 @@ pub fn family_with(name: &str, wanted: &[&str]) -> Option<String> {
             text.push_str(line);
         } else {
             let end = usize::from(line.ends_with('\n'));
-            text.extend(std::iter::repeat_n(' ', line.len() - end));
-            text.extend(std::iter::repeat_n('\n', end));
+            text.push_str(&" ".repeat(line.len() - end));
+            text.push_str(&"\n".repeat(end));
         }
         kept &= !line.starts_with('}');
     }

@@ -127,6 +127,18 @@ fn spreads_are_told_where_a_second_source_is_known() {
     assert!(told * 3 > all, "only {told} of {all} data have a spread");
 }
 
+/// A second source more than 1 % off is spoken of in a remark of the species.
+#[test]
+fn wide_spreads_are_explained() {
+    each_species(|family, species| {
+        let percent = |text: &String| text.split(' ').next().and_then(|number| number.parse::<f64>().ok());
+        let spreads = species.data.iter().filter_map(|datum| datum.spread.as_ref());
+        let widest = spreads.map(|text| percent(text).expect("a percentage")).fold(0.0, f64::max);
+        let explained = widest <= 1.0 || !species.remarks.is_empty();
+        assert!(explained, "{family}: {} with {widest} % and no remark", species.name);
+    });
+}
+
 /// Species that rest on a single source.
 fn lone(species: &Species) -> bool {
     ["MnO", "CaSO4·2H2O", "CH3COOH", "C3H8O3"].contains(&species.name.as_str())
