@@ -207,3 +207,22 @@ fn tungsten_melts_as_evaluated_by_sgte() {
     let latent = found.get("latent").copied().expect("a result");
     assert!((latent - 52.3).abs() < 1e-9, "{latent}");
 }
+
+#[test]
+fn a_species_asked_of_the_wrong_family_is_told_its_own() {
+    let worked = session::check("sheet.heat", "sheet.heat", "use N2, Argon from metals\n", &NoFiles);
+    let helps: Vec<_> = worked.diagnostics.iter().filter_map(|found| found.help.as_deref()).collect();
+    assert_eq!(helps.first(), Some(&"write `use N2 from gases`"));
+    assert!(helps.get(1).is_some_and(|help| help.contains("Al, Cu, Fe, Zn")), "{helps:?}");
+}
+
+/// Pairs of molecules halve the real latent heat, so that heating past the boiling point is refused.
+#[test]
+fn acetic_acid_is_not_boiled_to_single_molecules() {
+    let heated = "use CH3COOH from solvents\nstate a = 1 kg of CH3COOH at 20 degC\nstate b = a at 130 degC\n\
+                  step heat: a -> b, at constant pressure\nresult Q = heat.Q in kJ\n";
+    assert_eq!(refusals(heated), ["R702"]);
+    let vapour =
+        "use CH3COOH from solvents\nstate a = 1 kg of CH3COOH(g) at 130 degC\nresult H = a.H in kJ\n";
+    assert_eq!(refusals(vapour), Vec::<String>::new());
+}
