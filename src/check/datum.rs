@@ -34,7 +34,10 @@ impl Checker<'_> {
         if let Some(spread) = suffixes.spreads.first() {
             self.report(
                 Diagnostic::new(Code::Unreadable, "a `spread` behind an input")
-                    .label(spread.amount.span, "a spread says how far a second source of a species' datum lies")
+                    .label(
+                        spread.amount.span,
+                        "a spread says how far a second source of a species' datum lies",
+                    )
                     .help("give the input an interval, `± 2 %`, and name the second source in its `source`"),
             );
         }

@@ -119,7 +119,8 @@ impl State {
             &Condition::Value(ref value) => Some(value),
             _ => None,
         };
-        let conditions = [said(&self.temperature), said(&self.pressure), self.share.as_ref().map(|(_, share)| share)];
+        let conditions =
+            [said(&self.temperature), said(&self.pressure), self.share.as_ref().map(|(_, share)| share)];
         let mut amounts = Vec::new();
         gather_amounts(&self.source, &mut amounts);
         conditions.into_iter().flatten().chain(amounts)

@@ -21,7 +21,9 @@ pub(super) fn unknown_statement(text: &str, word: &str, span: Span) -> Diagnosti
         .label(place, "a statement word is wanted here");
     let after = text[word.len()..].trim_start();
     if text.starts_with(['+', '-', '*', '/', '−', '×', '^']) {
-        return found.help("a statement goes on inside open parentheses, or after a comma: put the expression in `( )`");
+        return found.help(
+            "a statement goes on inside open parentheses, or after a comma: put the expression in `( )`",
+        );
     }
     let known = words::STATEMENTS.iter().map(|opening| opening.word);
     if !word.is_empty() && after.starts_with('=') {

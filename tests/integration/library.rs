@@ -127,6 +127,18 @@ fn spreads_are_told_where_a_second_source_is_known() {
     assert!(told * 3 > all, "only {told} of {all} data have a spread");
 }
 
+/// A second source more than 1 % off is spoken of in a remark of the species.
+#[test]
+fn wide_spreads_are_explained() {
+    each_species(|family, species| {
+        let percent = |text: &String| text.split(' ').next().and_then(|number| number.parse::<f64>().ok());
+        let spreads = species.data.iter().filter_map(|datum| datum.spread.as_ref());
+        let widest = spreads.map(|text| percent(text).expect("a percentage")).fold(0.0, f64::max);
+        let explained = widest <= 1.0 || !species.remarks.is_empty();
+        assert!(explained, "{family}: {} with {widest} % and no remark", species.name);
+    });
+}
+
 /// Species that rest on a single source.
 fn lone(species: &Species) -> bool {
     ["MnO", "CaSO4·2H2O", "CH3COOH", "C3H8O3"].contains(&species.name.as_str())
@@ -156,19 +168,27 @@ fn every_family_says_which_publication_is_primary() {
 #[test]
 fn calcite_is_refused_above_its_decomposition_but_by_leave() {
     let at = |kelvin: u32, line: &str| {
-        format!("use CaCO3 from minerals\n{line}state hot = 1 mol of CaCO3 at {kelvin} K\nresult H = hot.H in kJ\n")
+        format!(
+            "use CaCO3 from minerals\n{line}state hot = 1 mol of CaCO3 at {kelvin} K\nresult H = hot.H in kJ\n"
+        )
     };
     assert_eq!(refusals(&at(1173, "")), Vec::<String>::new());
     assert_eq!(refusals(&at(1180, "")), ["R702"]);
-    assert_eq!(refusals(&at(1180, "allow CaCO3(s) to 1200 K because \"short stay\"\n")), Vec::<String>::new());
+    assert_eq!(
+        refusals(&at(1180, "allow CaCO3(s) to 1200 K because \"short stay\"\n")),
+        Vec::<String>::new()
+    );
 }
 
 #[test]
 fn changes_without_latent_heat_are_no_transitions() {
     // 1424 K of fluorite and 306 K of chromium(III) oxide: cp peaks, nothing is taken up at one temperature
-    for (species, family, from, to) in
-        [("CaF2", "salts", 1300, 1600), ("Cr2O3", "minerals", 300, 320), ("Fe2O3", "minerals", 900, 1000), ("NaOH", "minerals", 500, 560)]
-    {
+    for (species, family, from, to) in [
+        ("CaF2", "salts", 1300, 1600),
+        ("Cr2O3", "minerals", 300, 320),
+        ("Fe2O3", "minerals", 900, 1000),
+        ("NaOH", "minerals", 500, 560),
+    ] {
         let sheet = format!(
             "use {species} from {family}\nstate a = 1 mol of {species} at {from} K\nstate b = a at {to} K\n\
              step heat: a -> b, at constant pressure\nresult latent = heat.latent in J\n"
@@ -186,4 +206,23 @@ fn tungsten_melts_as_evaluated_by_sgte() {
     );
     let latent = found.get("latent").copied().expect("a result");
     assert!((latent - 52.3).abs() < 1e-9, "{latent}");
+}
+
+#[test]
+fn a_species_asked_of_the_wrong_family_is_told_its_own() {
+    let worked = session::check("sheet.heat", "sheet.heat", "use N2, Argon from metals\n", &NoFiles);
+    let helps: Vec<_> = worked.diagnostics.iter().filter_map(|found| found.help.as_deref()).collect();
+    assert_eq!(helps.first(), Some(&"write `use N2 from gases`"));
+    assert!(helps.get(1).is_some_and(|help| help.contains("Al, Cu, Fe, Zn")), "{helps:?}");
+}
+
+/// Pairs of molecules halve the real latent heat, so that heating past the boiling point is refused.
+#[test]
+fn acetic_acid_is_not_boiled_to_single_molecules() {
+    let heated = "use CH3COOH from solvents\nstate a = 1 kg of CH3COOH at 20 degC\nstate b = a at 130 degC\n\
+                  step heat: a -> b, at constant pressure\nresult Q = heat.Q in kJ\n";
+    assert_eq!(refusals(heated), ["R702"]);
+    let vapour =
+        "use CH3COOH from solvents\nstate a = 1 kg of CH3COOH(g) at 130 degC\nresult H = a.H in kJ\n";
+    assert_eq!(refusals(vapour), Vec::<String>::new());
 }

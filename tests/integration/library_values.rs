@@ -143,7 +143,9 @@ fn compare(check: &str, points: &[Point], relative: f64, absolute: f64) -> Vec<S
             wrong.push(format!("{check},{},{},{difference:.0}", point.subject, point.kelvin));
         }
     }
-    wrong.extend(known.into_keys().map(|(subject, kelvin)| format!("{subject} at {kelvin}/100 K: no exception")));
+    wrong.extend(
+        known.into_keys().map(|(subject, kelvin)| format!("{subject} at {kelvin}/100 K: no exception")),
+    );
     wrong
 }
 
@@ -249,6 +251,9 @@ fn vapour_pressures_meet_the_boiling_points() {
         assert!((pressure / 101_325.0 - 1.0).abs() < 1e-4, "{species}: {pressure} Pa at {boils} K");
         assert!(lo < boils && boils < hi, "{species}");
         let known = boiling.get(species).copied().unwrap_or(*boils);
-        assert!((known - boils).abs() < 0.2, "{species} boils at {boils} K by its vapour pressure, {known} K");
+        assert!(
+            (known - boils).abs() < 0.2,
+            "{species} boils at {boils} K by its vapour pressure, {known} K"
+        );
     }
 }

@@ -284,7 +284,8 @@ impl Builder<'_> {
         }
         if matches!(path, Path::NoShaftWork | Path::Throttled) {
             let starts = step.from.iter().map(|id| self.pressure(*id)).collect::<Lowering<Vec<Slot>>>()?;
-            let highest = starts.iter().skip(1).fold(starts[0], |a, &b| self.emit(|to| Op::Maximum { a, b, to }));
+            let highest =
+                starts.iter().skip(1).fold(starts[0], |a, &b| self.emit(|to| Op::Maximum { a, b, to }));
             for id in &step.to {
                 checks.push((Check::NoRise, highest, self.pressure(*id)?));
             }

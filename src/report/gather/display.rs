@@ -60,7 +60,10 @@ impl WorkedSheet<'_> {
         });
         let program = self.program;
         alone |= program.quantities.iter().any(|quantity| is_it(&quantity.value));
-        alone |= program.states.iter().any(|state| matches!(&state.pressure, Condition::Value(expr) if is_it(expr)));
+        alone |= program
+            .states
+            .iter()
+            .any(|state| matches!(&state.pressure, Condition::Value(expr) if is_it(expr)));
         alone |= program.requirements.iter().any(|requirement| {
             is_it(&requirement.value)
                 || match &requirement.limit {

@@ -6,11 +6,13 @@ use super::display::unit;
 use super::usage::Usage;
 use super::worked::WorkedSheet;
 use crate::diagnostic::Severity;
-use crate::program::{Comparison, Condition, DutyId, Entry, Expr, Limit, Node, QuantityId, Role, SpeciesId, StateId};
+use crate::program::{
+    Comparison, Condition, DutyId, Entry, Expr, Limit, Node, QuantityId, Role, SpeciesId, StateId,
+};
 use crate::report::conventions::standing_conventions;
 use crate::report::model::{
-    Caution, DutyRow, Finding, InputRow, Item, MixtureRow, PressureBasis, Quantity, Report, RequirementRow, ResultRow,
-    SiteRow, StateRow, TableColumn, TableRows,
+    Caution, DutyRow, Finding, InputRow, Item, MixtureRow, PressureBasis, Quantity, Report, RequirementRow,
+    ResultRow, SiteRow, StateRow, TableColumn, TableRows,
 };
 use crate::units::{Dimension, Kind, Unit, Zero, engineering_unit};
 
