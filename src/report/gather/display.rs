@@ -34,9 +34,7 @@ impl WorkedSheet<'_> {
     pub(super) fn is_difference(&self, expr: &Expr) -> bool {
         match (&expr.node, expr.kind) {
             (_, Kind::Difference) => true,
-            (Node::Sum(terms), Kind::Open) => {
-                terms.iter().any(|(taken_away, term)| *taken_away && !self.is_difference(term))
-            }
+            (Node::Sum(terms), Kind::Open) => terms.iter().any(|(taken_away, _)| *taken_away),
             (Node::Quantity(id), Kind::Open) => {
                 self.serves_as_difference(*id)
                     || self.program.quantities.get(id.0).is_some_and(|named| self.is_difference(&named.value))
