@@ -5,7 +5,7 @@ use super::matter::Gathered;
 use crate::diagnostic::{Code, Diagnostic};
 use crate::program::{Condition, Expr, Node, State, StateId};
 use crate::span::Span;
-use crate::syntax::tree::{self, ConditionKind, Expression, Word};
+use crate::syntax::tree::{self, ConditionKind, Expression, ExpressionKind, Word};
 use crate::thermo::{PhaseClass, Pin};
 use crate::units::Dimension;
 use crate::units::constants::STANDARD_ATMOSPHERE;
@@ -79,6 +79,9 @@ impl Checker<'_> {
     }
 
     fn value_condition(&mut self, value: &Expression, span: Span, read: &mut Read) -> Option<()> {
+        if self.bare_phase(value, span) {
+            return None;
+        }
         let wanted = [Dimension::TEMPERATURE, Dimension::PRESSURE];
         let value = self.wanted(value, &wanted, "a temperature or a pressure of a state")?;
         let hot = value.dimension == Dimension::TEMPERATURE;
@@ -91,6 +94,28 @@ impl Checker<'_> {
         }
         *slot = Some((Condition::Value(value), span));
         Some(())
+    }
+
+    /// `at 692.68 K, liquid`: a phase without its share.
+    fn bare_phase(&mut self, value: &Expression, span: Span) -> bool {
+        let ExpressionKind::Name(word) = &value.kind else { return false };
+        let phase = matches!(word.as_str(), "solid" | "liquid" | "gas" | "vapour" | "vapor")
+            || self
+                .program
+                .species
+                .iter()
+                .any(|species| species.phases.iter().any(|phase| phase.name == *word));
+        if !phase || self.is_name(word) {
+            return false;
+        }
+        self.report(
+            Diagnostic::new(Code::UnknownName, format!("the phase `{word}` without its share"))
+                .label(span, "a temperature, a pressure or a share of a phase is wanted")
+                .help(format!(
+                    "on a transition write `100 % {word}`; elsewhere the state symbol says the phase, such as `Zn(l)`"
+                )),
+        );
+        true
     }
 
     fn said_twice(&mut self, what: &str, span: Span, first: Span) {

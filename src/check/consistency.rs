@@ -1,6 +1,6 @@
 //! Whether the data of a species agree with themselves: warnings that a reviewer would raise.
 //!
-//! A remark in the block that begins with a warning's code, `| W107 ...`, gives its reason and answers it.
+//! A remark in the block that names a warning, `| W107: ...`, gives its reason and answers it.
 
 use super::checker::Checker;
 use crate::diagnostic::{Code, Diagnostic};
@@ -45,7 +45,7 @@ impl Checker<'_> {
         found.extend(unsourced(species));
         found.extend(boiling_off_law(species));
         found.extend(latent_off_slope(species));
-        let answered = |code: Code| species.remarks.iter().any(|remark| remark.starts_with(code.as_str()));
+        let answered = |code: Code| species.remarks.iter().any(|remark| remark.contains(code.as_str()));
         self.diagnostics.extend(found.into_iter().filter(|found| !answered(found.code)));
     }
 }
@@ -137,7 +137,7 @@ fn wide_spreads(species: &Species) -> Vec<Diagnostic> {
                     ),
                 )
                 .label(datum.span, format!("spread {spread}"))
-                .help("say in a remark that begins with `| W109` why this one is taken")
+                .help("say in a remark, `| W109: ...`, why this one is taken")
             })
         })
         .collect()

@@ -31,6 +31,16 @@ impl Checker<'_> {
             );
         }
         self.one_source(suffixes);
+        if let Some(spread) = suffixes.spreads.first() {
+            self.report(
+                Diagnostic::new(Code::Unreadable, "a `spread` behind an input")
+                    .label(
+                        spread.amount.span,
+                        "a spread says how far a second source of a species' datum lies",
+                    )
+                    .help("give the input an interval, `± 2 %`, and name the second source in its `source`"),
+            );
+        }
         let written = suffixes.intervals.first()?;
         let above = self.half_width(&written.above, written, about);
         let below = if written.above == written.below {

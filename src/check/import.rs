@@ -2,10 +2,10 @@
 
 use super::checker::{Checker, Declared, Material};
 use crate::diagnostic::{Code, Diagnostic, nearest};
-use crate::library::{LoadError, Loaded, NoFiles, families, family};
-use crate::program::Species;
+use crate::library::{LoadError, Loaded, NoFiles, families, family, family_of, family_species, family_with};
+use crate::program::{Entry, Species};
 use crate::source::Sources;
-use crate::span::Span;
+use crate::span::{FileId, Span};
 use crate::syntax::parse_sheet;
 use crate::syntax::tree::{SpeciesName, Statement, Text, Use, UseFrom, Word};
 
@@ -22,13 +22,19 @@ impl Checker<'_> {
                 self.later_steam(span);
                 None
             }
-            UseFrom::Family(word) => self.family(word),
+            UseFrom::Family(word) => self.family(word, &line.names),
             UseFrom::File(path) => self.file(path),
         };
         for name in &line.names {
             let word = Word { text: name.name.clone(), span: name.span };
             let species = found.as_ref().and_then(|known| self.taken(name, known, line));
+            let entered = species.is_some();
             self.enter_species(&word, species);
+            if let (true, Some(Declared { what: Material::Species(id), .. })) =
+                (entered, self.materials.get(&word.text))
+            {
+                self.program.order.push(Entry::Species(*id));
+            }
         }
     }
 
@@ -53,34 +59,37 @@ impl Checker<'_> {
         };
         let found = Diagnostic::new(Code::NotInFamily, format!("{place} holds no `{}`", name.name))
             .label(name.span, "not there");
-        let names = || known.iter().map(|species| species.name.as_str());
-        let help = match nearest(&name.name, names()) {
-            Some(near) => format!("did you mean `{near}`?"),
-            None => format!("it holds {}", names().take(20).collect::<Vec<_>>().join(", ")),
+        let names: Vec<&str> = match &line.from {
+            UseFrom::Family(word) => family_species(&word.text).collect(),
+            UseFrom::File(_) => known.iter().map(|species| species.name.as_str()).collect(),
+        };
+        let help = match (family_of(&name.name), nearest(&name.name, names.iter().copied())) {
+            (Some(family), _) => format!("write `use {} from {family}`", name.name),
+            (None, Some(near)) => format!("did you mean `{near}`?"),
+            (None, None) => format!("it holds {}", names.into_iter().take(20).collect::<Vec<_>>().join(", ")),
         };
         self.report(found.help(help));
         None
     }
 
-    fn family(&mut self, word: &Word) -> FileSpecies {
-        let Some(text) = family(&word.text) else {
+    /// The species of a family that a line names; the rest of the family is not read.
+    fn family(&mut self, word: &Word, names: &[SpeciesName]) -> FileSpecies {
+        let wanted: Vec<&str> = names.iter().map(|name| name.name.as_str()).collect();
+        let (Some(whole), Some(text)) = (family(&word.text), family_with(&word.text, &wanted)) else {
             let found =
                 Diagnostic::new(Code::UnknownFamily, format!("no family `{}` in the library", word.text))
                     .label(word.span, "unknown");
             let known: Vec<&str> = families().collect();
             let help = match nearest(&word.text, known.iter().copied()) {
                 Some(near) => format!("did you mean `{near}`?"),
-                None if known.is_empty() => {
-                    "this version ships no families: write a `species` block, or use one from a file: `from \"metals.heat\"`".to_owned()
-                }
                 None => format!("families: {}", known.join(", ")),
             };
             self.report(found.help(help));
             return None;
         };
-        let identity = format!("{LIBRARY}{}", word.text);
-        let loaded = Loaded { identity, name: format!("{}.heat", word.text), text: text.to_owned() };
-        self.species_of(&loaded, word.span)
+        let (identity, name) = (format!("{LIBRARY}{}", word.text), format!("{}.heat", word.text));
+        let file = self.sources.add(name.clone(), whole);
+        self.read_species(file, &text, &identity, &name)
     }
 
     fn file(&mut self, path: &Text) -> FileSpecies {
@@ -128,25 +137,24 @@ impl Checker<'_> {
         if let Some(known) = self.files.get(&loaded.identity) {
             return known.clone();
         }
-        let read = self.read_species(loaded);
+        let file = self.sources.add(loaded.name.clone(), loaded.text.clone());
+        let read = self.read_species(file, &loaded.text, &loaded.identity, &loaded.name);
         self.files.insert(loaded.identity.clone(), read.clone());
         read
     }
 
-    fn read_species(&mut self, loaded: &Loaded) -> FileSpecies {
-        let file = self.sources.add(loaded.name.clone(), loaded.text.clone());
-        let parsed = parse_sheet(file, &loaded.text);
-        let mut inner = Checker::new(self.sources, self.loader, loaded.identity.clone());
-        inner.reading = self.reading.iter().cloned().chain([loaded.identity.clone()]).collect();
+    fn read_species(&mut self, file: FileId, text: &str, identity: &str, name: &str) -> FileSpecies {
+        let parsed = parse_sheet(file, text);
+        let mut inner = Checker::new(self.sources, self.loader, identity.to_owned());
+        inner.reading = self.reading.iter().cloned().chain([identity.to_owned()]).collect();
         inner.files = std::mem::take(&mut self.files);
         inner.broken.extend(parsed.broken);
         inner.diagnostics = parsed.diagnostics;
         for item in &parsed.tree.items {
             match &item.statement {
                 Statement::Species(block) => {
-                    let species = inner.species(block, Some(loaded.name.clone()));
-                    let shipped = loaded.identity.starts_with(LIBRARY);
-                    inner.warn_if_read(species.as_ref().filter(|_| !shipped));
+                    let species = inner.species(block, Some(name.to_owned()));
+                    inner.warn_if_read(species.as_ref().filter(|_| !identity.starts_with(LIBRARY)));
                     inner.enter_species(&block.name, species);
                 }
                 Statement::Use(line) => inner.import(line, item.span),
@@ -170,9 +178,10 @@ impl Checker<'_> {
 /// The species of a family of the shipped library in the order of its sheet; `None` where there is no such family or
 /// it is at fault.
 pub fn check_family(name: &str) -> Option<Vec<Species>> {
-    let text = family(name)?.to_owned();
+    let text = family(name)?;
     let mut sources = Sources::new();
-    let identity = format!("{LIBRARY}{name}");
+    let file_name = format!("{name}.heat");
+    let file = sources.add(file_name.clone(), text);
     let mut checker = Checker::new(&mut sources, &NoFiles, String::new());
-    checker.read_species(&Loaded { identity, name: format!("{name}.heat"), text })
+    checker.read_species(file, text, &format!("{LIBRARY}{name}"), &file_name)
 }

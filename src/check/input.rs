@@ -212,7 +212,7 @@ fn is_literal(expression: &Expression) -> bool {
 }
 
 /// The unit of a literal, with or without a minus.
-fn written_unit(expression: &Expression) -> Option<Unit> {
+pub(super) fn written_unit(expression: &Expression) -> Option<Unit> {
     match &expression.kind {
         ExpressionKind::Literal(literal) => read_unit(&literal.unit.as_ref()?.text).ok(),
         ExpressionKind::Negative(inner) => written_unit(inner),

@@ -201,6 +201,15 @@ impl Checker<'_> {
                         return None;
                     }
                 };
+                let asked = which.first().and_then(|at| state.constituents.get(*at));
+                if dry && asked.is_some_and(|part| self.is_water(part.species)) {
+                    self.report(
+                        Diagnostic::new(Code::UnknownMember, "the share of water in what is free of water")
+                            .label(name.span, "`dry` leaves it out")
+                            .help(format!("write `share({})`", name.to_text())),
+                    );
+                    return None;
+                }
                 let among = (0..state.constituents.len())
                     .filter(|at| !(dry && self.is_water(state.constituents[*at].species)))
                     .collect();

@@ -2,6 +2,7 @@
 
 use super::checker::{Checker, Entity};
 use super::constant::value_of;
+use super::input::written_unit;
 use super::wanted::{mass_against_amount, with_dimension};
 use crate::diagnostic::{Code, Diagnostic};
 use crate::program::{self, Column, Comparison, Entry, Expr, Limit, Quantity, QuantityId, Role, Table};
@@ -37,9 +38,9 @@ impl Checker<'_> {
         self.declare(&line.name, entity);
     }
 
-    /// The unit of an expression that is one name: the name's own.
+    /// The unit of an expression that is one name, the name's own, or one literal, as written.
     fn unit_of(&self, expression: &Expression) -> Option<Unit> {
-        let ExpressionKind::Name(name) = &expression.kind else { return None };
+        let ExpressionKind::Name(name) = &expression.kind else { return written_unit(expression) };
         match self.names.get(name)?.what {
             Entity::Quantity(id) => self.program.quantities.get(id.0)?.display.clone(),
             _ => None,

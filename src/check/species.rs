@@ -54,7 +54,9 @@ impl Checker<'_> {
     /// Puts a species into the materials, as broken where it could not be read.
     pub(super) fn enter_species(&mut self, name: &Word, species: Option<Species>) {
         if let Some(other) = self.materials.get(&name.text).filter(|other| other.what != Material::Broken) {
-            self.diagnostics.push(declared_twice(name, other.span));
+            let found = declared_twice(name, other.span);
+            self.diagnostics
+                .push(found.help("take one of the two out: a material has one set of data in a sheet"));
             return;
         }
         let what = match species {

@@ -30,7 +30,9 @@ impl Checker<'_> {
         }
         let text = self.written(value.span);
         let term = if matches!(value.node, Node::Sum(_)) { format!("({text})") } else { text.clone() };
-        let way_out = if value.dimension == Dimension::TEMPERATURE {
+        let way_out = if let Some(meant) = self.reading_taken_away(value) {
+            meant
+        } else if value.dimension == Dimension::TEMPERATURE {
             format!("add it to a temperature: `20 degC + {term}`")
         } else {
             format!("add it to a pressure: `1 bar + {term}`")
@@ -44,6 +46,22 @@ impl Checker<'_> {
             .help(way_out),
         );
         None
+    }
+
+    /// `pour_T - 20 degC` where a temperature is wanted: the reading was meant as a difference.
+    fn reading_taken_away(&self, value: &Expr) -> Option<String> {
+        let Node::Sum(terms) = &value.node else { return None };
+        let (_, last) = terms.last().filter(|(taken_away, term)| *taken_away && term.is_literal())?;
+        let text = self.written(last.span);
+        let number = text.split_whitespace().next()?;
+        let plain = match (value.dimension, text.contains('F')) {
+            (Dimension::PRESSURE, _) => "bar",
+            (_, true) => "degR",
+            (_, false) => "K",
+        };
+        let whole = self.written(value.span);
+        let before = whole.strip_suffix(text.as_str())?;
+        Some(format!("write `{before}{number} {plain}`"))
     }
 
     /// A temperature or pressure difference: a reading is refused.

@@ -170,6 +170,7 @@ codes! {
     BadEfficiency "R714" Error "an efficiency that cannot be";
     EfficiencyOnCooling "R715" Error "an efficiency on a cooling duty";
     ShareOutOfBounds "R716" Error "a share outside 0 % to 100 %";
+    PressureRises "R717" Error "a pressure that rises without work";
     DatumNotPositive "R719" Error "a heat capacity or a density that is not positive";
     OutsideVapourPressure "R720" Error "a pressure outside the vapour-pressure law";
 

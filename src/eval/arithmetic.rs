@@ -152,6 +152,7 @@ fn holds(check: Check, a: f64, b: f64) -> bool {
         Check::PositiveAmount | Check::PositivePressure | Check::PositiveTime => a > 0.0,
         Check::Share | Check::Efficiency => a > 0.0 && a <= 1.0,
         Check::SamePressure | Check::AgreedPressure | Check::SameVolume => near(1e-6),
+        Check::NoRise => b <= a * (1.0 + 1e-6),
         Check::SameTemperature => (a - b).abs() <= 1e-6,
         Check::Conserved => near(1e-5),
         Check::Heating => a >= 0.0,

@@ -53,6 +53,8 @@ pub enum Check {
     PositivePressure,
     /// `a` and `b` are one pressure, within 1e-6.
     SamePressure,
+    /// `b`, the pressure at the end, is no higher than `a`.
+    NoRise,
     /// `a` and `b`, pressures of the states that a state is made from, are one.
     AgreedPressure,
     /// `a` and `b` are one temperature, within 1e-6 K.

@@ -86,13 +86,14 @@ impl Comparison {
         }
     }
 
-    /// Whether it holds.
+    /// Whether it holds. Values that differ by no more than rounding brings about, 1e-12 of the larger, are equal.
     pub fn holds(self, left: f64, right: f64) -> bool {
+        let equal = (left - right).abs() <= 1e-12 * left.abs().max(right.abs());
         match self {
-            Comparison::Less => left < right,
-            Comparison::AtMost => left <= right,
-            Comparison::Greater => left > right,
-            Comparison::AtLeast => left >= right,
+            Comparison::Less => left < right && !equal,
+            Comparison::AtMost => left <= right || equal,
+            Comparison::Greater => left > right && !equal,
+            Comparison::AtLeast => left >= right || equal,
         }
     }
 }
@@ -194,4 +195,34 @@ pub struct Program {
     pub tables: Vec<Table>,
     /// The statements in the order of the sheet.
     pub order: Vec<Entry>,
+}
+
+impl Program {
+    /// Calls `see` for every expression of the sheet, those inside others too.
+    pub fn each_expression(&self, see: &mut impl FnMut(&Expr)) {
+        self.quantities.iter().for_each(|quantity| quantity.value.walk(see));
+        for state in &self.states {
+            state.expressions().for_each(|expr| expr.walk(see));
+        }
+        for step in &self.steps {
+            step.expressions().for_each(|expr| expr.walk(see));
+        }
+        for duty in &self.duties {
+            [Some(&duty.value), duty.over.as_ref(), duty.efficiency.as_ref()]
+                .into_iter()
+                .flatten()
+                .for_each(|expr| expr.walk(see));
+        }
+        for requirement in &self.requirements {
+            requirement.value.walk(see);
+            match &requirement.limit {
+                Limit::Compared(_, limit) => limit.walk(see),
+                Limit::Within(low, high) => [low, high].into_iter().for_each(|limit| limit.walk(see)),
+            }
+        }
+        for table in &self.tables {
+            let columns = table.columns.iter().map(|column| &column.value);
+            columns.chain([&table.from, &table.to, &table.by]).for_each(|expr| expr.walk(see));
+        }
+    }
 }

@@ -112,4 +112,29 @@ impl State {
             Source::Sum(parts) => parts.iter().flat_map(State::origins_of).collect(),
         }
     }
+
+    /// The expressions of its amounts and conditions.
+    pub fn expressions(&self) -> impl Iterator<Item = &Expr> {
+        let said = |condition| match condition {
+            &Condition::Value(ref value) => Some(value),
+            _ => None,
+        };
+        let conditions =
+            [said(&self.temperature), said(&self.pressure), self.share.as_ref().map(|(_, share)| share)];
+        let mut amounts = Vec::new();
+        gather_amounts(&self.source, &mut amounts);
+        conditions.into_iter().flatten().chain(amounts)
+    }
+}
+
+fn gather_amounts<'a>(source: &'a Source, into: &mut Vec<&'a Expr>) {
+    match source {
+        Source::Fresh { amount, .. } => into.push(amount),
+        Source::Whole(_) => {}
+        Source::PartOf { amount, of, .. } => {
+            into.push(amount);
+            gather_amounts(of, into);
+        }
+        Source::Sum(parts) => parts.iter().for_each(|part| gather_amounts(part, into)),
+    }
 }

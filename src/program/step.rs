@@ -111,3 +111,14 @@ pub struct Step {
     /// The statement after its name, as written.
     pub text: String,
 }
+
+impl Step {
+    /// The expressions of its clauses.
+    pub fn expressions(&self) -> impl Iterator<Item = &Expr> {
+        let taking = match &self.heat {
+            Heat::Taking(value) => Some(value),
+            Heat::Follows | Heat::Adiabatic => None,
+        };
+        [taking, self.losing.as_ref(), self.working.as_ref(), self.efficiency.as_ref()].into_iter().flatten()
+    }
+}

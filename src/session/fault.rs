@@ -117,6 +117,19 @@ impl Teller<'_> {
         format!("{} {}", significant(unit.from_si(si, 0.0), 6), unit.text)
     }
 
+    /// In what a step's balance is counted: species by mass, elements by amount of substance.
+    fn conserved_unit(&self, what: &str) -> &'static str {
+        let OriginKind::Conserved(id, _) = &self.origin.kind else { return "" };
+        let flow = self.program.steps.get(id.0).is_some_and(|step| step.flow);
+        let by_mass = self.program.species.iter().any(|species| species.name == what);
+        match (by_mass, flow) {
+            (true, false) => "kg",
+            (true, true) => "kg/s",
+            (false, false) => "mol",
+            (false, true) => "mol/s",
+        }
+    }
+
     fn locate(&self, error: LocateError, kelvin: f64, pascal: f64) -> Diagnostic {
         let (state, species) = self.state();
         let name = species.map_or("the species", |species| species.name.as_str());
@@ -320,6 +333,9 @@ impl Teller<'_> {
                     "which pressure?",
                 )
                 .help("add the pressure after the temperature, such as `, 1 bar`"),
+            Check::NoRise => self
+                .found(Code::PressureRises, format!("`{step}` does no shaft work, but its pressure rises from {} kPa to {} kPa abs", significant(a / 1e3, 6), significant(b / 1e3, 6)), "this step")
+                .help("write `adiabatic reversible` with its efficiency, or `at constant pressure, working ...`, or correct the pressures"),
             Check::SameTemperature => self
                 .found(
                     Code::TemperaturesDiffer,
@@ -343,11 +359,12 @@ impl Teller<'_> {
                     OriginKind::Conserved(_, name) => name.as_str(),
                     _ => "matter",
                 };
+                let unit = self.conserved_unit(what);
                 let word = if a > b { "loses" } else { "gains" };
                 let by = significant(100.0 * (a - b).abs() / a.abs().max(b.abs()), 4);
                 self.found(
                     Code::NotConserved,
-                    format!("`{step}` {word} `{what}`: {x} at its start, {y} at its end (SI)"),
+                    format!("`{step}` {word} `{what}`: {x} {unit} at its start, {y} {unit} at its end"),
                     format!(
                         "{by} % of `{what}` {}",
                         if a > b { "missing at the end" } else { "missing at the start" }

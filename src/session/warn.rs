@@ -43,7 +43,7 @@ fn extrapolated(sheet: &WorkedSheet<'_>) -> Vec<Diagnostic> {
 /// States whose volume is asked, and condensed matter in them whose density is not given at their temperature.
 pub(super) fn densities_beyond(sheet: &WorkedSheet<'_>) -> Vec<Diagnostic> {
     let mut asked: BTreeSet<StateId> = BTreeSet::new();
-    sheet.each_expression(&mut |expr| match &expr.node {
+    sheet.program.each_expression(&mut |expr| match &expr.node {
         Node::State(id, StateMember::Volume | StateMember::Density) => {
             asked.insert(*id);
         }
@@ -94,7 +94,7 @@ fn density_beyond(sheet: &WorkedSheet<'_>, id: StateId) -> Vec<Diagnostic> {
 /// Steps of which ΔU, ΔV or W is asked, with condensed matter whose volume is not known.
 fn neglected_volumes(sheet: &WorkedSheet<'_>) -> Vec<Diagnostic> {
     let mut asked: BTreeSet<StepId> = BTreeSet::new();
-    sheet.each_expression(&mut |expr| {
+    sheet.program.each_expression(&mut |expr| {
         if let Node::Step(
             id,
             StepMember::InternalEnergyChange | StepMember::VolumeChange | StepMember::Work,

@@ -8,7 +8,7 @@ use crate::diagnostic::{Code, Diagnostic};
 use crate::eval::{self, Frame};
 use crate::library::Loader;
 use crate::plan::{Lowered, lower};
-use crate::program::{Program, Quantity};
+use crate::program::{Node, Program, Quantity};
 use crate::report::{Report, TableValues, WorkedSheet, find_cautions, gather};
 use crate::source::Sources;
 use crate::span::FileId;
@@ -116,6 +116,9 @@ fn evaluated(program: &Program, lowered: &Lowered, diagnostics: &mut Vec<Diagnos
 /// A value that is shown as a reading, and lies where no reading is: a difference may have been meant.
 fn below_zero(quantity: &Quantity, si: f64) -> Option<Diagnostic> {
     let unit = quantity.display.as_ref().filter(|unit| unit.zero != Zero::None && si < 0.0)?;
+    if matches!(quantity.value.node, Node::Quantity(_)) {
+        return None; // told where the name has its value
+    }
     let (code, message, plain) = match unit.zero {
         Zero::Atmosphere => (Code::PressureNotPositive, "an absolute pressure below zero", "bar"),
         Zero::None | Zero::Kelvin(_) => (Code::BelowAbsoluteZero, "a temperature below absolute zero", "K"),
@@ -123,7 +126,10 @@ fn below_zero(quantity: &Quantity, si: f64) -> Option<Diagnostic> {
     Some(
         Diagnostic::new(code, format!("`{}` is shown in `{}`, and is {message}", quantity.name, unit.text))
             .label(quantity.value.span, "worked here")
-            .help(format!("if a difference was meant, write `in {plain}`")),
+            .help(match quantity.role.is_input() {
+                true => "check the number, its sign and its unit".to_owned(),
+                false => format!("if a difference was meant, write `in {plain}`"),
+            }),
     )
 }
 

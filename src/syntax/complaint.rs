@@ -20,6 +20,11 @@ pub(super) fn unknown_statement(text: &str, word: &str, span: Span) -> Diagnosti
     let found = Diagnostic::new(Code::UnknownStatement, format!("no statement begins with {shown}"))
         .label(place, "a statement word is wanted here");
     let after = text[word.len()..].trim_start();
+    if text.starts_with(['+', '-', '*', '/', '−', '×', '^']) {
+        return found.help(
+            "a statement goes on inside open parentheses, or after a comma: put the expression in `( )`",
+        );
+    }
     let known = words::STATEMENTS.iter().map(|opening| opening.word);
     if !word.is_empty() && after.starts_with('=') {
         return found.help(format!(
@@ -84,7 +89,6 @@ pub(super) fn unreadable(
     chained_power(&place)
         .or_else(|| two_signs(&place))
         .or_else(|| blank_in_unit(&place))
-        .or_else(|| blank_further_on(&place))
         .or_else(|| number_before_name(&place))
         .or_else(|| reserved(&place))
         .or_else(|| call_blank(&place))
@@ -187,24 +191,6 @@ fn blank_in_unit(place: &Place<'_>) -> Option<Diagnostic> {
     )
 }
 
-/// The same where the parser stopped before the unit: `6.95e5 J K/mol` in a list.
-fn blank_further_on(place: &Place<'_>) -> Option<Diagnostic> {
-    let rest = place.rest();
-    let first = &rest[..rest.find(char::is_whitespace)?];
-    let next = first_word(rest[first.len()..].trim_start());
-    let number = place.before().ends_with(|c: char| c.is_ascii_digit());
-    let unit_like = first.starts_with(char::is_alphabetic) && !first.contains(['=', ',', '}']);
-    if !number || !unit_like || next.is_empty() || words::RESERVED.contains(&next) {
-        return None;
-    }
-    blank_in_unit(&Place {
-        at: place.rest_at() + first.len(),
-        text: place.text,
-        base: place.base,
-        file: place.file,
-    })
-}
-
 /// `2 (a + b)` or `2 (`: no product is understood without its sign.
 fn number_before_name(place: &Place<'_>) -> Option<Diagnostic> {
     let before = place.before();
@@ -295,7 +281,7 @@ fn rule_in_words(rule: Rule) -> String {
         Rule::unknown => "`?`",
         Rule::interval | Rule::symmetric | Rule::sided => "an interval `± ...`",
         Rule::clause => "a path or a clause",
-        Rule::comparison => "`<=`, `>=`, `<`, `>` or `within`",
+        Rule::comparison => "`<=`, `>=`, `<` or `>`",
         Rule::rows | Rule::coefficients => "a list in braces",
         _ => "",
     };

@@ -14,10 +14,10 @@ fn called(ran: &Ran) -> (Option<i32>, &str, &str) {
 fn help_names_the_commands_and_the_exit_status() {
     let ran = heatpath(&["--help"]);
     assert_eq!((ran.status, ran.stderr.as_str()), (Some(0), ""));
-    for word in ["run ", "check ", "units ", "explain ", "--color", "Exit status: 0"] {
+    for word in ["run ", "check ", "species ", "units ", "explain ", "--color", "Exit status: 0"] {
         assert!(ran.stdout.contains(word), "{word}");
     }
-    for later in ["species", "why", "tidy", "record", "audit", "compare"] {
+    for later in ["why", "tidy", "record", "audit", "compare"] {
         assert!(!ran.stdout.contains(&format!("  {later} ")), "{later}");
         assert_eq!(heatpath(&[later, "sheet.heat"]).status, Some(2), "{later}");
     }
@@ -172,6 +172,26 @@ fn every_member_of_a_formula_is_put_in() {
     // by hand: 785 kg / 7850 kg/m3 = 0.1 m3; 785 kg * 0.63 kJ/(kg K) * 100 K = 49.455 MJ
     assert!(ran.stdout.contains("= 0.1 m3 * 2"), "{}", ran.stdout);
     assert!(ran.stdout.contains("= 49.455 MJ / 2"), "{}", ran.stdout);
+}
+
+/// Two species that melt at one temperature: the heat alone does not say how far each of them is.
+#[test]
+fn a_plateau_that_is_shared_is_told() {
+    let species = |name: &str, latent: f64| {
+        format!(
+            "species {name} \"{name}\" {{\n source \"invented\"\n phase solid {{\n cp = 1 kJ/(kg K) for 300 K to 500 K\n }}\n\
+             melting at 500 K takes {latent} kJ/kg\n phase liquid {{\n cp = 1 kJ/(kg K) for 500 K to 900 K\n }}\n}}\n"
+        )
+    };
+    let sheet = format!(
+        "{}{}state a = 1 kg of wax at 400 K\nstate b = 1 kg of salt at 400 K\nstate both = a + b at ?\n\
+         step soak: a + b -> both, at constant pressure, taking 300 kJ\nresult T = both.T in K\n",
+        species("wax", 100.0),
+        species("salt", 200.0)
+    );
+    let ran = heatpath_reading(&["run", "-"], sheet.as_bytes());
+    assert_eq!(ran.status, Some(0), "{}", ran.stderr);
+    assert!(ran.stdout.contains("wax and salt change at one temperature"), "{}", ran.stdout);
 }
 
 /// A pressure drop is neither absolute nor gauge, whatever name it goes by.

@@ -127,6 +127,18 @@ fn spreads_are_told_where_a_second_source_is_known() {
     assert!(told * 3 > all, "only {told} of {all} data have a spread");
 }
 
+/// A second source more than 1 % off is spoken of in a remark of the species.
+#[test]
+fn wide_spreads_are_explained() {
+    each_species(|family, species| {
+        let percent = |text: &String| text.split(' ').next().and_then(|number| number.parse::<f64>().ok());
+        let spreads = species.data.iter().filter_map(|datum| datum.spread.as_ref());
+        let widest = spreads.map(|text| percent(text).expect("a percentage")).fold(0.0, f64::max);
+        let explained = widest <= 1.0 || !species.remarks.is_empty();
+        assert!(explained, "{family}: {} with {widest} % and no remark", species.name);
+    });
+}
+
 /// Species that rest on a single source.
 fn lone(species: &Species) -> bool {
     ["MnO", "CaSO4·2H2O", "CH3COOH", "C3H8O3"].contains(&species.name.as_str())
@@ -194,4 +206,23 @@ fn tungsten_melts_as_evaluated_by_sgte() {
     );
     let latent = found.get("latent").copied().expect("a result");
     assert!((latent - 52.3).abs() < 1e-9, "{latent}");
+}
+
+#[test]
+fn a_species_asked_of_the_wrong_family_is_told_its_own() {
+    let worked = session::check("sheet.heat", "sheet.heat", "use N2, Argon from metals\n", &NoFiles);
+    let helps: Vec<_> = worked.diagnostics.iter().filter_map(|found| found.help.as_deref()).collect();
+    assert_eq!(helps.first(), Some(&"write `use N2 from gases`"));
+    assert!(helps.get(1).is_some_and(|help| help.contains("Al, Cu, Fe, Zn")), "{helps:?}");
+}
+
+/// Pairs of molecules halve the real latent heat, so that heating past the boiling point is refused.
+#[test]
+fn acetic_acid_is_not_boiled_to_single_molecules() {
+    let heated = "use CH3COOH from solvents\nstate a = 1 kg of CH3COOH at 20 degC\nstate b = a at 130 degC\n\
+                  step heat: a -> b, at constant pressure\nresult Q = heat.Q in kJ\n";
+    assert_eq!(refusals(heated), ["R702"]);
+    let vapour =
+        "use CH3COOH from solvents\nstate a = 1 kg of CH3COOH(g) at 130 degC\nresult H = a.H in kJ\n";
+    assert_eq!(refusals(vapour), Vec::<String>::new());
 }

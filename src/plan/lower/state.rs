@@ -381,8 +381,14 @@ impl Builder<'_> {
 
     pub(super) fn state_member(&mut self, id: StateId, member: &StateMember) -> Lowering<Slot> {
         Ok(match member {
-            StateMember::Temperature => self.temperature(id)?.slot,
-            StateMember::Pressure => self.pressure(id)?,
+            StateMember::Temperature => {
+                let value = self.temperature(id)?.slot;
+                self.known_to_hold(id, value)?
+            }
+            StateMember::Pressure => {
+                let value = self.pressure(id)?;
+                self.known_to_hold(id, value)?
+            }
             StateMember::Amount => self.sum(id, Total::Amount)?,
             StateMember::Mass => self.sum(id, Total::Mass)?,
             StateMember::Volume => self.sum(id, Total::Volume)?,
@@ -407,6 +413,16 @@ impl Builder<'_> {
             }
             StateMember::Fraction(which, phase) => self.fraction(id, which, phase)?,
         })
+    }
+
+    /// A condition of a state, where the state has a place on its heating curves. While an unknown of the state is
+    /// being settled its place is not known yet, and the condition goes on as it is.
+    fn known_to_hold(&mut self, id: StateId, value: Slot) -> Lowering<Slot> {
+        if self.waiting.iter().any(|(waiting, _)| *waiting == id) {
+            return Ok(value);
+        }
+        let given = self.sum(id, Total::Enthalpy)?;
+        Ok(self.emit(|to| Op::Known { value, given, to }))
     }
 
     fn per_mass(&mut self, id: StateId, total: Total) -> Lowering<Slot> {

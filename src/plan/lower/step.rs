@@ -295,6 +295,14 @@ impl Builder<'_> {
                 states.iter().map(|id| Ok(self.temperature(*id)?.slot)).collect::<Lowering<Vec<Slot>>>()?;
             checks.extend(slots.iter().skip(1).map(|slot| (Check::SameTemperature, slots[0], *slot)));
         }
+        if matches!(path, Path::NoShaftWork | Path::Throttled) {
+            let starts = step.from.iter().map(|id| self.pressure(*id)).collect::<Lowering<Vec<Slot>>>()?;
+            let highest =
+                starts.iter().skip(1).fold(starts[0], |a, &b| self.emit(|to| Op::Maximum { a, b, to }));
+            for id in &step.to {
+                checks.push((Check::NoRise, highest, self.pressure(*id)?));
+            }
+        }
         if path == Path::ConstantVolume {
             let start = self.side(&step.from, Total::VolumeOrNothing)?;
             let end = self.side(&step.to, Total::VolumeOrNothing)?;

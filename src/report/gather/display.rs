@@ -1,7 +1,7 @@
 //! Values with the unit to show them in.
 
 use super::worked::WorkedSheet;
-use crate::program::{Expr, Node, QuantityId};
+use crate::program::{Condition, Expr, Limit, Node, QuantityId};
 use crate::report::model::{PressureBasis, Quantity};
 use crate::units::{Dimension, Kind, Unit, engineering_unit, read_unit};
 
@@ -36,10 +36,40 @@ impl WorkedSheet<'_> {
             (_, Kind::Difference) => true,
             (Node::Sum(terms), Kind::Open) => terms.iter().any(|(taken_away, _)| *taken_away),
             (Node::Quantity(id), Kind::Open) => {
-                self.program.quantities.get(id.0).is_some_and(|named| self.is_difference(&named.value))
+                self.serves_as_difference(*id)
+                    || self.program.quantities.get(id.0).is_some_and(|named| self.is_difference(&named.value))
             }
             _ => false,
         }
+    }
+
+    /// Whether an open quantity serves as a difference only: it stands in sums behind the first term, or in products,
+    /// and nowhere alone.
+    pub(super) fn serves_as_difference(&self, id: QuantityId) -> bool {
+        let is_it = |expr: &Expr| expr.node == Node::Quantity(id);
+        let (mut alone, mut inside) = (false, false);
+        self.program.each_expression(&mut |expr| match &expr.node {
+            Node::Sum(terms) => {
+                alone |= terms.first().is_some_and(|(_, term)| is_it(term));
+                inside |= terms.iter().skip(1).any(|(_, term)| is_it(term));
+            }
+            Node::Product(factors) => inside |= factors.iter().any(|(_, factor)| is_it(factor)),
+            _ => {}
+        });
+        let program = self.program;
+        alone |= program.quantities.iter().any(|quantity| is_it(&quantity.value));
+        alone |= program
+            .states
+            .iter()
+            .any(|state| matches!(&state.pressure, Condition::Value(expr) if is_it(expr)));
+        alone |= program.requirements.iter().any(|requirement| {
+            is_it(&requirement.value)
+                || match &requirement.limit {
+                    Limit::Compared(_, limit) => is_it(limit),
+                    Limit::Within(low, high) => is_it(low) || is_it(high),
+                }
+        });
+        inside && !alone
     }
 
     /// The unit in which a named quantity is shown.

@@ -9,6 +9,8 @@ use crate::units::Unit;
 /// How tightly an expression binds, for the parentheses around it.
 #[derive(Clone, Copy, PartialEq, Eq, PartialOrd, Ord)]
 enum Tightness {
+    /// A value with a minus of its own.
+    Signed,
     Sum,
     Product,
     Power,
@@ -27,6 +29,12 @@ impl WorkedSheet<'_> {
     }
 
     fn text(&self, expr: &Expr) -> (String, Tightness) {
+        let (text, tightness) = self.text_of_node(expr);
+        let signed = tightness == Tightness::Atom && text.starts_with('-');
+        (text, if signed { Tightness::Signed } else { tightness })
+    }
+
+    fn text_of_node(&self, expr: &Expr) -> (String, Tightness) {
         match &expr.node {
             Node::Constant(_) | Node::Gauge(_) => (self.literal(expr), Tightness::Atom),
             Node::Variable => ("T".to_owned(), Tightness::Atom),
@@ -102,7 +110,7 @@ impl WorkedSheet<'_> {
 
 fn next_tighter(tightness: Tightness) -> Tightness {
     match tightness {
-        Tightness::Sum => Tightness::Product,
+        Tightness::Signed | Tightness::Sum => Tightness::Product,
         Tightness::Product => Tightness::Power,
         Tightness::Power | Tightness::Atom => Tightness::Atom,
     }

@@ -6,13 +6,15 @@ use super::display::unit;
 use super::usage::Usage;
 use super::worked::WorkedSheet;
 use crate::diagnostic::Severity;
-use crate::program::{Condition, DutyId, Entry, Expr, Limit, Node, QuantityId, Role, SpeciesId, StateId};
+use crate::program::{
+    Comparison, Condition, DutyId, Entry, Expr, Limit, Node, QuantityId, Role, SpeciesId, StateId,
+};
 use crate::report::conventions::standing_conventions;
 use crate::report::model::{
-    Caution, DutyRow, Finding, InputRow, Item, MixtureRow, Quantity, Report, RequirementRow, ResultRow,
-    SiteRow, StateRow, TableColumn, TableRows,
+    Caution, DutyRow, Finding, InputRow, Item, MixtureRow, PressureBasis, Quantity, Report, RequirementRow,
+    ResultRow, SiteRow, StateRow, TableColumn, TableRows,
 };
-use crate::units::{Dimension, Unit, Zero, engineering_unit};
+use crate::units::{Dimension, Kind, Unit, Zero, engineering_unit};
 
 /// Gathers the report of a worked sheet.
 pub fn gather(sheet: &WorkedSheet<'_>) -> Report {
@@ -80,6 +82,10 @@ impl WorkedSheet<'_> {
         let quantity = self.program.quantities.get(id.0)?;
         let si = self.value(*self.map.quantities.get(id.0)?);
         let mut value = self.expression_shown(&quantity.value, si, quantity.display.as_ref());
+        let open = quantity.value.kind == Kind::Open && value.pressure == Some(PressureBasis::Absolute);
+        if open && self.serves_as_difference(id) {
+            value.pressure = Some(PressureBasis::Difference);
+        }
         if quantity.role.is_input()
             && let Some(number) = written_number(&quantity.text, &value.unit)
         {
@@ -201,7 +207,9 @@ impl WorkedSheet<'_> {
         let value = self.value(slots.value);
         let met = match (&requirement.limit, limits.as_slice()) {
             (Limit::Compared(comparison, _), [limit]) => comparison.holds(value, *limit),
-            (Limit::Within(..), [low, high]) => *low <= value && value <= *high,
+            (Limit::Within(..), [low, high]) => {
+                Comparison::AtLeast.holds(value, *low) && Comparison::AtMost.holds(value, *high)
+            }
             _ => false,
         };
         let first = match &requirement.limit {

@@ -1,7 +1,7 @@
 //! Steps with their legs, and how heat and work follow.
 
 use super::worked::WorkedSheet;
-use crate::program::{DatumKind, Heat, Path, SpeciesId, Step, StepId, Unknown};
+use crate::program::{DatumKind, Heat, Path, SpeciesId, StateId, Step, StepId, Unknown};
 use crate::report::model::{LegKind, LegRow, Side, StepRow};
 use crate::report::number::{shown, significant};
 use crate::thermo::{self, Leg, PhaseClass};
@@ -208,6 +208,7 @@ impl WorkedSheet<'_> {
                 notes.push(note);
             }
         }
+        notes.extend(step.settles.iter().filter_map(|settles| self.shared_plateau(settles.state)));
         if let Some((Path::ConstantPressure, _)) = step.path {
             let p = self.map.states.get(step.from[0].0).map_or(f64::NAN, |slots| self.value(slots.pressure));
             notes.push(format!("Pressure {} kPa abs throughout.", significant(p / 1e3, 6)));
@@ -239,6 +240,32 @@ impl WorkedSheet<'_> {
             }
         }
         notes
+    }
+
+    /// Several species on one plateau: an enthalpy does not say how far each of them is.
+    fn shared_plateau(&self, id: StateId) -> Option<String> {
+        let mut names: Vec<&str> = Vec::new();
+        for (part, _, place) in self.contents(id) {
+            let (Some(place), Some(species)) = (place, self.program.species.get(part.species.0)) else {
+                continue;
+            };
+            let present = species.curve.phases_at(place);
+            let below = present.lower.0;
+            let half_way = present.upper.is_some_and(|(_, share)| share > 0.0 && share < 1.0);
+            let plateau = species.data.iter().any(|datum| {
+                datum.kind == DatumKind::Transition { below } && datum.valid.is_some_and(|(lo, hi)| lo >= hi)
+            });
+            if half_way && plateau && !names.contains(&species.name.as_str()) {
+                names.push(&species.name);
+            }
+        }
+        let names: Vec<String> = names.into_iter().map(str::to_owned).collect();
+        (names.len() > 1).then(|| {
+            format!(
+                "{} change at one temperature: the heat does not tell them apart, and the same share of each is taken as changed.",
+                crate::diagnostic::and_list(&names)
+            )
+        })
     }
 
     /// The condensed phases of a step that have no density.
@@ -283,7 +310,7 @@ fn work_formula(step: &Step, path: Path) -> String {
         Path::AdiabaticReversible if step.flow => "ΔH, no heat passes",
         Path::AdiabaticReversible => "ΔU, no heat passes",
         Path::ConstantVolume => "no volume work",
-        Path::ConstantPressure | Path::ConstantTemperatureAndPressure => "no shaft work but what is stated",
+        Path::ConstantPressure | Path::ConstantTemperatureAndPressure => "no shaft work",
         Path::NoShaftWork | Path::Throttled => "no shaft work",
     };
     if step.working.is_some() {

@@ -64,13 +64,16 @@ impl Usage {
             };
             let t = place.temperature().value;
             let present = species.curve.phases_at(place);
+            let changing = present.upper.is_some_and(|(_, share)| share > 0.0 && share < 1.0);
             for (phase, share) in std::iter::once(present.lower).chain(present.upper) {
                 if share > 0.0 {
-                    self.sensible(sheet, constituent.species, phase, (t, t));
+                    if !changing {
+                        self.sensible(sheet, constituent.species, phase, (t, t));
+                    }
                     self.note(constituent.species, DatumKind::Density { phase }, (t, t));
                 }
             }
-            if present.upper.is_some_and(|(_, share)| share > 0.0 && share < 1.0) {
+            if changing {
                 self.note(constituent.species, DatumKind::Transition { below: present.lower.0 }, (t, t));
             }
             if present.upper.is_some() && sheet.boils_by_law(constituent.species, present.lower.0, t) {
@@ -122,7 +125,7 @@ impl Usage {
     /// Absolute enthalpies rest on formation enthalpies and on the way from 298.15 K.
     fn absolute(&mut self, sheet: &WorkedSheet<'_>) {
         let mut asked: Vec<StateId> = Vec::new();
-        sheet.each_expression(&mut |expr| {
+        sheet.program.each_expression(&mut |expr| {
             if let Node::State(
                 id,
                 StateMember::Enthalpy
@@ -176,24 +179,6 @@ fn from_298(species: &Species) -> Allowance {
 }
 
 impl WorkedSheet<'_> {
-    /// Calls `see` for every expression of the sheet, those inside others too.
-    pub fn each_expression(&self, see: &mut impl FnMut(&crate::program::Expr)) {
-        let program = self.program;
-        program.quantities.iter().for_each(|quantity| quantity.value.walk(see));
-        for step in &program.steps {
-            [&step.losing, &step.working, &step.efficiency]
-                .into_iter()
-                .flatten()
-                .for_each(|expr| expr.walk(see));
-            if let crate::program::Heat::Taking(expr) = &step.heat {
-                expr.walk(see);
-            }
-        }
-        program.duties.iter().for_each(|duty| duty.value.walk(see));
-        program.requirements.iter().for_each(|requirement| requirement.value.walk(see));
-        program.tables.iter().flat_map(|table| &table.columns).for_each(|column| column.value.walk(see));
-    }
-
     /// Whether a species boils at a temperature by its vapour pressure, not at its stated boiling point.
     pub(super) fn boils_by_law(&self, id: SpeciesId, link: usize, kelvin: f64) -> bool {
         self.program.species.get(id.0).is_some_and(|species| {

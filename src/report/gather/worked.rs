@@ -33,7 +33,7 @@ pub struct WorkedSheet<'a> {
 
 impl WorkedSheet<'_> {
     pub(super) fn value(&self, slot: Slot) -> f64 {
-        self.frame.value(slot)
+        self.frame.value(slot) + 0.0 // no minus before zero
     }
 
     /// The site's atmosphere, Pa.

@@ -18,7 +18,15 @@ impl Builder<'_> {
     /// A number; one beyond a double is reported and read as one.
     pub(super) fn number(&mut self, pair: &Pair<'_, Rule>) -> f64 {
         match pair.as_str().parse::<f64>() {
-            Ok(value) if value.is_finite() => value,
+            Ok(value) if value.is_finite() && (value != 0.0 || is_zero(pair.as_str())) => value,
+            Ok(0.0) => {
+                self.diagnostics.push(
+                    Diagnostic::new(Code::NumberTooLarge, "a number too small for a double")
+                        .label(self.span(pair), "less than 4.9e-324")
+                        .help("write it in a smaller unit"),
+                );
+                1.0
+            }
             _ => {
                 self.diagnostics.push(
                     Diagnostic::new(Code::NumberTooLarge, "a number beyond the range of a double")
@@ -139,4 +147,9 @@ impl Builder<'_> {
             _ => Err(self.word(&inner)),
         }
     }
+}
+
+/// Whether every digit before the exponent is a zero.
+fn is_zero(number: &str) -> bool {
+    number.split(['e', 'E']).next().unwrap_or_default().chars().all(|c| matches!(c, '0' | '.'))
 }
