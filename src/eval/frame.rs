@@ -33,6 +33,8 @@ pub enum Fault {
         volume: f64,
         amount: f64,
     },
+    /// A liquid that boils, or a vapour that condenses, in a closed volume.
+    BoilsClosed,
     /// A guard that does not hold.
     Check {
         check: Check,

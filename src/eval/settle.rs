@@ -108,6 +108,23 @@ fn volume_and_gas(parts: &[Part<'_>], kelvin: f64, pascal: f64, share: Option<f6
     Some((condensed, gas))
 }
 
+/// Whether a part that may boil is all liquid or all gas at a temperature, and the same at both pressures.
+fn stays_as_it_is(part: &Part<'_>, kelvin: f64, (start, end): (f64, f64), share: Option<f64>) -> bool {
+    let gas_share = |pascal: f64| {
+        let place = part.curve.place(quantity(kelvin), quantity(pascal), part.pin, share, part.allowance);
+        let present = part.curve.phases_at(place.ok()?);
+        let gas = |(phase, share): (usize, f64)| {
+            if part.curve.phase_class(phase) == Some(PhaseClass::Gas) { share } else { 0.0 }
+        };
+        Some(gas(present.lower) + present.upper.map_or(0.0, gas))
+    };
+    if part.pin != Pin::Stable {
+        return true;
+    }
+    let before = gas_share(start);
+    (before == Some(0.0) || before == Some(1.0)) && gas_share(end) == before
+}
+
 /// Between which temperatures a part has data, K.
 fn data_span(part: &Part<'_>) -> Option<(f64, f64)> {
     let wanted = |phase: usize| match part.pin {
@@ -158,9 +175,23 @@ pub(super) fn pressure<const N: usize>(
                 .flatten()
         };
         let pascal = found.map(|(condensed, gas)| (gas, target[lane] - condensed));
+        let same_phases = |end: f64| {
+            let same = |parts: &[Part<'_>]| {
+                parts.iter().all(|part| stays_as_it_is(part, t[lane], (p[lane], end), upper))
+            };
+            with_parts(plan, frame, range, lane, same) == Some(true)
+        };
         frame.slots[to.0 as usize][lane] = match pascal {
             None => f64::NAN,
-            Some((gas, volume)) if gas > 0.0 && volume > 0.0 => gas * GAS_CONSTANT * t[lane] / volume,
+            Some((gas, volume)) if gas > 0.0 && volume > 0.0 => {
+                let end = gas * GAS_CONSTANT * t[lane] / volume;
+                if same_phases(end) {
+                    end
+                } else {
+                    frame.fail(at, lane, Fault::BoilsClosed);
+                    f64::NAN
+                }
+            }
             Some((amount, volume)) => {
                 frame.fail(at, lane, Fault::SettlePressure { volume, amount });
                 f64::NAN

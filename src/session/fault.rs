@@ -433,6 +433,15 @@ impl Teller<'_> {
                 )
                 .help("choose another path, or name the gas phase with its state symbol")
             }
+            Fault::BoilsClosed => {
+                let (state, _) = self.state();
+                self.found(
+                    Code::LaterEquilibrium,
+                    format!("`{state}` boils or condenses in a closed volume: its pressure would be a vapour pressure, which is not worked by this version"),
+                    "this step",
+                )
+                .help("let it boil at constant pressure, or name the phase at the end with its state symbol")
+            }
             Fault::SettlePressure { volume, amount } => {
                 let (state, _) = self.state();
                 let why = if amount > 0.0 {

@@ -224,7 +224,7 @@ fn boiling_points_and_latent_heats_are_the_published_ones() {
     }
 }
 
-/// The vapour-pressure equations kept for later meet the boiling points of the library at 101.325 kPa within 0.2 K.
+/// The vapour-pressure equations meet the boiling points of the library at 101.325 kPa within 0.2 K.
 #[test]
 fn vapour_pressures_meet_the_boiling_points() {
     let boiling: BTreeMap<String, f64> = records("library_boiling.csv")

@@ -13,6 +13,7 @@ mod reference;
 mod reference_pages;
 mod robust;
 mod rooms;
+mod saturation;
 mod sheets;
 mod units_factors;
 mod units_listing;
