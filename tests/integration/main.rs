@@ -2,6 +2,7 @@
 
 mod cli;
 mod corpus;
+mod laws;
 mod mutated;
 mod program;
 mod reference;
