@@ -13,6 +13,7 @@ use crate::report::{Report, TableValues, WorkedSheet, find_cautions, gather};
 use crate::source::Sources;
 use crate::span::FileId;
 use crate::study::sweep;
+use std::collections::BTreeSet;
 
 /// What came of a sheet.
 #[derive(Debug)]
@@ -36,13 +37,13 @@ fn checked(
     identity: &str,
     text: &str,
     loader: &dyn Loader,
-) -> (Sources, Vec<Diagnostic>, Option<Program>) {
+) -> (Sources, Vec<Diagnostic>, Option<(Program, Lowered)>) {
     let mut sources = Sources::new();
     let file = sources.add(name, text);
     let checked = check_sheet(&mut sources, file, identity, loader);
     let Some(program) = checked.program else { return (sources, checked.diagnostics, None) };
     match lower(&program) {
-        Ok(_) => (sources, checked.diagnostics, Some(program)),
+        Ok(lowered) => (sources, checked.diagnostics, Some((program, lowered))),
         Err((step, state)) => {
             let mut diagnostics = checked.diagnostics;
             diagnostics.push(circle(&program, step, state));
@@ -54,11 +55,8 @@ fn checked(
 
 /// Reads, checks and works a sheet. `report` is there when nothing is wrong.
 pub fn run(name: &str, identity: &str, text: &str, loader: &dyn Loader) -> Worked {
-    let (sources, mut diagnostics, program) = checked(name, identity, text, loader);
-    let Some((program, lowered)) = program.and_then(|program| {
-        let lowered = lower(&program).ok()?;
-        Some((program, lowered))
-    }) else {
+    let (sources, mut diagnostics, known) = checked(name, identity, text, loader);
+    let Some((program, lowered)) = known else {
         return Worked { sources, diagnostics, report: None };
     };
     let frame = evaluated(&program, &lowered, &mut diagnostics);
@@ -91,9 +89,10 @@ fn evaluated(program: &Program, lowered: &Lowered, diagnostics: &mut Vec<Diagnos
     let mut frame = Frame::<1>::new(&lowered.plan);
     eval::run(&lowered.plan, &mut frame);
     let needed = lowered.plan.needed(&required(program, &lowered.map));
+    let mut told = BTreeSet::new();
     for failure in frame.failures.iter().filter(|failure| needed.get(failure.op) == Some(&true)) {
         let found = explain(program, lowered, failure);
-        if !diagnostics.contains(&found) {
+        if told.insert((found.place(), found.code, found.message.clone())) {
             diagnostics.push(found);
         }
     }

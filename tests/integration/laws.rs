@@ -54,13 +54,15 @@ fn gas(cp: f64) -> String {
 fn work(text: &str) -> Report {
     let worked = run("law.heat", "", text, &NoFiles);
     let found: Vec<_> = worked.diagnostics.iter().map(|found| found.message.as_str()).collect();
-    worked.report.unwrap_or_else(|| panic!("refused: {found:?}\n{text}"))
+    assert!(worked.report.is_some(), "refused: {found:?}\n{text}");
+    worked.report.expect("there is one, as asserted")
 }
 
 /// A result in SI.
 fn value(report: &Report, name: &str) -> f64 {
     let row = report.results.iter().find(|row| row.name == name);
-    row.unwrap_or_else(|| panic!("no result `{name}`")).value.si
+    assert!(row.is_some(), "no result `{name}`");
+    row.map_or(f64::NAN, |row| row.value.si)
 }
 
 fn values<const N: usize>(report: &Report, names: [&str; N]) -> [f64; N] {
@@ -330,17 +332,20 @@ fn swept(input: &str, table: &str) -> String {
 fn a_row_of_a_table_is_a_run_with_its_input_bit_for_bit() {
     // 129 rows: two whole blocks of lanes and one more; 1.21875 K has an exact double, so the inputs are as written
     let columns = "Q in J, U in J, T in K, f, hot in K, W in J, log";
-    let report = work(&swept(
-        "800 K",
-        &format!("table \"all\": {columns} over x from 694 K to 850 K by 1.21875 K"),
-    ));
+    let report =
+        work(&swept("800 K", &format!("table \"all\": {columns} over x from 694 K to 850 K by 1.21875 K")));
     let table = &report.tables[0];
     assert_eq!(table.rows.len(), 129);
     for row in table.rows.iter().step_by(3) {
         let input = row[0].expect("an input");
         let single = work(&swept(&format!("{input} K"), ""));
         for (value, result) in row[1..].iter().zip(&single.results) {
-            assert_eq!(value.map(f64::to_bits), Some(result.value.si.to_bits()), "{} at {input} K", result.name);
+            assert_eq!(
+                value.map(f64::to_bits),
+                Some(result.value.si.to_bits()),
+                "{} at {input} K",
+                result.name
+            );
         }
     }
 }
