@@ -18,7 +18,7 @@ mod si;
 pub use composition::{Composition, CompositionError, Fault};
 pub use curve::{
     Allowance, CurveData, CurveError, Density, HeatingCurve, LawRange, Leg, LegKind, Link, LocateError,
-    MeltingFault, PhaseClass, PhaseData, PhaseShares, Pin, Place, Side,
+    Locator, MeltingFault, PhaseClass, PhaseData, PhaseShares, Pin, Place, Side,
 };
 pub use element::Element;
 pub use heat_capacity::{Basis, HeatCapacity, HeatCapacityError, MaierKelley};

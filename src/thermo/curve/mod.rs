@@ -30,7 +30,7 @@ pub(in crate::thermo) mod tests;
 pub use assemble::HeatingCurve;
 pub use data::{CurveData, Density, LawRange, Link, PhaseClass, PhaseData};
 pub use error::{CurveError, MeltingFault};
-pub use locate::LocateError;
+pub use locate::{LocateError, Locator};
 pub(super) use measure::Measure;
 pub use place::{Allowance, PhaseShares, Pin, Place, Side};
 pub use properties::Transition;
