@@ -14,6 +14,9 @@ pub(super) const CONSTANTS: &[(&str, &str)] = &[
     ("g_n", "the standard acceleration of free fall"),
 ];
 
+/// After so many findings no nearest name or unit is looked for: each search goes through all of them.
+const GUESSES: usize = 500;
+
 impl Checker<'_> {
     /// Notes every name that the sheet declares, so that one used too early is told from an unknown one.
     pub(super) fn look_ahead(&mut self, items: &[Item]) {
@@ -105,10 +108,11 @@ impl Checker<'_> {
         let found = Diagnostic::new(Code::UnknownName, format!("unknown name `{name}`"))
             .label(span, "nothing of this name is declared above");
         let known = self.names.keys().map(String::as_str).chain(CONSTANTS.iter().map(|(name, _)| *name));
-        if let Some(near) = nearest(name, known) {
+        let guess = self.diagnostics.len() < GUESSES;
+        if let Some(near) = guess.then(|| nearest(name, known)).flatten() {
             return found.help(format!("did you mean `{near}`?"));
         }
-        if read_unit(name).is_ok() {
+        if guess && read_unit(name).is_ok() {
             return found.help(format!("`{name}` is a unit and wants a number: `1 {name}`"));
         }
         found.help(format!("declare it above, such as `basis {name} = ...`"))

@@ -109,10 +109,6 @@ impl Checker<'_> {
                 return None;
             }
         };
-        let remarks = block.entries.iter().filter_map(|entry| match entry {
-            SpeciesEntry::Remark(text) => Some(text.text.clone()),
-            _ => None,
-        });
         Some(Species {
             name: block.name.text.clone(),
             label: block.label.as_ref().map(|label| label.text.clone()),
@@ -124,7 +120,7 @@ impl Checker<'_> {
             curve: std::sync::Arc::new(curve),
             data: draft.data,
             allowances: Vec::new(),
-            remarks: remarks.collect(),
+            remarks: remarks(block),
             from,
             span: block.name.span,
         })
@@ -603,4 +599,25 @@ fn fault_in_words(fault: Fault) -> &'static str {
         Fault::TooDeep => "brackets nested too deep",
         Fault::Count => "a count that is no positive number",
     }
+}
+
+/// The remarks of a block; lines that follow one another are one remark.
+fn remarks(block: &SpeciesBlock) -> Vec<String> {
+    let mut remarks: Vec<String> = Vec::new();
+    let mut goes_on = false;
+    for entry in &block.entries {
+        let SpeciesEntry::Remark(text) = entry else {
+            goes_on = false;
+            continue;
+        };
+        match remarks.last_mut().filter(|_| goes_on) {
+            Some(last) => {
+                last.push(' ');
+                last.push_str(&text.text);
+            }
+            None => remarks.push(text.text.clone()),
+        }
+        goes_on = true;
+    }
+    remarks
 }

@@ -14,21 +14,15 @@ pub(super) fn binary<const N: usize>(
     work: impl Fn(f64, f64) -> f64,
     fault: impl Fn(f64, f64) -> Fault,
 ) {
-    let (x, y) = (frame.slots[a.0 as usize], frame.slots[b.0 as usize]);
-    let mut out = [0.0; N];
+    let (x, y, out) = frame.two_to(a, b, to);
     let mut finite = true;
     for lane in 0..N {
-        out[lane] = work(x[lane], y[lane]);
-        finite &= out[lane].is_finite();
+        let value = work(x[lane], y[lane]);
+        finite &= value.is_finite();
+        out[lane] = value;
     }
-    frame.slots[to.0 as usize] = out;
     if !finite {
-        for lane in 0..N {
-            if !out[lane].is_finite() && x[lane].is_finite() && y[lane].is_finite() {
-                frame.slots[to.0 as usize][lane] = f64::NAN;
-                frame.fail(at, lane, fault(x[lane], y[lane]));
-            }
-        }
+        refuse(frame, at, [a, b], to, fault);
     }
 }
 
@@ -41,13 +35,25 @@ pub(super) fn unary<const N: usize>(
     work: impl Fn(f64) -> f64,
     fault: impl Fn(f64) -> Fault,
 ) {
-    let x = frame.slots[a.0 as usize];
-    for (lane, x) in x.into_iter().enumerate() {
-        let out = work(x);
-        frame.slots[to.0 as usize][lane] = out;
-        if !out.is_finite() && x.is_finite() {
-            frame.slots[to.0 as usize][lane] = f64::NAN;
-            frame.fail(at, lane, fault(x));
+    binary(frame, at, a, a, to, |x, _| work(x), |x, _| fault(x));
+}
+
+/// The lanes in which numbers gave no number: each is a fault and holds NaN.
+#[cold]
+#[inline(never)]
+fn refuse<const N: usize>(
+    frame: &mut Frame<N>,
+    at: usize,
+    [a, b]: [Slot; 2],
+    to: Slot,
+    fault: impl Fn(f64, f64) -> Fault,
+) {
+    for lane in 0..N {
+        let (x, y, out) = frame.two_to(a, b, to);
+        if !out[lane].is_finite() && x[lane].is_finite() && y[lane].is_finite() {
+            out[lane] = f64::NAN;
+            let fault = fault(x[lane], y[lane]);
+            frame.fail(at, lane, fault);
         }
     }
 }
@@ -127,25 +133,48 @@ pub(super) fn known<const N: usize>(frame: &mut Frame<N>, value: Slot, given: Sl
         std::array::from_fn(|lane| if given[lane].is_nan() { f64::NAN } else { value[lane] });
 }
 
+#[inline]
 pub(super) fn guard<const N: usize>(
     frame: &mut Frame<N>,
     at: usize,
     check: Check,
-    read: [Slot; 3],
+    [a, b, value]: [Slot; 3],
     to: Slot,
 ) {
-    let [a, b, value] = read.map(|slot| frame.slots[slot.0 as usize]);
+    let value = frame.slots[value.0 as usize];
+    let (x, y, out) = frame.two_to(a, b, to);
+    let mut all = true;
     for lane in 0..N {
-        let (x, y) = (a[lane], b[lane]);
-        let silent = x.is_nan() || y.is_nan();
-        let holds = silent || holds(check, x, y);
-        frame.slots[to.0 as usize][lane] = if holds && !silent { value[lane] } else { f64::NAN };
-        if !holds {
-            frame.fail(at, lane, Fault::Check { check, a: x, b: y });
+        let good = holds(check, x[lane], y[lane]);
+        all &= good;
+        out[lane] = if good { value[lane] } else { f64::NAN };
+    }
+    if !all {
+        refuse_unguarded(frame, at, check, [a, b], to);
+    }
+}
+
+/// The lanes in which a check on numbers does not hold.
+#[cold]
+#[inline(never)]
+fn refuse_unguarded<const N: usize>(
+    frame: &mut Frame<N>,
+    at: usize,
+    check: Check,
+    [a, b]: [Slot; 2],
+    to: Slot,
+) {
+    for lane in 0..N {
+        let (x, y, _) = frame.two_to(a, b, to);
+        let (a, b) = (x[lane], y[lane]);
+        if !(a.is_nan() || b.is_nan() || holds(check, a, b)) {
+            frame.fail(at, lane, Fault::Check { check, a, b });
         }
     }
 }
 
+/// Whether a check holds; of NaN it does not.
+#[inline]
 fn holds(check: Check, a: f64, b: f64) -> bool {
     let near = |tolerance: f64| (a - b).abs() <= tolerance * greater(a.abs(), b.abs());
     match check {

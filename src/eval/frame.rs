@@ -100,6 +100,13 @@ impl<const N: usize> Frame<N> {
         self.places.get(slot.0 as usize).copied().unwrap_or([None; N])
     }
 
+    /// Two slots to read and the one to write, which a Plan numbers after what it is made from.
+    #[inline]
+    pub(super) fn two_to(&mut self, a: Slot, b: Slot, to: Slot) -> (&[f64; N], &[f64; N], &mut [f64; N]) {
+        let (known, open) = self.slots.split_at_mut(to.0 as usize);
+        (&known[a.0 as usize], &known[b.0 as usize], &mut open[0])
+    }
+
     /// A frame whose lanes all hold what lane 0 of another holds.
     pub fn spread<const M: usize>(other: &Frame<M>) -> Self {
         Frame {

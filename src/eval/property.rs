@@ -1,8 +1,9 @@
 //! Places on heating curves and what they tell.
 
-use super::frame::{Fault, Frame};
+use super::frame::{Failure, Fault, Frame};
 use crate::plan::{Material, PhaseSet, PlaceSlot, Plan, Slot};
-use crate::thermo::{LocateError, PhaseClass, Place, Side};
+use crate::thermo::constants::STANDARD_ATMOSPHERE;
+use crate::thermo::{HeatingCurve, LocateError, PhaseClass, Place, Side};
 use crate::units::quantity;
 
 /// The material of an operation; a Plan names only materials it holds.
@@ -10,6 +11,7 @@ fn material(plan: &Plan, at: u32) -> &Material {
     &plan.materials[at as usize]
 }
 
+#[inline]
 pub(super) fn locate<const N: usize>(
     plan: &Plan,
     frame: &mut Frame<N>,
@@ -20,30 +22,46 @@ pub(super) fn locate<const N: usize>(
     to: PlaceSlot,
 ) {
     let material = material(plan, which);
+    let plain = if side.is_none() { material.curve.locator(material.pin, &material.allowance) } else { None };
+    let (kelvin, pascal) = (&frame.slots[t.0 as usize], &frame.slots[p.0 as usize]);
+    let places = &mut frame.places[to.0 as usize];
+    let mut all = true;
+    for lane in 0..N {
+        places[lane] = match plain {
+            Some(plain) if !pascal[lane].is_nan() => plain.place(kelvin[lane], pascal[lane]),
+            _ => None,
+        };
+        all &= places[lane].is_some();
+    }
+    if !all {
+        locate_others(frame, at, material, [t, p], side, to);
+    }
+}
+
+/// The lanes in which no place is plain: those with a side said, near a transition, outside the data.
+#[inline(never)]
+fn locate_others<const N: usize>(
+    frame: &mut Frame<N>,
+    at: usize,
+    material: &Material,
+    [t, p]: [Slot; 2],
+    side: Option<(u32, Slot)>,
+    to: PlaceSlot,
+) {
     let (t, p) = (frame.get(t), frame.get(p));
     let share = side.map(|(phase, slot)| (phase as usize, frame.get(slot)));
     for lane in 0..N {
         let side = share.map(|(phase, shares)| Side { phase, share: shares[lane] });
         let silent = t[lane].is_nan() || p[lane].is_nan() || side.is_some_and(|side| side.share.is_nan());
-        let place = if silent {
-            None
-        } else {
-            let (kelvin, pascal) = (t[lane], p[lane]);
-            match material.curve.locate(
-                quantity(kelvin),
-                quantity(pascal),
-                material.pin,
-                side,
-                &material.allowance,
-            ) {
-                Ok(place) => Some(place),
-                Err(error) => {
-                    frame.fail(at, lane, Fault::Locate { error, kelvin, pascal });
-                    None
-                }
-            }
-        };
-        frame.places[to.0 as usize][lane] = place;
+        if silent || frame.places[to.0 as usize][lane].is_some() {
+            continue;
+        }
+        let (kelvin, pascal) = (t[lane], p[lane]);
+        let (pin, allowance) = (material.pin, &material.allowance);
+        match material.curve.locate(quantity(kelvin), quantity(pascal), pin, side, allowance) {
+            Ok(place) => frame.places[to.0 as usize][lane] = Some(place),
+            Err(error) => frame.fail(at, lane, Fault::Locate { error, kelvin, pascal }),
+        }
     }
 }
 
@@ -89,16 +107,27 @@ fn each<const N: usize>(
     fault: Option<(usize, Fault)>,
     tell: impl Fn(Place, usize) -> Option<f64>,
 ) {
-    let places = frame.places[place.0 as usize];
-    for (lane, place) in places.into_iter().enumerate() {
+    let places = &frame.places[place.0 as usize];
+    let out = &mut frame.slots[to.0 as usize];
+    for (lane, place) in places.iter().enumerate() {
         let value = place.map(|place| tell(place, lane));
-        frame.slots[to.0 as usize][lane] = value.flatten().unwrap_or(f64::NAN);
+        out[lane] = value.flatten().unwrap_or(f64::NAN);
         if let (Some(None), Some((at, fault))) = (value, fault) {
-            frame.fail(at, lane, fault);
+            frame.failures.push(Failure { op: at, lane, fault });
         }
     }
 }
 
+/// What a pressure adds to the enthalpy of condensed matter, J/kg: nothing at 101.325 kPa or without a density.
+#[inline]
+fn pressure_enthalpy(curve: &HeatingCurve, place: Place, pascal: f64) -> f64 {
+    if pascal == STANDARD_ATMOSPHERE {
+        return 0.0;
+    }
+    curve.condensed_pressure_enthalpy(place, quantity(pascal)).map_or(0.0, |part| part.value)
+}
+
+#[inline]
 pub(super) fn enthalpy<const N: usize>(
     plan: &Plan,
     frame: &mut Frame<N>,
@@ -108,11 +137,15 @@ pub(super) fn enthalpy<const N: usize>(
     to: Slot,
 ) {
     let curve = &material(plan, which).curve;
-    let p = frame.slots[p.0 as usize];
-    each(frame, place, to, None, |place, lane| {
-        let pressure_part = curve.condensed_pressure_enthalpy(place, quantity(p[lane]));
-        Some(curve.enthalpy(place).value + pressure_part.map_or(0.0, |part| part.value))
-    });
+    let places = &frame.places[place.0 as usize];
+    let (known, open) = frame.slots.split_at_mut(to.0 as usize);
+    let (p, out) = (&known[p.0 as usize], &mut open[0]);
+    for lane in 0..N {
+        out[lane] = match places[lane] {
+            Some(place) => curve.enthalpy(place).value + pressure_enthalpy(curve, place, p[lane]),
+            None => f64::NAN,
+        };
+    }
 }
 
 pub(super) fn internal_energy<const N: usize>(
@@ -201,9 +234,7 @@ pub(super) fn pressure_part<const N: usize>(
 ) {
     let curve = &material(plan, which).curve;
     let p = frame.slots[p.0 as usize];
-    each(frame, place, to, None, |place, lane| {
-        Some(curve.condensed_pressure_enthalpy(place, quantity(p[lane])).map_or(0.0, |part| part.value))
-    });
+    each(frame, place, to, None, |place, lane| Some(pressure_enthalpy(curve, place, p[lane])));
 }
 
 pub(super) fn heat_capacity<const N: usize>(

@@ -11,7 +11,7 @@ pub fn run<const N: usize>(plan: &Plan, frame: &mut Frame<N>) {
     }
 }
 
-#[inline]
+#[inline(always)]
 fn step<const N: usize>(plan: &Plan, frame: &mut Frame<N>, at: usize, op: &Op) {
     match *op {
         Op::Add { a, b, to } => arithmetic::binary(frame, at, a, b, to, |a, b| a + b, overflow),

@@ -4,8 +4,9 @@
 //! the [`SlotMap`] that says which slot holds what. A sheet is lowered once and evaluated as often as there are points.
 //! Every operation carries the index of its origin, through which a failure finds its place in the sheet again.
 //!
-//! Guaranteed: an operation reads only slots that an earlier one has written, or inputs; whatever can fail passes its
-//! value through a guard, so that a Plan pruned to some outputs still guards them.
+//! Guaranteed: an operation reads only slots that an earlier one has written, or inputs, and all of them have lower
+//! numbers than the slot it writes; whatever can fail passes its value through a guard, so that a Plan pruned to some
+//! outputs still guards them.
 
 mod lower;
 mod op;

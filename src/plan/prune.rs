@@ -105,12 +105,29 @@ impl Plan {
     /// The operations that these outputs need, in order, as a Plan with the same slots.
     #[must_use]
     pub fn pruned(&self, outputs: &[Slot]) -> Plan {
-        let kept = self.needed(outputs);
-        let keep = |at: usize| kept[at];
+        let needed = self.needed(outputs);
+        let numbers: Vec<usize> = (0..self.ops.len()).filter(|at| needed[*at]).collect();
+        self.part(&numbers)
+    }
+
+    /// The operations that lead from these inputs to these outputs: what a sweep over the inputs has to repeat. A Plan
+    /// with the same slots, and the numbers that its operations have in this one.
+    #[must_use]
+    pub fn between(&self, inputs: &[Slot], outputs: &[Slot]) -> (Plan, Vec<usize>) {
+        let (needed, varies) = (self.needed(outputs), self.varying(inputs));
+        let numbers: Vec<usize> = (0..self.ops.len()).filter(|at| needed[*at] && varies[*at]).collect();
+        (self.part(&numbers), numbers)
+    }
+
+    fn part(&self, numbers: &[usize]) -> Plan {
         Plan {
-            ops: (0..self.ops.len()).filter(|at| keep(*at)).map(|at| self.ops[at]).collect(),
-            origins: (0..self.ops.len()).filter(|at| keep(*at)).map(|at| self.origins[at]).collect(),
-            ..self.clone()
+            ops: numbers.iter().map(|at| self.ops[*at]).collect(),
+            origins: numbers.iter().map(|at| self.origins[*at]).collect(),
+            slots: self.slots,
+            places: self.places,
+            start: self.start.clone(),
+            materials: self.materials.clone(),
+            parts: self.parts.clone(),
         }
     }
 
@@ -136,23 +153,8 @@ impl Plan {
         kept
     }
 
-    /// The numbers that the operations of a part of this Plan have in it.
-    pub fn numbers_of(&self, part: &Plan) -> Vec<usize> {
-        let mut from = 0;
-        part.ops
-            .iter()
-            .filter_map(|op| {
-                let at = from + self.ops.get(from..)?.iter().position(|known| known == op)?;
-                from = at + 1;
-                Some(at)
-            })
-            .collect()
-    }
-
-    /// The operations on which these inputs have no bearing, evaluated beforehand, and the rest: what a sweep over the
-    /// inputs has to repeat.
-    #[must_use]
-    pub fn split(&self, inputs: &[Slot]) -> (Plan, Plan) {
+    /// Which operations these inputs have a bearing on.
+    fn varying(&self, inputs: &[Slot]) -> Vec<bool> {
         let mut slots = vec![false; self.slots as usize];
         let mut places = vec![false; self.places as usize];
         for input in inputs {
@@ -160,12 +162,11 @@ impl Plan {
         }
         let mut varies = Vec::with_capacity(self.ops.len());
         for op in &self.ops {
-            let mut touched = false;
-            let mut touched_place = false;
+            let (mut touched, mut placed) = (false, false);
             reads(op, self, &mut |slot| touched |= slots[slot.0 as usize], &mut |place| {
-                touched_place |= places[place as usize]
+                placed |= places[place as usize]
             });
-            let varying = touched || touched_place;
+            let varying = touched || placed;
             if varying {
                 let (first, second, place) = writes(op);
                 first.into_iter().chain(second).for_each(|slot| slots[slot.0 as usize] = true);
@@ -173,23 +174,6 @@ impl Plan {
             }
             varies.push(varying);
         }
-        let part = |wanted: bool| Plan {
-            ops: self
-                .ops
-                .iter()
-                .zip(&varies)
-                .filter(|(_, varies)| **varies == wanted)
-                .map(|(op, _)| *op)
-                .collect(),
-            origins: self
-                .origins
-                .iter()
-                .zip(&varies)
-                .filter(|(_, varies)| **varies == wanted)
-                .map(|(at, _)| *at)
-                .collect(),
-            ..self.clone()
-        };
-        (part(false), part(true))
+        varies
     }
 }

@@ -115,10 +115,12 @@ impl State {
 
     /// The expressions of its amounts and conditions.
     pub fn expressions(&self) -> impl Iterator<Item = &Expr> {
-        let said = |condition| match condition {
-            &Condition::Value(ref value) => Some(value),
-            _ => None,
-        };
+        fn said(condition: &Condition) -> Option<&Expr> {
+            match condition {
+                Condition::Value(value) => Some(value),
+                _ => None,
+            }
+        }
         let conditions =
             [said(&self.temperature), said(&self.pressure), self.share.as_ref().map(|(_, share)| share)];
         let mut amounts = Vec::new();

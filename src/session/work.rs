@@ -11,9 +11,10 @@ use crate::plan::{Lowered, lower};
 use crate::program::{Node, Program, Quantity};
 use crate::report::{Report, TableValues, WorkedSheet, find_cautions, gather};
 use crate::source::Sources;
-use crate::span::FileId;
+use crate::span::{FileId, Span};
 use crate::study::sweep;
 use crate::units::Zero;
+use std::collections::BTreeSet;
 
 /// What came of a sheet.
 #[derive(Debug)]
@@ -37,13 +38,13 @@ fn checked(
     identity: &str,
     text: &str,
     loader: &dyn Loader,
-) -> (Sources, Vec<Diagnostic>, Option<Program>) {
+) -> (Sources, Vec<Diagnostic>, Option<(Program, Lowered)>) {
     let mut sources = Sources::new();
     let file = sources.add(name, text);
     let checked = check_sheet(&mut sources, file, identity, loader);
     let Some(program) = checked.program else { return (sources, checked.diagnostics, None) };
     match lower(&program) {
-        Ok(_) => (sources, checked.diagnostics, Some(program)),
+        Ok(lowered) => (sources, checked.diagnostics, Some((program, lowered))),
         Err((step, state)) => {
             let mut diagnostics = checked.diagnostics;
             diagnostics.push(circle(&program, step, state));
@@ -55,11 +56,8 @@ fn checked(
 
 /// Reads, checks and works a sheet. `report` is there when nothing is wrong.
 pub fn run(name: &str, identity: &str, text: &str, loader: &dyn Loader) -> Worked {
-    let (sources, mut diagnostics, program) = checked(name, identity, text, loader);
-    let Some((program, lowered)) = program.and_then(|program| {
-        let lowered = lower(&program).ok()?;
-        Some((program, lowered))
-    }) else {
+    let (sources, mut diagnostics, known) = checked(name, identity, text, loader);
+    let Some((program, lowered)) = known else {
         return Worked { sources, diagnostics, report: None };
     };
     let frame = evaluated(&program, &lowered, &mut diagnostics);
@@ -97,9 +95,10 @@ fn evaluated(program: &Program, lowered: &Lowered, diagnostics: &mut Vec<Diagnos
     let mut frame = Frame::<1>::new(&lowered.plan);
     eval::run(&lowered.plan, &mut frame);
     let needed = lowered.plan.needed(&required(program, &lowered.map));
+    let mut told = BTreeSet::new();
     for failure in frame.failures.iter().filter(|failure| needed.get(failure.op) == Some(&true)) {
         let found = explain(program, lowered, failure);
-        if !diagnostics.iter().any(|known| says_the_same(known, &found)) {
+        if told.insert(what_it_tells(&found)) {
             diagnostics.push(found);
         }
     }
@@ -133,10 +132,10 @@ fn below_zero(quantity: &Quantity, si: f64) -> Option<Diagnostic> {
     )
 }
 
-/// Whether a finding tells nothing new: a step between three pressures has one mistake, not two.
-fn says_the_same(known: &Diagnostic, found: &Diagnostic) -> bool {
+/// What tells a finding from the others: a step between three pressures has one mistake, not two.
+fn what_it_tells(found: &Diagnostic) -> (Option<Span>, Code, String) {
     let once = matches!(found.code, Code::PressuresDiffer | Code::TemperaturesDiffer);
-    known == found || (once && known.code == found.code && known.place() == found.place())
+    (found.place(), found.code, if once { String::new() } else { found.message.clone() })
 }
 
 fn tables(

@@ -41,13 +41,13 @@ pub fn sweep(plan: &Plan, base: &Frame<1>, table: &TableSlots) -> Result<Sweep, 
     }
     #[allow(clippy::cast_possible_truncation, clippy::cast_sign_loss)] // from 1 to 1000000, as tested
     let count = count as usize;
-    let needed = plan.pruned(&table.columns);
-    let (_, varying) = needed.split(&[table.over]);
-    let numbers = plan.numbers_of(&varying);
+    let (varying, numbers) = plan.between(&[table.over], &table.columns);
     let mut sweep = Sweep { rows: Vec::with_capacity(count), refused: Vec::new() };
+    // every operation that varies writes its slot anew in every block
+    let mut frame = Frame::<LANES>::spread(base);
     let mut start = 0;
     while start < count {
-        let mut frame = Frame::<LANES>::spread(base);
+        frame.failures.clear();
         #[allow(clippy::cast_precision_loss)] // at most 1000000
         let at = |lane: usize| from + by * ((start + lane).min(count - 1) as f64);
         let inputs: [f64; LANES] = std::array::from_fn(at);

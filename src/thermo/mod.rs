@@ -19,7 +19,7 @@ pub mod vapour_pressure;
 pub use composition::{Composition, CompositionError, Fault};
 pub use curve::{
     Allowance, CurveData, CurveError, Density, HeatingCurve, LawRange, Leg, LegKind, Link, LocateError,
-    MeltingFault, PhaseClass, PhaseData, PhaseShares, Pin, Place, SaturationFault, Side,
+    Locator, MeltingFault, PhaseClass, PhaseData, PhaseShares, Pin, Place, SaturationFault, Side,
 };
 pub use element::Element;
 pub use heat_capacity::{Basis, HeatCapacity, HeatCapacityError, MaierKelley};

@@ -4,6 +4,7 @@ mod blocks;
 mod cli;
 mod corpus;
 mod examples;
+mod laws;
 mod library;
 mod library_values;
 mod mutated;

@@ -4,9 +4,9 @@ use super::Lowered;
 use crate::plan::{
     Material, Op, Origin, OriginKind, Part, PartRange, PlaceSlot, Plan, Slot, SlotMap, StateSlots, StepSlots,
 };
-use crate::program::{Constituent, Entry, Program, StateId, StepId};
+use crate::program::{Constituent, Entry, Program, Settles, SpeciesId, StateId, StepId, Unknown};
 use crate::span::Span;
-use crate::thermo::Allowance;
+use crate::thermo::{Allowance, Pin};
 use crate::units::quantity;
 use std::collections::BTreeMap;
 
@@ -37,8 +37,8 @@ pub(super) struct Builder<'p> {
     pub(super) plan: Plan,
     pub(super) map: SlotMap,
     origin: u32,
-    constants: BTreeMap<u64, Slot>,
-    materials: Vec<(Constituent, u32)>,
+    pub(super) constants: BTreeMap<u64, Slot>,
+    materials: BTreeMap<SpeciesId, Vec<(Pin, u32)>>,
     pub(super) temperatures: BTreeMap<StateId, Temperature>,
     pub(super) pressures: BTreeMap<StateId, Slot>,
     pub(super) masses: BTreeMap<StateId, Vec<Slot>>,
@@ -47,8 +47,10 @@ pub(super) struct Builder<'p> {
     /// Of settled temperatures the share of the upper phase.
     pub(super) shares: BTreeMap<StateId, Slot>,
     pub(super) steps: BTreeMap<StepId, StepSlots>,
+    /// Of each unknown the first step that settles it.
+    pub(super) settling: BTreeMap<(StateId, Unknown), (StepId, Settles)>,
     /// The unknowns being settled, to see a circle.
-    pub(super) waiting: Vec<(StateId, crate::program::Unknown)>,
+    pub(super) waiting: Vec<(StateId, Unknown)>,
     /// Slots of quantities, filled in order.
     pub(super) quantities: BTreeMap<usize, Slot>,
     pub(super) duties: BTreeMap<usize, crate::plan::DutySlots>,
@@ -62,7 +64,7 @@ impl<'p> Builder<'p> {
             map: SlotMap::default(),
             origin: 0,
             constants: BTreeMap::new(),
-            materials: Vec::new(),
+            materials: BTreeMap::new(),
             temperatures: BTreeMap::new(),
             pressures: BTreeMap::new(),
             masses: BTreeMap::new(),
@@ -70,6 +72,7 @@ impl<'p> Builder<'p> {
             sums: BTreeMap::new(),
             shares: BTreeMap::new(),
             steps: BTreeMap::new(),
+            settling: settling(program),
             waiting: Vec::new(),
             quantities: BTreeMap::new(),
             duties: BTreeMap::new(),
@@ -189,10 +192,12 @@ impl<'p> Builder<'p> {
 
     /// The Plan's material of a constituent.
     pub(super) fn material(&mut self, constituent: &Constituent) -> u32 {
-        if let Some((_, at)) = self.materials.iter().find(|(known, _)| known == constituent) {
+        let known = self.materials.entry(constituent.species).or_default();
+        if let Some((_, at)) = known.iter().find(|(pin, _)| *pin == constituent.pin) {
             return *at;
         }
         let at = u32::try_from(self.plan.materials.len()).unwrap_or(u32::MAX);
+        known.push((constituent.pin, at));
         if let Some(species) = self.program.species.get(constituent.species.0) {
             let allowance = species.allowances.iter().fold(Allowance::default(), |allowance, entry| {
                 let span = species.curve.phase_span(entry.phase);
@@ -203,7 +208,6 @@ impl<'p> Builder<'p> {
             let curve = std::sync::Arc::clone(&species.curve);
             self.plan.materials.push(Material { curve, pin: constituent.pin, allowance });
         }
-        self.materials.push((*constituent, at));
         at
     }
 
@@ -223,4 +227,15 @@ impl<'p> Builder<'p> {
     pub(super) fn constituents(&self, id: StateId) -> Vec<Constituent> {
         self.program.states.get(id.0).map(|state| state.constituents.clone()).unwrap_or_default()
     }
+}
+
+/// Of each unknown the first step that settles it, and how.
+fn settling(program: &Program) -> BTreeMap<(StateId, Unknown), (StepId, Settles)> {
+    let mut found = BTreeMap::new();
+    for (at, step) in program.steps.iter().enumerate() {
+        for settles in &step.settles {
+            found.entry((settles.state, settles.unknown)).or_insert((StepId(at), *settles));
+        }
+    }
+    found
 }

@@ -3,7 +3,7 @@
 use super::builder::{Builder, Lowering};
 use super::state::Total;
 use crate::plan::{Check, Op, OriginKind, PartRange, Settle, Slot};
-use crate::program::{Condition, Heat, Law, Settles, StateId, Step, StepId, Unknown};
+use crate::program::{Condition, Heat, Law, Settles, StateId, Step, Unknown};
 
 /// Enthalpy for a flow and at constant pressure, internal energy in a closed volume.
 #[derive(Clone, Copy, PartialEq)]
@@ -32,12 +32,9 @@ impl Builder<'_> {
     /// The slot of an unknown, by the step that settles it.
     pub(super) fn settled(&mut self, id: StateId, unknown: Unknown) -> Lowering<Slot> {
         let program = self.program;
-        let by = program.steps.iter().enumerate().find_map(|(at, step)| {
-            let settles =
-                step.settles.iter().find(|settles| settles.state == id && settles.unknown == unknown)?;
-            Some((StepId(at), step, *settles))
-        });
-        let Some((step_id, step, settles)) = by else { return Ok(self.constant(f64::NAN)) };
+        let by = self.settling.get(&(id, unknown)).copied();
+        let step = by.and_then(|(step_id, _)| program.steps.get(step_id.0));
+        let (Some((step_id, settles)), Some(step)) = (by, step) else { return Ok(self.constant(f64::NAN)) };
         if self.waiting.contains(&(id, unknown)) {
             return Err((step_id, id));
         }

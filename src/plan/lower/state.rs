@@ -284,14 +284,10 @@ impl Builder<'_> {
             });
         }
         let total = self.total(&terms);
-        if quantum == Quantum::Mass && self.is_one(total) {
+        if quantum == Quantum::Mass && self.constants.get(&1.0_f64.to_bits()) == Some(&total) {
             return Ok(amount);
         }
         Ok(self.divide(amount, total))
-    }
-
-    fn is_one(&self, slot: Slot) -> bool {
-        self.plan.start.iter().any(|(known, value)| *known == slot && *value == 1.0)
     }
 
     fn specific_volume(&mut self, id: StateId, at: usize) -> Lowering<Slot> {

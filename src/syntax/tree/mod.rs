@@ -4,19 +4,23 @@
 //! written. No name is resolved, no unit read, no dimension known.
 
 mod expression;
+mod process;
 mod quantity;
 mod species;
 mod statement;
 
 pub use expression::{Expression, ExpressionKind, Factor, Subject};
+pub use process::{
+    Clause, ClauseKind, Condition, ConditionKind, Conversion, Duty, DutyClause, Matter, MatterKind, Part,
+    State, Step,
+};
 pub use quantity::{Datum, Interval, IntervalMark, Literal, Spread, Suffixes, Text, UnitText, Word};
 pub use species::{
     Coefficient, CoefficientForm, HeatCapacityEntry, LawText, PhaseBlock, PhaseEntry, Row, SpeciesBlock,
     SpeciesEntry, SpeciesName, TransitionEntry, TransitionKind, TransitionPlace, VapourPressure,
 };
 pub use statement::{
-    Allow, Balance, BalanceEntry, Clause, ClauseKind, Column, Comparison, Condition, ConditionKind,
-    Conversion, Correlate, Duty, DutyClause, Head, Input, InputRole, InputValue, Item, Matter, MatterKind,
-    Mixture, Part, Participant, Portion, PortionShare, Reaction, Require, Requirement, ResultLine, Settle,
-    Sought, State, Statement, Step, Table, Tree, Use, UseFrom,
+    Allow, Balance, BalanceEntry, Column, Comparison, Correlate, Head, Input, InputRole, InputValue, Item,
+    Mixture, Participant, Portion, PortionShare, Reaction, Require, Requirement, ResultLine, Settle, Sought,
+    Statement, Table, Tree, Use, UseFrom,
 };

@@ -64,30 +64,19 @@ impl HeatingCurve {
         let t = temperature.value;
         let track = self.track(pin).ok_or(LocateError::NoSuchPhase)?;
         if side.is_none()
-            && let Some(place) = self.plain_place(track, t, pressure.value, allowance)
+            && let Some(place) = self.locator(pin, allowance).and_then(|plain| plain.place(t, pressure.value))
         {
             return Ok(place);
         }
         self.locate_on(track, t, pressure.value, side, allowance)
     }
 
-    /// The common case: nothing is stretched, nothing decomposes, pressure does not matter and no transition
-    /// is near. None where any of this may not hold.
+    /// What finds the plain places of a pin, one temperature after another; none where nothing is plain: the phase
+    /// is not there, data are stretched or the species decomposes.
     #[inline]
-    fn plain_place(&self, track: &Track, t: f64, pressure: f64, allowance: &Allowance) -> Option<Place> {
-        let plain = allowance.is_none() && !track.decomposes && track.boils_at(pressure);
-        if !plain || track.points.iter().any(|(at, _)| (t - at).abs() <= TRANSITION_BAND) {
-            return None;
-        }
-        let inside = |piece: &&Piece| t < piece.hi;
-        let piece = track.pieces.iter().find(inside).or(track.pieces.last().filter(|piece| t == piece.hi))?;
-        let share = if piece.melting { self.melting_share(piece.segment, t) } else { 0.0 };
-        (t >= piece.lo).then_some(Place {
-            segment: piece.segment,
-            temperature: t,
-            share,
-            extrapolated: false,
-        })
+    pub fn locator(&self, pin: Pin, allowance: &Allowance) -> Option<Locator<'_>> {
+        let track = self.track(pin)?;
+        (allowance.is_none() && !track.decomposes).then_some(Locator { curve: self, track })
     }
 
     #[cold]
@@ -262,6 +251,34 @@ impl HeatingCurve {
             Some((Body::Melting { melting, .. }, lo)) => melting.share_at(t - lo).clamp(0.0, 1.0),
             _ => 0.0,
         }
+    }
+}
+
+/// A curve and one of its tracks, to find places in a row.
+#[derive(Debug, Clone, Copy)]
+pub struct Locator<'a> {
+    curve: &'a HeatingCurve,
+    track: &'a Track,
+}
+
+impl Locator<'_> {
+    /// The place at `t` in K and `pressure` in Pa, as [`HeatingCurve::locate`] gives it without a side. None where the
+    /// pressure matters, where a transition is near and outside the data: there `locate` has to say more.
+    #[inline]
+    pub fn place(self, t: f64, pressure: f64) -> Option<Place> {
+        let track = self.track;
+        if !track.boils_at(pressure) || track.points.iter().any(|(at, _)| (t - at).abs() <= TRANSITION_BAND) {
+            return None;
+        }
+        let inside = |piece: &&Piece| t < piece.hi;
+        let piece = track.pieces.iter().find(inside).or(track.pieces.last().filter(|piece| t == piece.hi))?;
+        let share = if piece.melting { self.curve.melting_share(piece.segment, t) } else { 0.0 };
+        (t >= piece.lo).then_some(Place {
+            segment: piece.segment,
+            temperature: t,
+            share,
+            extrapolated: false,
+        })
     }
 }
 

@@ -35,7 +35,7 @@ pub use assemble::HeatingCurve;
 pub use boiling::SaturationFault;
 pub use data::{CurveData, Density, LawRange, Link, PhaseClass, PhaseData};
 pub use error::{CurveError, MeltingFault};
-pub use locate::LocateError;
+pub use locate::{LocateError, Locator};
 pub(super) use measure::Measure;
 pub use place::{Allowance, PhaseShares, Pin, Place, Side};
 pub use properties::Transition;

@@ -1,64 +1,10 @@
-//! The cutter: a text into statements, before anything is parsed.
-//!
-//! It makes a copy of the text in which comments and continued line ends are blanks, of the same length, and
-//! ranges into that copy: a piece for each statement, with the pieces inside it where it opens a block. A piece
-//! that cannot be cut cleanly is reported and kept only by the names it would have declared.
+//! The cutter at work, line by line.
 
-use super::words::{self, STATEMENTS};
+use super::piece::{Cut, DEPTH_LIMIT, LENGTH_LIMIT, Piece};
 use crate::diagnostic::{Code, Diagnostic};
 use crate::span::{FileId, Span};
+use crate::syntax::words::{self, STATEMENTS};
 use std::ops::Range;
-
-/// How deep brackets may nest.
-pub(crate) const DEPTH_LIMIT: usize = 64;
-/// How long a joined statement may be, in bytes.
-pub(crate) const LENGTH_LIMIT: usize = 64 * 1024;
-
-/// A statement or an entry.
-#[derive(Debug)]
-pub(super) struct Piece {
-    /// From its first to its last character; of a block, its opening line.
-    pub(super) range: Range<usize>,
-    /// The pieces of its block.
-    pub(super) block: Option<Vec<Piece>>,
-    /// Whether it is a remark.
-    pub(super) remark: bool,
-    /// Whether it, or something inside, was already reported and must not be parsed.
-    pub(super) broken: bool,
-}
-
-/// The cut text.
-pub(super) struct Cut {
-    /// The text with comments and continued line ends blanked; the same length.
-    pub(super) text: String,
-    /// The pieces in order.
-    pub(super) pieces: Vec<Piece>,
-    /// What could not be cut.
-    pub(super) diagnostics: Vec<Diagnostic>,
-}
-
-/// Cuts a text.
-pub(super) fn cut(file: FileId, text: &str) -> Cut {
-    let mut cutter = Cutter {
-        file,
-        source: text.as_bytes(),
-        out: text.as_bytes().to_vec(),
-        pieces: Vec::new(),
-        blocks: Vec::new(),
-        brackets: Vec::new(),
-        entry: None,
-        diagnostics: Vec::new(),
-    };
-    let mut start = 0;
-    while start < text.len() {
-        let end = text[start..].find('\n').map_or(text.len(), |at| start + at);
-        cutter.line(start, end);
-        start = end + 1;
-    }
-    cutter.finish();
-    let text = String::from_utf8(cutter.out).expect("only whole characters are blanked");
-    Cut { text, pieces: cutter.pieces, diagnostics: cutter.diagnostics }
-}
 
 /// A block that is open: its opening line, the brace, and what it holds so far.
 struct Block {
@@ -69,25 +15,40 @@ struct Block {
 }
 
 /// The entry being gathered.
-struct Entry {
+pub(super) struct Entry {
     start: usize,
     end: usize,
-    broken: bool,
+    pub(super) broken: bool,
 }
 
-struct Cutter<'a> {
+pub(super) struct Cutter<'a> {
     file: FileId,
-    source: &'a [u8],
+    pub(super) source: &'a [u8],
     out: Vec<u8>,
     pieces: Vec<Piece>,
     blocks: Vec<Block>,
     brackets: Vec<usize>,
-    entry: Option<Entry>,
-    diagnostics: Vec<Diagnostic>,
+    pub(super) entry: Option<Entry>,
+    pub(super) diagnostics: Vec<Diagnostic>,
+}
+
+impl<'a> Cutter<'a> {
+    pub(super) fn new(file: FileId, text: &'a str) -> Self {
+        Cutter {
+            file,
+            source: text.as_bytes(),
+            out: text.as_bytes().to_vec(),
+            pieces: Vec::new(),
+            blocks: Vec::new(),
+            brackets: Vec::new(),
+            entry: None,
+            diagnostics: Vec::new(),
+        }
+    }
 }
 
 impl Cutter<'_> {
-    fn line(&mut self, start: usize, end: usize) {
+    pub(super) fn line(&mut self, start: usize, end: usize) {
         let Some(first) = (start..end).find(|&at| !self.source[at].is_ascii_whitespace()) else {
             self.blank(start..(end + 1).min(self.source.len()), self.entry.is_some());
             return;
@@ -114,11 +75,7 @@ impl Cutter<'_> {
         }
         if starts_statement(&self.source[first..end], self.in_sheet_block()) {
             self.close_entry_early();
-            while let Some(block) = self.blocks.last() {
-                let brace = block.brace;
-                self.report_open(brace);
-                self.close_block(true);
-            }
+            self.close_blocks();
         }
     }
 
@@ -167,7 +124,7 @@ impl Cutter<'_> {
         }
     }
 
-    fn break_entry(&mut self, at: usize) {
+    pub(super) fn break_entry(&mut self, at: usize) {
         self.extend(at);
         if let Some(entry) = &mut self.entry {
             entry.broken = true;
@@ -278,93 +235,6 @@ impl Cutter<'_> {
         self.brackets.clear();
     }
 
-    /// A comma between two digits of a number: decimal comma or thousands separator, never guessed.
-    fn comma(&mut self, at: usize) {
-        let digit = |i: usize| self.source.get(i).is_some_and(u8::is_ascii_digit);
-        if !(digit(at + 1) && at > 0 && digit(at - 1) && self.number_ends(at)) {
-            return;
-        }
-        let start = self.number_start(at);
-        let end = (at + 1..self.source.len())
-            .find(|&i| !self.source[i].is_ascii_digit())
-            .unwrap_or(self.source.len());
-        let whole = String::from_utf8_lossy(&self.source[start..at]).into_owned();
-        let after = String::from_utf8_lossy(&self.source[at + 1..end]).into_owned();
-        let help = if after.len() == 3 && whole != "0" {
-            format!(
-                "write `{whole}{after}` if it separates thousands, `{whole}.{after}` if it is the decimal sign"
-            )
-        } else {
-            format!("write `{whole}.{after}`; between two numbers of a list, a blank after the comma")
-        };
-        if !self.entry.as_ref().is_some_and(|entry| entry.broken) {
-            self.diagnostics.push(
-                Diagnostic::new(Code::DecimalComma, format!("a comma inside the number `{whole},{after}`"))
-                    .label(self.span(start..end), "read as a decimal sign by some, as a separator by others")
-                    .help(help),
-            );
-        }
-        self.break_entry(at);
-    }
-
-    /// A decimal point wants a digit on both sides.
-    fn point(&mut self, at: usize) {
-        let digit = |i: usize| self.source.get(i).is_some_and(u8::is_ascii_digit);
-        let before = at > 0 && digit(at - 1) && self.number_ends(at);
-        let wordlike = |byte: u8| byte.is_ascii_alphanumeric() || byte == b'_' || byte == b')' || byte >= 128;
-        let leading = digit(at + 1) && (at == 0 || !wordlike(self.source[at - 1]));
-        let trailing = before && !digit(at + 1);
-        if !(leading || trailing) || self.entry.as_ref().is_some_and(|entry| entry.broken) {
-            return;
-        }
-        let start = if trailing { self.number_start(at) } else { at };
-        let end = (at + 1..self.source.len())
-            .find(|&i| !self.source[i].is_ascii_digit())
-            .unwrap_or(self.source.len());
-        let written = String::from_utf8_lossy(&self.source[start..end]).into_owned();
-        let right = if trailing { format!("{written}0") } else { format!("0{written}") };
-        self.diagnostics.push(
-            Diagnostic::new(
-                Code::BareDecimalPoint,
-                format!("the number `{written}` lacks a digit beside its point"),
-            )
-            .label(self.span(start..end), "a point is easily lost here")
-            .help(format!("write `{right}`")),
-        );
-        self.break_entry(at);
-    }
-
-    /// Whether the digits just before `at` are a number and not the end of a name.
-    fn number_ends(&self, at: usize) -> bool {
-        let start = self.number_start(at);
-        start == 0 || {
-            let before = self.source[start - 1];
-            !(before.is_ascii_alphanumeric() || before == b'_' || before >= 128)
-        }
-    }
-
-    fn number_start(&self, at: usize) -> usize {
-        let mut start = at;
-        while start > 0 && (self.source[start - 1].is_ascii_digit() || self.source[start - 1] == b'.') {
-            start -= 1;
-        }
-        start
-    }
-
-    fn control(&mut self, at: usize) {
-        if !self.entry.as_ref().is_some_and(|entry| entry.broken) {
-            self.diagnostics.push(
-                Diagnostic::new(
-                    Code::ControlCharacter,
-                    format!("a control character (U+{:04X}) in the sheet", self.source[at]),
-                )
-                .label(self.span(at..at + 1), "no printed sheet would show it")
-                .help("take it out; a sheet holds printable text, tabs and line ends"),
-            );
-        }
-        self.break_entry(at);
-    }
-
     fn take_entry(&mut self) -> (Range<usize>, bool) {
         self.brackets.clear();
         match self.entry.take() {
@@ -432,8 +302,15 @@ impl Cutter<'_> {
         }
     }
 
-    fn finish(&mut self) {
+    pub(super) fn finish(mut self) -> Cut {
         self.close_entry_early();
+        self.close_blocks();
+        let text = String::from_utf8(self.out).expect("only whole characters are blanked");
+        Cut { text, pieces: self.pieces, diagnostics: self.diagnostics }
+    }
+
+    /// Closes every block that is still open; each is reported.
+    fn close_blocks(&mut self) {
         while let Some(block) = self.blocks.last() {
             let brace = block.brace;
             self.report_open(brace);
@@ -451,7 +328,7 @@ impl Cutter<'_> {
         }
     }
 
-    fn span(&self, range: Range<usize>) -> Span {
+    pub(super) fn span(&self, range: Range<usize>) -> Span {
         Span::new(self.file, range.start, range.end)
     }
 }
