@@ -3,7 +3,7 @@
 use super::checker::Checker;
 use super::matter::Gathered;
 use crate::diagnostic::{Code, Diagnostic};
-use crate::program::{Condition, Expr, Node, State, StateId};
+use crate::program::{Condition, Expr, Node, SpeciesId, State, StateId};
 use crate::span::Span;
 use crate::syntax::tree::{self, ConditionKind, Expression, ExpressionKind, Word};
 use crate::thermo::{PhaseClass, Pin};
@@ -158,6 +158,12 @@ impl Checker<'_> {
         }
         read.share = Some(((at, value), span));
         if matches!(phase.text.as_str(), "vapour" | "vapor") {
+            let species = matter.constituents.first()?.species;
+            let classes = [PhaseClass::Solid, PhaseClass::Liquid];
+            if !classes.into_iter().any(|class| self.turns_to_gas(species, class)) {
+                self.without_boiling(span);
+                return None;
+            }
             read.saturated = Some(span);
         }
         Some(())
@@ -232,6 +238,24 @@ impl Checker<'_> {
         );
     }
 
+    /// Whether a transition leads from a phase of a class to a gas.
+    fn turns_to_gas(&self, species: SpeciesId, class: PhaseClass) -> bool {
+        let Some(species) = self.program.species.get(species.0) else { return false };
+        species.phases.windows(2).enumerate().any(|(link, pair)| {
+            pair[0].class == class
+                && pair[1].class == PhaseClass::Gas
+                && species.curve.transition(link).is_some()
+        })
+    }
+
+    fn without_boiling(&mut self, span: Span) {
+        self.share_unplaced(
+            span,
+            "a saturated state of a species that does not boil",
+            "add `boiling at ... takes ...` to its block",
+        );
+    }
+
     /// `saturated vapour`, `saturated liquid`: at the boiling point of the one species.
     fn saturated(&mut self, phase: &Word, span: Span, matter: &Gathered, read: &mut Read) -> Option<()> {
         if !matches!(phase.text.as_str(), "vapour" | "vapor" | "liquid") {
@@ -241,19 +265,8 @@ impl Checker<'_> {
         }
         let at = self.phase_of_share(phase, matter, span)?;
         let species = matter.constituents.first()?.species;
-        let boils = self
-            .program
-            .species
-            .get(species.0)?
-            .phases
-            .windows(2)
-            .any(|pair| pair[0].class == PhaseClass::Liquid && pair[1].class == PhaseClass::Gas);
-        if !boils {
-            self.share_unplaced(
-                span,
-                "a saturated state of a species that does not boil",
-                "add `boiling at ... takes ...` to its block",
-            );
+        if !self.turns_to_gas(species, PhaseClass::Liquid) {
+            self.without_boiling(span);
             return None;
         }
         if let Some((_, first)) = &read.share {
