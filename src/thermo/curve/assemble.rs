@@ -4,11 +4,11 @@ use std::ops::Range;
 
 use uom::si::f64::MolarMass;
 
-use super::boiling::Saturation;
 use super::check::{check_curve, link_span, phase_span};
 use super::data::{CurveData, Density, Link, PhaseClass, PhaseData};
 use super::error::CurveError;
 use super::formation::{Formations, runs, stable_chain};
+use super::saturation::Saturation;
 use super::segment::{Body, Melting, Segment};
 use super::track::{Track, Tracks, lay_tracks};
 use crate::thermo::constants::REFERENCE_TEMPERATURE;

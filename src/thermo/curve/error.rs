@@ -2,7 +2,7 @@
 
 use uom::si::f64::{AvailableEnergy, ThermodynamicTemperature};
 
-use super::boiling::SaturationFault;
+use super::saturation::SaturationFault;
 
 /// What is wrong with the data of a species.
 #[derive(Debug, Clone, Copy, PartialEq)]

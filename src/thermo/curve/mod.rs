@@ -25,6 +25,7 @@ mod measure;
 mod place;
 mod properties;
 mod route;
+mod saturation;
 mod segment;
 mod track;
 
@@ -32,7 +33,6 @@ mod track;
 pub(in crate::thermo) mod tests;
 
 pub use assemble::HeatingCurve;
-pub use boiling::SaturationFault;
 pub use data::{CurveData, Density, LawRange, Link, PhaseClass, PhaseData};
 pub use error::{CurveError, MeltingFault};
 pub use locate::{LocateError, Locator};
@@ -40,5 +40,6 @@ pub(super) use measure::Measure;
 pub use place::{Allowance, PhaseShares, Pin, Place, Side};
 pub use properties::Transition;
 pub use route::{Leg, LegKind};
+pub use saturation::SaturationFault;
 pub use track::Edge;
 pub(super) use track::Track;
