@@ -185,8 +185,7 @@ fn rating() -> ResultRow {
     ResultRow {
         name: "rating".into(),
         formula: "burner.supplied".into(),
-        put_in: "(134.71 MJ + 1.8 kW * 3.5 h) / 3.5 h".into(),
-        efficiency: Some("62 %".into()),
+        put_in: "12.491 kW / 62 %".into(),
         value: quantity(20.146_69, "kW"),
         dimension: "kg m2 s-3".into(),
     }
@@ -197,6 +196,7 @@ fn burner() -> DutyRow {
         name: "burner".into(),
         written: "heat_up.Q + wall * time, over time, at efficiency eff".into(),
         put_in: "(134.71 MJ + 1.8 kW * 3.5 h) / 3.5 h".into(),
+        efficiency: Some("62 %".into()),
         useful: quantity(12.491, "kW"),
         supplied: quantity(20.146_69, "kW"),
     }
