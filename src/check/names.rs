@@ -15,7 +15,7 @@ pub(super) const CONSTANTS: &[(&str, &str)] = &[
 ];
 
 /// After so many findings no nearest name or unit is looked for: each search goes through all of them.
-const GUESSES: usize = 500;
+const GUESSES: usize = 100;
 
 impl Checker<'_> {
     /// Notes every name that the sheet declares, so that one used too early is told from an unknown one.

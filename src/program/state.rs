@@ -79,6 +79,16 @@ pub enum Condition {
     Boiling,
 }
 
+impl Condition {
+    /// The expression, where one is said.
+    pub fn value(&self) -> Option<&Expr> {
+        match self {
+            Condition::Value(value) => Some(value),
+            _ => None,
+        }
+    }
+}
+
 /// A state.
 #[derive(Debug, Clone, PartialEq)]
 pub struct State {
@@ -115,14 +125,8 @@ impl State {
 
     /// The expressions of its amounts and conditions.
     pub fn expressions(&self) -> impl Iterator<Item = &Expr> {
-        fn said(condition: &Condition) -> Option<&Expr> {
-            match condition {
-                Condition::Value(value) => Some(value),
-                _ => None,
-            }
-        }
         let conditions =
-            [said(&self.temperature), said(&self.pressure), self.share.as_ref().map(|(_, share)| share)];
+            [self.temperature.value(), self.pressure.value(), self.share.as_ref().map(|(_, share)| share)];
         let mut amounts = Vec::new();
         gather_amounts(&self.source, &mut amounts);
         conditions.into_iter().flatten().chain(amounts)

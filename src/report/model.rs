@@ -241,8 +241,10 @@ pub struct DutyRow {
     pub name: String,
     /// As written.
     pub written: String,
-    /// The formula with numbers put in.
+    /// The formula of what the matter takes, with numbers put in.
     pub put_in: String,
+    /// The efficiency with numbers put in, where one is said.
+    pub efficiency: Option<String>,
     /// What the matter takes.
     pub useful: Quantity,
     /// Useful over efficiency.

@@ -196,6 +196,7 @@ fn burner() -> DutyRow {
         name: "burner".into(),
         written: "heat_up.Q + wall * time, over time, at efficiency eff".into(),
         put_in: "(134.71 MJ + 1.8 kW * 3.5 h) / 3.5 h".into(),
+        efficiency: Some("62 %".into()),
         useful: quantity(12.491, "kW"),
         supplied: quantity(20.146_69, "kW"),
     }

@@ -189,13 +189,11 @@ impl WorkedSheet<'_> {
         if let Some(time) = &duty.over {
             put_in = format!("({put_in}) / {}", self.put_in(time));
         }
-        if let Some(efficiency) = &duty.efficiency {
-            put_in = format!("{put_in}, at efficiency {}", self.put_in(efficiency));
-        }
         Some(DutyRow {
             name: duty.name.clone(),
             written: duty.text.clone(),
             put_in,
+            efficiency: duty.efficiency.as_ref().map(|efficiency| self.put_in(efficiency)),
             useful: self.shown(self.value(slots.useful), dimension, None, false),
             supplied: self.shown(self.value(slots.supplied), dimension, None, false),
         })

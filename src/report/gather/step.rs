@@ -313,10 +313,10 @@ fn work_formula(step: &Step, path: Path) -> String {
         Path::ConstantPressure | Path::ConstantTemperatureAndPressure => "no shaft work",
         Path::NoShaftWork | Path::Throttled => "no shaft work",
     };
-    if step.working.is_some() {
-        format!("{own}, and the work that ends in the matter")
-    } else {
-        own.to_owned()
+    match (step.working.is_some(), own.starts_with("no ")) {
+        (true, true) => "the work that ends in the matter".to_owned(),
+        (true, false) => format!("{own}, and the work that ends in the matter"),
+        (false, _) => own.to_owned(),
     }
 }
 

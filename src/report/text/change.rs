@@ -69,7 +69,7 @@ fn write_legs(page: &mut Page, row: &StepRow, mark: &str, data: &[DataRow]) {
         let folded = || line.split_whitespace().collect::<Vec<_>>().join(" ");
         page.text(BODY, &if fits { line.clone() } else { folded() });
         if !leg.datum.is_empty() {
-            let by = format!("by {}{}", leg.datum, datum_mark(leg, data));
+            let by = format!("by {}{}", in_brief(&leg.datum), datum_mark(leg, data));
             page.hanging(&" ".repeat(column), column + 3, &by);
         }
     }
@@ -113,4 +113,14 @@ fn write_sides(page: &mut Page, row: &StepRow) {
         grid.row(std::iter::once(side.symbol.to_owned()).chain(text));
     }
     page.grid(BODY, grid);
+}
+
+/// A datum without its coefficients or rows, which stand among the data: `cp nasa9 { ... } for 200 K to 1000 K`.
+fn in_brief(datum: &str) -> String {
+    match (datum.find('{'), datum.rfind('}')) {
+        (Some(open), Some(close)) if close > open => {
+            format!("{}{{ ... }}{}", &datum[..open], &datum[close + 1..])
+        }
+        _ => datum.to_owned(),
+    }
 }

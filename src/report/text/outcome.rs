@@ -14,7 +14,11 @@ pub(super) fn write_duty(page: &mut Page, row: &DutyRow) {
     page.item(&mark, &format!("{}: {}", row.name, row.written));
     let (useful, supplied) = (shown(&row.useful), shown(&row.supplied));
     page.equation("", "useful  ", &worked(&row.put_in, None, &useful));
-    page.equation("", "supplied", &[&supplied]);
+    let over = row
+        .efficiency
+        .as_ref()
+        .map_or_else(|| useful.clone(), |efficiency| format!("{useful} / {}", bracketed(efficiency)));
+    page.equation("", "supplied", &worked(&over, None, &supplied));
 }
 
 pub(super) fn write_result(page: &mut Page, row: &ResultRow) {
@@ -58,4 +62,13 @@ fn cells(table: &TableRows, at: usize, column: &TableColumn) -> Vec<String> {
 
 fn head(column: &TableColumn) -> String {
     format!("{}\n{}", column.name, shown_unit(&column.unit, column.pressure))
+}
+
+/// A divisor in parentheses where it is more than one number with its unit.
+fn bracketed(text: &str) -> String {
+    if text.contains([' ']) && text.contains(['+', '-', '*', '/']) {
+        format!("({text})")
+    } else {
+        text.to_owned()
+    }
 }
