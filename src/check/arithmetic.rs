@@ -157,6 +157,10 @@ impl Checker<'_> {
                 continue;
             };
             let Some(unit) = bottom.unit.as_ref().filter(|_| top.unit.is_none()) else { continue };
+            if self.sources.slice(top.span.to(bottom.span)).contains(char::is_whitespace) && unit.text == "%"
+            {
+                continue; // `2 / 20.95 %` is set apart as a quotient
+            }
             let text = self.written(top.span.to(bottom.span));
             self.report(
                 Diagnostic::new(

@@ -1,7 +1,7 @@
 //! Materials: what a name, a state symbol and a phase's word stand for, and whether a constituent has moles.
 
 use super::checker::{Checker, Declared, Material};
-use super::species::class_of;
+use super::phase::class_of;
 use crate::diagnostic::{Code, Diagnostic, nearest};
 use crate::program::{Constituent, SpeciesId};
 use crate::span::Span;

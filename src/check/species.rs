@@ -2,36 +2,15 @@
 
 use super::checker::{Checker, Declared, Material};
 use super::names::declared_twice;
+use super::pedigree::{Draft, given_twice, transition_range};
+use super::phase::{Phase, phase_info};
 use super::transition::{self, Neighbour};
 use crate::diagnostic::{Code, Diagnostic};
-use crate::numeric::Formula;
-use crate::program::{Datum, DatumKind, Entry, PhaseInfo, Species, SpeciesId};
+use crate::program::{DatumKind, Entry, Species, SpeciesId};
 use crate::span::Span;
-use crate::syntax::tree::{
-    self, CoefficientForm, Expression, HeatCapacityEntry, LawText, PhaseBlock, PhaseEntry, SpeciesBlock,
-    SpeciesEntry, Suffixes, TransitionEntry, TransitionPlace, Word,
-};
-use crate::thermo::{
-    Composition, CurveData, CurveError, Density, Fault, HeatingCurve, LawRange, Link, PhaseClass, PhaseData,
-    VapourPressure,
-};
-use crate::units::{Dimension, quantity};
-
-/// A species being read.
-struct Draft<'a> {
-    block: &'a SpeciesBlock,
-    source: Option<String>,
-    molar_mass: Option<f64>,
-    data: Vec<Datum>,
-}
-
-/// A phase as read, with the places of its ranges.
-struct Phase {
-    data: PhaseData,
-    head: Span,
-    ranges: Vec<Span>,
-    density: Option<Span>,
-}
+use crate::syntax::tree::{SpeciesBlock, SpeciesEntry, TransitionEntry, Word};
+use crate::thermo::{CurveData, CurveError, HeatingCurve, Link, VapourPressure};
+use crate::units::quantity;
 
 impl Checker<'_> {
     pub(super) fn species_statement(&mut self, block: &SpeciesBlock) {
@@ -126,12 +105,12 @@ impl Checker<'_> {
         })
     }
 
-    fn error_count(&self) -> usize {
+    pub(super) fn error_count(&self) -> usize {
         self.diagnostics.iter().filter(|found| found.is_error()).count()
     }
 
     /// The one entry of a sort; a second one is refused.
-    fn single<T>(
+    pub(super) fn single<T>(
         &mut self,
         block: &SpeciesBlock,
         pick: impl Fn(&SpeciesEntry) -> Option<(T, Span)>,
@@ -143,128 +122,6 @@ impl Checker<'_> {
             self.diagnostics.push(diagnostic);
         }
         first.map(|(value, _)| value)
-    }
-
-    fn species_formula(&mut self, block: &SpeciesBlock) -> Option<(String, Composition)> {
-        let word = self.single(block, |entry| match entry {
-            SpeciesEntry::Formula(word) => Some((word.clone(), word.span)),
-            _ => None,
-        })?;
-        match Composition::parse(&word.text) {
-            Ok(composition) => Some((word.text, composition)),
-            Err(error) => {
-                self.formula_error(&word, &error);
-                None
-            }
-        }
-    }
-
-    fn formula_error(&mut self, word: &Word, error: &crate::thermo::CompositionError) {
-        let place = |range: &std::ops::Range<usize>| {
-            let at =
-                |offset: usize| word.span.start + u32::try_from(offset.min(word.text.len())).unwrap_or(0);
-            if range.is_empty() {
-                word.span
-            } else {
-                Span { start: at(range.start), end: at(range.end), ..word.span }
-            }
-        };
-        let found = match error {
-            crate::thermo::CompositionError::UnknownElement { symbol, range } => Diagnostic::new(
-                Code::UnknownElement,
-                format!("`{symbol}` in `{}` is no element", word.text),
-            )
-            .label(place(range), "no element of this symbol")
-            .help("symbols are IUPAC's: a capital, then a small letter where there are two, such as `Zn`"),
-            crate::thermo::CompositionError::NoAtomicWeight { element, range } => Diagnostic::new(
-                Code::UnknownElement,
-                format!("`{}` has no standard atomic weight", element.symbol()),
-            )
-            .label(place(range), "no stable isotopes")
-            .help("leave the formula out and give `molar_mass ... g/mol`"),
-            crate::thermo::CompositionError::Malformed { fault, range } => {
-                Diagnostic::new(Code::BadFormula, format!("the formula `{}` cannot be read", word.text))
-                    .label(place(range), fault_in_words(*fault))
-                    .help("write formulas such as `Ca(OH)2`, `Fe0.947O` or `CuSO4·5H2O`")
-            }
-        };
-        self.report(found);
-    }
-
-    fn given_molar_mass(&mut self, draft: &mut Draft<'_>) -> Option<f64> {
-        let entry = self.single(draft.block, |entry| match entry {
-            SpeciesEntry::MolarMass(entry) => Some((entry.clone(), entry.span)),
-            _ => None,
-        })?;
-        let value = self.datum_of(&entry.value, Dimension::MOLAR_MASS, "a molar mass")?;
-        let datum = self.datum(draft, DatumKind::MolarMass, &entry.suffixes, entry.span, None);
-        draft.data.push(datum);
-        if value > 0.0 {
-            return Some(value);
-        }
-        self.report(
-            Diagnostic::new(Code::DatumNotPositive, "a molar mass that is not positive")
-                .label(entry.value.span, "here")
-                .help("write such as `molar_mass 65.38 g/mol`"),
-        );
-        None
-    }
-
-    /// The formation enthalpy at 298.15 K in J/kg.
-    fn formation(
-        &mut self,
-        value: &LawText<tree::Datum>,
-        at: &tree::Datum,
-        species: &str,
-        molar_mass: Option<f64>,
-    ) -> Option<f64> {
-        let kelvin = self.datum_temperature(at, "the temperature of a formation enthalpy")?;
-        if (kelvin - 298.15).abs() > 1e-9 {
-            self.report(
-                Diagnostic::new(
-                    Code::FormationWrong,
-                    "a formation enthalpy at another temperature than 298.15 K",
-                )
-                .label(at.span, "298.15 K is wanted")
-                .help("give the standard formation enthalpy, `at 298.15 K`"),
-            );
-            return None;
-        }
-        let read = self.datum_value(&value.value)?;
-        match (read.unit.dimension, molar_mass) {
-            (Dimension::SPECIFIC_ENERGY, _) => Some(read.si),
-            (Dimension::MOLAR_ENERGY, Some(molar_mass)) => Some(read.si / molar_mass),
-            (Dimension::MOLAR_ENERGY, None) => {
-                self.molar_datum(value.value.span, species);
-                None
-            }
-            (found, _) => {
-                let wanted = [Dimension::MOLAR_ENERGY, Dimension::SPECIFIC_ENERGY];
-                self.wrong_dimension(value.value.span, found, &wanted, "a formation enthalpy");
-                None
-            }
-        }
-    }
-
-    fn species_formation(&mut self, draft: &mut Draft<'_>) -> Option<f64> {
-        let (value, at) = self.single(draft.block, |entry| match entry {
-            SpeciesEntry::Formation(value, at) => Some(((value.clone(), at.clone()), value.span)),
-            _ => None,
-        })?;
-        let kind = DatumKind::Formation { phase: None };
-        let datum = self.datum(draft, kind, &value.suffixes, value.span, Some((298.15, 298.15)));
-        draft.data.push(datum);
-        self.formation(&value, &at, &draft.block.name.text, draft.molar_mass)
-    }
-
-    fn decomposition(&mut self, draft: &mut Draft<'_>) -> Option<f64> {
-        let entry = self.single(draft.block, |entry| match entry {
-            SpeciesEntry::Decomposes(entry) => Some((entry.clone(), entry.span)),
-            _ => None,
-        })?;
-        let datum = self.datum(draft, DatumKind::Decomposition, &entry.suffixes, entry.span, None);
-        draft.data.push(datum);
-        self.datum_temperature(&entry.value, "the temperature of decomposition")
     }
 
     fn species_vapour_pressure(&mut self, draft: &mut Draft<'_>) -> Option<VapourPressure> {
@@ -357,158 +214,6 @@ impl Checker<'_> {
         );
     }
 
-    /// Reads a phase; what its neighbours need to know of it comes back even where it is at fault.
-    fn phase(
-        &mut self,
-        draft: &mut Draft<'_>,
-        block: &PhaseBlock,
-        index: usize,
-    ) -> (Option<Phase>, Neighbour) {
-        let class = self.phase_class(block);
-        let own_source = block.entries.iter().find_map(|entry| match entry {
-            PhaseEntry::Source(text) => Some(text.text.clone()),
-            _ => None,
-        });
-        let mut ranges = Vec::new();
-        let mut spans = Vec::new();
-        let (mut density, mut density_span) = (None, None);
-        let (mut formation, mut has_formation) = (None, None);
-        let mut complete = true;
-        let name = draft.block.name.text.clone();
-        let outer = draft.source.clone();
-        draft.source = own_source.or_else(|| outer.clone());
-        for entry in &block.entries {
-            match entry {
-                PhaseEntry::HeatCapacity(entry) => {
-                    let law = self.heat_capacity(entry, draft.molar_mass, &name);
-                    let valid = law.as_ref().map(|law: &LawRange| (law.lo.value, law.hi.value));
-                    let kind = DatumKind::HeatCapacity { phase: index, range: spans.len() };
-                    let datum = self.datum(draft, kind, &entry.suffixes, entry.span, valid);
-                    draft.data.push(datum);
-                    complete &= law.is_some();
-                    ranges.extend(law);
-                    spans.push(range_span(entry));
-                }
-                PhaseEntry::Density(entry) => {
-                    if let Some(first) = density_span.replace(entry.span) {
-                        self.diagnostics.push(given_twice(entry.span, first));
-                        complete = false;
-                    }
-                    let (read, valid) = self.density(entry);
-                    let datum = self.datum(
-                        draft,
-                        DatumKind::Density { phase: index },
-                        &entry.suffixes,
-                        entry.span,
-                        valid,
-                    );
-                    draft.data.push(datum);
-                    complete &= read.is_some();
-                    density = read;
-                }
-                PhaseEntry::Formation(value, at) => {
-                    if let Some(first) = has_formation.replace(value.span) {
-                        self.diagnostics.push(given_twice(value.span, first));
-                        complete = false;
-                    }
-                    formation = self.formation(value, at, &name, draft.molar_mass);
-                    complete &= formation.is_some();
-                    let kind = DatumKind::Formation { phase: Some(index) };
-                    let datum = self.datum(draft, kind, &value.suffixes, value.span, Some((298.15, 298.15)));
-                    draft.data.push(datum);
-                }
-                PhaseEntry::Source(_) | PhaseEntry::Remark(_) => {}
-            }
-        }
-        draft.source = outer;
-        if spans.is_empty() && !block.damaged {
-            self.report(
-                Diagnostic::new(
-                    Code::DatumMissing,
-                    format!("the phase `{}` of `{name}` has no heat capacity", block.name.text),
-                )
-                .label(block.head, "no `cp`")
-                .help("add `cp = ... J/(mol K) for ... K to ... K`"),
-            );
-            complete = false;
-        }
-        let neighbour = Neighbour {
-            name: block.name.text.clone(),
-            class,
-            own_formation: has_formation.is_some(),
-            head: block.head,
-        };
-        let (Some(class), true) = (class, complete && !block.damaged) else { return (None, neighbour) };
-        let name = block.name.text.clone();
-        let data = PhaseData { name, class, ranges, density, formation: formation.map(quantity) };
-        (Some(Phase { data, head: block.head, ranges: spans, density: density_span }), neighbour)
-    }
-
-    fn phase_class(&mut self, block: &PhaseBlock) -> Option<PhaseClass> {
-        let word = block.class.as_ref().unwrap_or(&block.name);
-        if let Some(class) = class_of(&word.text) {
-            return Some(class);
-        }
-        let (message, help) = match &block.class {
-            Some(class) => (
-                format!("a phase cannot be `{}`", class.text),
-                format!("write `phase {} is solid`, `is liquid` or `is gas`", block.name.text),
-            ),
-            None => (
-                format!("is the phase `{}` solid, liquid or gas?", block.name.text),
-                format!("write `phase {} is solid {{`", block.name.text),
-            ),
-        };
-        self.report(Diagnostic::new(Code::UnknownPhase, message).label(word.span, "not said").help(help));
-        None
-    }
-
-    /// A density, constant or a formula, in kg/m³.
-    fn density(
-        &mut self,
-        entry: &LawText<(Expression, Option<(tree::Datum, tree::Datum)>)>,
-    ) -> (Option<Density>, Option<(f64, f64)>) {
-        let (expression, range) = &entry.value;
-        let valid = range.as_ref().and_then(|(low, high)| {
-            Some((
-                self.datum_temperature(low, "the lower end of a range")?,
-                self.datum_temperature(high, "the upper end of a range")?,
-            ))
-        });
-        let Some(checked) = self.formula(expression) else { return (None, valid) };
-        if checked.dimension != Dimension::DENSITY {
-            self.wrong_dimension(checked.span, checked.dimension, &[Dimension::DENSITY], "a density");
-            return (None, valid);
-        }
-        if let Some(value) = super::constant::value_of(&checked) {
-            return (Some(Density::Constant(quantity(value))), valid);
-        }
-        let code: Option<Formula> = super::law_formula::compiled(&checked);
-        (code.map(Density::Formula), valid)
-    }
-
-    /// A datum with its pedigree: its own source, else that of the block around it.
-    fn datum(
-        &mut self,
-        draft: &Draft<'_>,
-        kind: DatumKind,
-        suffixes: &Suffixes,
-        span: Span,
-        valid: Option<(f64, f64)>,
-    ) -> Datum {
-        let interval = suffixes.intervals.first().map(|interval| self.written(interval.span));
-        if let [_, second, ..] = suffixes.intervals.as_slice() {
-            self.diagnostics.push(given_twice(second.span, span));
-        }
-        let spread = suffixes.spreads.first().map(|spread| {
-            let amount = self.written(spread.amount.span);
-            format!("{amount} against \"{}\"", spread.against.text)
-        });
-        let text = without_suffixes(&self.written(span));
-        let source = suffixes.source().map(str::to_owned).or_else(|| draft.source.clone());
-        Datum { kind, text, valid, source, interval, spread, span }
-    }
-
     fn curve_error(&mut self, error: CurveError, block: &SpeciesBlock, phases: &[Phase], links: &[Span]) {
         let found = super::curve_error::explain(
             error,
@@ -530,74 +235,6 @@ impl Checker<'_> {
             },
         );
         self.report(found);
-    }
-}
-
-fn transition_range(checker: &mut Checker<'_>, transition: &TransitionEntry) -> Option<(f64, f64)> {
-    let read = |datum: &tree::Datum| {
-        let unit = datum.literal.unit.as_ref()?;
-        let unit = crate::units::read_unit(&unit.text).ok()?;
-        let value = if datum.negative { -datum.literal.value } else { datum.literal.value };
-        Some(unit.to_si(value, checker.program.site.atmosphere))
-    };
-    match &transition.place {
-        TransitionPlace::At(at) => read(at).map(|kelvin| (kelvin, kelvin)),
-        TransitionPlace::Over(low, high) => Some((read(low)?, read(high)?)),
-    }
-}
-
-/// The entry without what follows the datum: interval, source and spread are kept apart.
-fn without_suffixes(text: &str) -> String {
-    let ends = [" source \"", " spread ", " ±", " +-", " +/-"];
-    let end = ends.iter().filter_map(|mark| text.find(mark)).min().unwrap_or(text.len());
-    text[..end].trim_end().to_owned()
-}
-
-fn given_twice(second: Span, first: Span) -> Diagnostic {
-    Diagnostic::new(Code::DatumTwice, "a datum given twice")
-        .label(second, "given again here")
-        .label(first, "given first here")
-        .help("keep one of the two")
-}
-
-fn range_span(entry: &LawText<HeatCapacityEntry>) -> Span {
-    match (&entry.value.range, &entry.value.form) {
-        (Some((low, high)), _) => low.span.to(high.span),
-        (None, CoefficientForm::Table(rows, _)) => rows.first().map_or(entry.span, |row| row.at.span),
-        _ => entry.span,
-    }
-}
-
-pub(super) fn class_of(word: &str) -> Option<PhaseClass> {
-    match word {
-        "solid" => Some(PhaseClass::Solid),
-        "liquid" => Some(PhaseClass::Liquid),
-        "gas" => Some(PhaseClass::Gas),
-        _ => None,
-    }
-}
-
-fn phase_info(phase: &PhaseData) -> PhaseInfo {
-    let symbol = match phase.name.as_str() {
-        "solid" => "s",
-        "liquid" => "l",
-        "gas" => "g",
-        other => other,
-    };
-    let constant_density = match &phase.density {
-        Some(Density::Constant(density)) => Some(density.value),
-        _ => None,
-    };
-    PhaseInfo { name: phase.name.clone(), class: phase.class, symbol: symbol.to_owned(), constant_density }
-}
-
-fn fault_in_words(fault: Fault) -> &'static str {
-    match fault {
-        Fault::Empty => "an element or a group is wanted here",
-        Fault::Character => "no formula has this character",
-        Fault::Bracket => "a bracket without its partner",
-        Fault::TooDeep => "brackets nested too deep",
-        Fault::Count => "a count that is no positive number",
     }
 }
 

@@ -3,6 +3,8 @@
 mod builder;
 mod duty;
 mod expr;
+mod matter;
+mod member;
 mod settle;
 mod state;
 mod step;
