@@ -157,8 +157,8 @@ impl Checker<'_> {
                 continue;
             };
             let Some(unit) = bottom.unit.as_ref().filter(|_| top.unit.is_none()) else { continue };
-            if self.sources.slice(top.span.to(bottom.span)).contains(char::is_whitespace) && unit.text == "%"
-            {
+            let between = Span { start: top.span.end, end: bottom.span.start, ..top.span };
+            if unit.text == "%" && self.sources.slice(between).contains(char::is_whitespace) {
                 continue; // `2 / 20.95 %` is set apart as a quotient
             }
             let text = self.written(top.span.to(bottom.span));
