@@ -1,8 +1,9 @@
 //! The checker: what is known so far, and the pass over the statements.
 
+pub(super) use super::known::{Blend, Claim, Declared, Entity, FileSpecies, Material};
 use crate::diagnostic::Diagnostic;
 use crate::library::Loader;
-use crate::program::{DutyId, Entry, Head, Program, QuantityId, Remark, Site, SpeciesId, StateId, StepId};
+use crate::program::{Entry, Head, Program, Remark, Site};
 use crate::source::Sources;
 use crate::span::{FileId, Span};
 use crate::syntax::tree::{Item, Statement, Word};
@@ -18,33 +19,6 @@ pub struct Checked {
     pub program: Option<Program>,
     /// Errors and warnings in the order of the sheet.
     pub diagnostics: Vec<Diagnostic>,
-}
-
-/// What a name stands for.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub(super) enum Entity {
-    Quantity(QuantityId),
-    State(StateId),
-    Step(StepId),
-    Duty(DutyId),
-    /// Declared, but not usable: its mistake is already reported.
-    Broken,
-}
-
-/// What a material's name stands for.
-#[derive(Debug, Clone, PartialEq)]
-pub(super) enum Material {
-    Species(SpeciesId),
-    /// A mixture: species with phase and share by mass.
-    Mixture(super::mixture::Blend),
-    Broken,
-}
-
-/// A declared thing and where.
-#[derive(Debug, Clone, PartialEq)]
-pub(super) struct Declared<T> {
-    pub(super) what: T,
-    pub(super) span: Span,
 }
 
 /// The checker at work.
@@ -70,9 +44,9 @@ pub(super) struct Checker<'a> {
     /// Unknowns that a `settle` names.
     pub(super) settled: BTreeSet<String>,
     /// The species of files already read, by identity.
-    pub(super) files: BTreeMap<String, super::import::FileSpecies>,
+    pub(super) files: BTreeMap<String, FileSpecies>,
     /// What published forms say of their enthalpies, of the species being read.
-    pub(super) claims: Vec<super::consistency::Claim>,
+    pub(super) claims: Vec<Claim>,
     /// The identities of the files being read, outermost first.
     pub(super) reading: Vec<String>,
 }

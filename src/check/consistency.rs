@@ -2,10 +2,9 @@
 //!
 //! A remark in the block that names a warning, `| W107: ...`, gives its reason and answers it.
 
-use super::checker::Checker;
+use super::checker::{Checker, Claim};
 use crate::diagnostic::{Code, Diagnostic};
 use crate::program::{DatumKind, Species};
-use crate::span::Span;
 use crate::thermo::{Allowance, Pin};
 use crate::units::quantity;
 
@@ -18,17 +17,6 @@ const CONTRADICTION: f64 = 50.0;
 
 /// How far a second source may lie, in per cent.
 const SPREAD: f64 = 1.0;
-
-/// What a published form says of its absolute enthalpy by its own constant.
-#[derive(Debug, Clone, Copy)]
-pub(super) struct Claim {
-    /// The entry.
-    pub(super) span: Span,
-    /// A temperature in its range, K.
-    pub(super) kelvin: f64,
-    /// The enthalpy there, J/mol.
-    pub(super) enthalpy: f64,
-}
 
 /// By how much the stated boiling point may lie off that of the vapour pressure, K.
 const BOILING: f64 = 0.5;

@@ -1,7 +1,6 @@
 //! Heat-capacity entries to laws.
 
-use super::checker::Checker;
-use super::consistency::Claim;
+use super::checker::{Checker, Claim};
 use super::law_formula::{as_powers, compiled};
 use super::wanted::with_dimension;
 use crate::diagnostic::{Code, Diagnostic, nearest};

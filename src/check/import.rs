@@ -1,6 +1,6 @@
 //! `use`: species of the library, of a file beside the sheet, and the steam tables.
 
-use super::checker::{Checker, Declared, Material};
+use super::checker::{Checker, Declared, FileSpecies, Material};
 use crate::diagnostic::{Code, Diagnostic, nearest};
 use crate::library::{LoadError, Loaded, NoFiles, families, family, family_of, family_species, family_with};
 use crate::program::{Entry, Species};
@@ -11,9 +11,6 @@ use crate::syntax::tree::{SpeciesName, Statement, Text, Use, UseFrom, Word};
 
 /// How the identity of a shipped family begins; its warnings are answered where it is made.
 const LIBRARY: &str = "library:";
-
-/// The species of a file, or `None` where the file is at fault and that is reported.
-pub(super) type FileSpecies = Option<Vec<Species>>;
 
 impl Checker<'_> {
     pub(super) fn import(&mut self, line: &Use, span: Span) {

@@ -1,6 +1,6 @@
 //! Mixtures: species with their shares, and what a material's name means.
 
-use super::checker::{Checker, Declared, Material};
+use super::checker::{Blend, Checker, Declared, Material};
 use super::datum::About;
 use super::names::declared_twice;
 use crate::diagnostic::{Code, Diagnostic};
@@ -12,12 +12,6 @@ use crate::units::{Dimension, Kind};
 
 /// By how much shares may miss 100 % before they are refused.
 const CLOSURE: f64 = 1e-8;
-
-/// A mixture: its constituents with their shares by mass.
-#[derive(Debug, Clone, PartialEq)]
-pub(super) struct Blend {
-    pub(super) portions: Vec<(Constituent, f64)>,
-}
 
 /// In what the shares are counted.
 #[derive(Clone, Copy, PartialEq, Eq)]

@@ -19,6 +19,7 @@ mod expression;
 mod heat_capacity;
 mod import;
 mod input;
+mod known;
 mod later;
 mod law_formula;
 mod literal;

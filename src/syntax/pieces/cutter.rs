@@ -6,6 +6,18 @@ use crate::span::{FileId, Span};
 use crate::syntax::words::{self, STATEMENTS};
 use std::ops::Range;
 
+/// Cuts a text.
+pub(in crate::syntax) fn cut(file: FileId, text: &str) -> Cut {
+    let mut cutter = Cutter::new(file, text);
+    let mut start = 0;
+    while start < text.len() {
+        let end = text[start..].find('\n').map_or(text.len(), |at| start + at);
+        cutter.line(start, end);
+        start = end + 1;
+    }
+    cutter.finish()
+}
+
 /// A block that is open: its opening line, the brace, and what it holds so far.
 struct Block {
     head: Range<usize>,

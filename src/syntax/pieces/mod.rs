@@ -8,4 +8,5 @@ mod cutter;
 mod mark;
 mod piece;
 
-pub(super) use piece::{Cut, Piece, cut};
+pub(super) use cutter::cut;
+pub(super) use piece::{Cut, Piece};

@@ -1,8 +1,6 @@
 //! What the cutter makes.
 
-use super::cutter::Cutter;
 use crate::diagnostic::Diagnostic;
-use crate::span::FileId;
 use std::ops::Range;
 
 /// How deep brackets may nest.
@@ -31,16 +29,4 @@ pub(in crate::syntax) struct Cut {
     pub(in crate::syntax) pieces: Vec<Piece>,
     /// What could not be cut.
     pub(in crate::syntax) diagnostics: Vec<Diagnostic>,
-}
-
-/// Cuts a text.
-pub(in crate::syntax) fn cut(file: FileId, text: &str) -> Cut {
-    let mut cutter = Cutter::new(file, text);
-    let mut start = 0;
-    while start < text.len() {
-        let end = text[start..].find('\n').map_or(text.len(), |at| start + at);
-        cutter.line(start, end);
-        start = end + 1;
-    }
-    cutter.finish()
 }
