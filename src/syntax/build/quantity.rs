@@ -49,8 +49,7 @@ impl Builder<'_> {
         for part in parts(pair) {
             match part.as_rule() {
                 Rule::minus => negative = true,
-                Rule::literal => literal = self.literal(part),
-                _ => {}
+                _ => literal = self.literal(part),
             }
         }
         Some(Datum { negative, literal: literal?, span })
@@ -58,21 +57,12 @@ impl Builder<'_> {
 
     /// A coefficient's value; blanks in the numerator of its unit are products.
     pub(super) fn coefficient_datum(&mut self, pair: Pair<'_, Rule>) -> Option<Datum> {
-        let span = self.span(&pair);
-        let mut negative = false;
-        let mut literal = None;
-        for part in parts(pair) {
-            match part.as_rule() {
-                Rule::minus => negative = true,
-                _ => literal = self.literal(part),
-            }
-        }
-        let mut literal = literal?;
-        if let Some(unit) = &mut literal.unit {
+        let mut datum = self.datum(pair)?;
+        if let Some(unit) = &mut datum.literal.unit {
             let (numerator, rest) = unit.text.split_at(unit.text.find('/').unwrap_or(unit.text.len()));
             unit.text = format!("{}{rest}", numerator.split_whitespace().collect::<Vec<_>>().join("·"));
         }
-        Some(Datum { negative, literal, span })
+        Some(datum)
     }
 
     /// `for A to B`, `over A to B`: two data.
