@@ -88,7 +88,7 @@ impl Teller<'_> {
                     format!("`{step}` is at constant volume, but leads from {x} m3 to {y} m3"),
                     "this step",
                 )
-                .help("leave the pressure at the end open, `at TEMPERATURE, ?`, so that the step settles it"),
+                .help("leave the pressure at the end open, `at TEMPERATURE, ?`, so that the step settles it; condensed matter alone needs one constant density"),
             Check::Conserved => {
                 let what = match &self.origin.kind {
                     OriginKind::Conserved(_, name) => name.as_str(),
