@@ -41,6 +41,8 @@ pub(super) struct Cutter<'a> {
     blocks: Vec<Block>,
     brackets: Vec<usize>,
     pub(super) entry: Option<Entry>,
+    /// Brackets that a new line closed early: as many closing ones may still come.
+    orphans: usize,
     pub(super) diagnostics: Vec<Diagnostic>,
 }
 
@@ -54,6 +56,7 @@ impl<'a> Cutter<'a> {
             blocks: Vec::new(),
             brackets: Vec::new(),
             entry: None,
+            orphans: 0,
             diagnostics: Vec::new(),
         }
     }
@@ -82,12 +85,13 @@ impl Cutter<'_> {
 
     /// A statement word at the start of a line closes whatever is still open.
     fn meet_statement_word(&mut self, first: usize, end: usize) {
-        if self.entry.is_none() && self.blocks.is_empty() {
+        if self.entry.is_none() && self.blocks.is_empty() && self.orphans == 0 {
             return;
         }
         if starts_statement(&self.source[first..end], self.in_sheet_block()) {
             self.close_entry_early();
             self.close_blocks();
+            self.orphans = 0;
         }
     }
 
@@ -215,6 +219,11 @@ impl Cutter<'_> {
                 self.end_entry();
                 self.close_block(false);
             }
+            None if self.orphans > 0 => {
+                // its partner was closed early, and that is told
+                self.orphans -= 1;
+                self.break_entry(at);
+            }
             None => {
                 let message = format!("`{}` without its partner", char::from(self.source[at]));
                 self.diagnostics.push(
@@ -276,6 +285,7 @@ impl Cutter<'_> {
 
     /// Ends an entry whose brackets are still open, because something new begins.
     fn close_entry_early(&mut self) {
+        self.orphans = self.brackets.len();
         if let Some(&open) = self.brackets.first() {
             if !self.entry.as_ref().is_some_and(|entry| entry.broken) {
                 self.report_open(open);
