@@ -21,6 +21,13 @@ pub(super) fn species(arguments: &SpeciesArguments) -> Status {
         return print(&text, Status::Well);
     };
     let found = found(&pages, word);
+    if found.is_empty() && arguments.format == Format::Text {
+        let family: Vec<SpeciesPage> =
+            pages.iter().filter(|page| page.family.eq_ignore_ascii_case(word.trim())).cloned().collect();
+        if !family.is_empty() {
+            return print(&render_species_list(&family), Status::Well);
+        }
+    }
     if found.is_empty() {
         return unknown(&pages, word);
     }
