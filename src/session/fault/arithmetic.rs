@@ -45,7 +45,7 @@ impl Teller<'_> {
                 .found(
                     Code::NotFinite,
                     "a heat capacity on a transition, where heat changes no temperature".to_owned(),
-                    "asked here",
+                    "of this state",
                 )
                 .help("ask for it beside the transition"),
             Fault::NoGas => {
