@@ -91,10 +91,10 @@ impl Saturation {
             return Err(SaturationFault::BelowMelting);
         }
         let ranges = data.phases.get(link).map_or(&[][..], |phase| &phase.ranges);
-        if let (Some(first), Some(last)) = (ranges.first(), ranges.last()) {
-            if lo + shift > last.hi.value || hi + shift < first.lo.value {
-                return Err(SaturationFault::BeyondLiquid { lo: first.lo, hi: last.hi });
-            }
+        if let (Some(first), Some(last)) = (ranges.first(), ranges.last())
+            && (lo + shift > last.hi.value || hi + shift < first.lo.value)
+        {
+            return Err(SaturationFault::BeyondLiquid { lo: first.lo, hi: last.hi });
         }
         Ok(Some(Saturation { link, normal, law, shift, lo: law.end(lo), hi: law.end(hi) }))
     }
