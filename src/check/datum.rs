@@ -166,15 +166,15 @@ impl Checker<'_> {
     fn percent_width(&mut self, number: f64, whole: &tree::Interval, about: About) -> Option<f64> {
         let text = self.written(about.span);
         if about.kind == Kind::Point {
-            let (sort, unit) = if about.dimension == Dimension::PRESSURE {
-                ("a gauge reading", "bar")
+            let (sort, width) = if about.dimension == Dimension::PRESSURE {
+                ("a gauge reading", "0.1 bar")
             } else {
-                ("a temperature", "K")
+                ("a temperature", "5 K")
             };
             self.report(
                 Diagnostic::new(Code::PercentOfReading, format!("a percentage of {sort}, `{text}`"))
                     .label(whole.span, "a percentage of what? The scale's zero is a convention")
-                    .help(format!("give the interval in {unit}: `± 5 {unit}`")),
+                    .help(format!("give the interval as a difference, such as `± {width}`")),
             );
             return None;
         }

@@ -63,7 +63,7 @@ impl Checker<'_> {
         let help = match (family_of(&name.name), nearest(&name.name, names.iter().copied())) {
             (Some(family), _) => format!("write `use {} from {family}`", name.name),
             (None, Some(near)) => format!("did you mean `{near}`?"),
-            (None, None) => format!("it holds {}", names.into_iter().take(20).collect::<Vec<_>>().join(", ")),
+            (None, None) => format!("it holds {}", all_or_first(&names)),
         };
         self.report(found.help(help));
         None
@@ -181,4 +181,13 @@ pub fn check_family(name: &str) -> Option<Vec<Species>> {
     let file = sources.add(file_name.clone(), text);
     let mut checker = Checker::new(&mut sources, &NoFiles, String::new());
     checker.read_species(file, text, &format!("{LIBRARY}{name}"), &file_name)
+}
+
+/// Some thirty names, and how many more there are.
+fn all_or_first(names: &[&str]) -> String {
+    let shown = names.iter().take(30).copied().collect::<Vec<_>>().join(", ");
+    match names.len().saturating_sub(30) {
+        0 => shown,
+        more => format!("{shown} and {more} more"),
+    }
 }

@@ -277,6 +277,8 @@ impl Checker<'_> {
                 continue;
             };
             let name = species.name.clone();
+            let solid = species.phases.iter().any(|phase| phase.class == PhaseClass::Solid);
+            let symbols = if solid { format!("`{name}(s)`, `{name}(l)`") } else { format!("`{name}(l)`") };
             self.report(
                 Diagnostic::new(
                     Code::SymbolWanted,
@@ -286,11 +288,28 @@ impl Checker<'_> {
                     *span,
                     "its partial pressure is not the total pressure, so that the phase does not follow",
                 )
-                .help(format!("write `{name}(g)` or `{name}(l)` where its matter is declared")),
+                .help(match self.melting_beside(parts, part).filter(|_| beside == "liquid") {
+                    Some(other) => format!(
+                        "write {symbols} or `{name}(g)` where its matter is declared; or `{other}(s)`, if that stays solid"
+                    ),
+                    None => format!("write {symbols} or `{name}(g)` where its matter is declared"),
+                }),
             );
             return None;
         }
         Some(())
+    }
+
+    /// Another species that could be solid as well as liquid.
+    fn melting_beside(&self, parts: &[Constituent], part: &Constituent) -> Option<String> {
+        let both = |other: &&Constituent| {
+            other.species != part.species
+                && other.pin == Pin::Stable
+                && self.can_be(other, PhaseClass::Solid)
+                && self.can_be(other, PhaseClass::Liquid)
+        };
+        let other = parts.iter().find(both)?;
+        Some(self.program.species.get(other.species.0)?.name.clone())
     }
 
     fn can_be(&self, part: &Constituent, class: PhaseClass) -> bool {

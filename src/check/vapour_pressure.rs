@@ -105,6 +105,9 @@ impl Checker<'_> {
         if read.unit.dimension != wanted {
             let found = with_dimension(read.unit.dimension);
             let help = match wanted {
+                Dimension::PRESSURE if name == "pc" => {
+                    "write the critical pressure with its unit, such as `pc = 61.3 bar`"
+                }
                 Dimension::PRESSURE => "publications differ: write the unit of theirs, such as `p = 1 bar`",
                 Dimension::TEMPERATURE => "write it in K; for a publication in degC add `t0 = 0 degC`",
                 _ => "take the unit away: the published form fixes it",
@@ -192,6 +195,13 @@ pub(super) fn misfit(fault: SaturationFault, span: Span) -> Diagnostic {
                 temperature.value
             ),
             "check the publication's unit of pressure, its logarithm (`antoine`, `antoine_ln`) and its zero of temperature (`t0`)",
+        ),
+        SaturationFault::BeyondLiquid { lo, hi } => (
+            format!(
+                "a vapour pressure whose range does not meet that of its liquid, {} K to {} K",
+                lo.value, hi.value
+            ),
+            "check whether its range is in K or in degC",
         ),
         SaturationFault::BelowMelting => (
             "a vapour pressure whose range lies below the melting of the liquid".to_owned(),

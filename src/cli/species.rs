@@ -13,16 +13,15 @@ use crate::session::library_pages;
 /// Prints the list, or the pages that a word finds.
 pub(super) fn species(arguments: &SpeciesArguments) -> Status {
     let pages = library_pages();
-    let Some(word) = &arguments.word else {
-        let text = match arguments.format {
-            Format::Text => render_species_list(&pages),
-            Format::Json => render_species_list_json(&pages),
-        };
-        return print(&text, Status::Well);
-    };
+    let Some(word) = &arguments.word else { return print(&list(&pages, arguments.format), Status::Well) };
     let found = found(&pages, word);
     if found.is_empty() {
-        return unknown(&pages, word);
+        let family = family(&pages, word);
+        return if family.is_empty() {
+            unknown(&pages, word)
+        } else {
+            print(&list(&family, arguments.format), Status::Well)
+        };
     }
     let text = match arguments.format {
         Format::Json => render_species_json(&found),
@@ -31,6 +30,18 @@ pub(super) fn species(arguments: &SpeciesArguments) -> Status {
         }
     };
     print(&text, Status::Well)
+}
+
+fn list(pages: &[SpeciesPage], format: Format) -> String {
+    match format {
+        Format::Text => render_species_list(pages),
+        Format::Json => render_species_list_json(pages),
+    }
+}
+
+/// The species of a family that a word names.
+fn family(pages: &[SpeciesPage], word: &str) -> Vec<SpeciesPage> {
+    pages.iter().filter(|page| page.family.eq_ignore_ascii_case(word.trim())).cloned().collect()
 }
 
 fn page_text(page: &SpeciesPage, plot: bool) -> String {

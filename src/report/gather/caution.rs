@@ -60,17 +60,21 @@ fn closed_volume(sheet: &WorkedSheet<'_>, step: &Step, found: &mut Vec<Diagnosti
     }
 }
 
-fn water_beside_hot(sheet: &WorkedSheet<'_>, step: &Step, found: &mut Vec<Diagnostic>) {
-    let contents = |id: &StateId| sheet.contents(*id);
-    let Some((water, boiling)) = step.from.iter().flat_map(contents).find_map(|(part, _, place)| {
+/// Liquid water in a state: its name and its boiling point.
+fn liquid_water(sheet: &WorkedSheet<'_>, id: StateId) -> Option<(String, f64)> {
+    sheet.contents(id).into_iter().find_map(|(part, _, place)| {
         let species = sheet.program.species.get(part.species.0)?;
         let liquid = place.is_some_and(|place| class_at(species, place) == Some(PhaseClass::Liquid));
         let is_water = species.formula.as_ref().is_some_and(|(formula, _)| formula == "H2O");
         (is_water && liquid).then(|| (species.name.clone(), boiling_point(species)))
-    }) else {
-        return;
-    };
-    let hottest = step.from.iter().map(|id| temperature(sheet, *id)).fold(f64::NEG_INFINITY, f64::max);
+    })
+}
+
+/// Water that is hot itself, under pressure, stands beside nothing.
+fn water_beside_hot(sheet: &WorkedSheet<'_>, step: &Step, found: &mut Vec<Diagnostic>) {
+    let Some((water, boiling)) = step.from.iter().find_map(|id| liquid_water(sheet, *id)) else { return };
+    let beside = step.from.iter().filter(|id| liquid_water(sheet, **id).is_none());
+    let hottest = beside.map(|id| temperature(sheet, *id)).fold(f64::NEG_INFINITY, f64::max);
     if hottest > boiling {
         let message = format!(
             "`{}` brings `{water}` beside something at {} degC",

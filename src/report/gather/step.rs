@@ -224,6 +224,7 @@ impl WorkedSheet<'_> {
             let Some(species) = self.program.species.get(id.0) else { continue };
             for leg in legs {
                 let thermo::LegKind::Transition { link: Some(link), .. } = leg.kind else { continue };
+                notes.extend(self.boils_short_of(step, id, link, leg.from.value));
                 let Some(latent) = species
                     .curve
                     .boiling_latent(leg.from)
@@ -240,6 +241,24 @@ impl WorkedSheet<'_> {
             }
         }
         notes
+    }
+
+    /// A way over the stated boiling point where the vapour pressure has another, which the data do not reach.
+    fn boils_short_of(&self, step: &Step, id: SpeciesId, link: usize, kelvin: f64) -> Option<String> {
+        let species = self.program.species.get(id.0)?;
+        let gas = species.curve.phase_class(link + 1) == Some(PhaseClass::Gas);
+        species.curve.vapour_pressure().filter(|_| gas)?;
+        let slots = self.map.states.get(step.to.first()?.0)?;
+        let pressure = self.value(slots.pressure);
+        let boils = species.curve.boiling_temperature(quantity(pressure)).ok()?.value;
+        (boils != kelvin && species.curve.transition(link)?.from.value == kelvin).then(|| {
+            format!(
+                "{} boils at {} K at {} kPa abs, which the data of its liquid or its gas do not reach by themselves: the legs go over its stated boiling point, and what is latent is the latent heat there. The sum of the legs does not depend on this.",
+                species.name,
+                significant(boils, 6),
+                significant(pressure / 1e3, 6)
+            )
+        })
     }
 
     /// Several species on one plateau: an enthalpy does not say how far each of them is.

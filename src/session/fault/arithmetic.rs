@@ -45,7 +45,7 @@ impl Teller<'_> {
                 .found(
                     Code::NotFinite,
                     "a heat capacity on a transition, where heat changes no temperature".to_owned(),
-                    "asked here",
+                    "of this state",
                 )
                 .help("ask for it beside the transition"),
             Fault::NoGas => {
@@ -71,10 +71,10 @@ impl Teller<'_> {
                 let why = if amount > 0.0 {
                     format!("{} m3 are left for its gas", significant(volume, 4))
                 } else {
-                    "it holds no gas".to_owned()
+                    "it holds no gas at its temperature".to_owned()
                 };
                 self.found(Code::Unreachable, format!("no pressure of `{state}` fills the volume: {why}"), "this step")
-                    .help("liquids and solids are taken as incompressible: a volume full of them has no pressure of its own here")
+                    .help("liquids and solids are taken as incompressible: a volume full of them has no pressure of its own here; that of a vapour which condenses is its vapour pressure, which is not worked by this version")
             }
             _ => self
                 .found(Code::NotFinite, "a value beyond the range of a double".to_owned(), "worked here")

@@ -29,7 +29,7 @@ pub(in crate::session) fn circle(program: &Program, step: StepId, state: StateId
     )
     .label(place, "unknown here")
     .label(span, "this step would settle it, and needs it first")
-    .help("let the heat, work and losses of the step depend on known values only")
+    .help("let the heat, work, losses and amounts of the step depend on known values only; a volume is counted at the temperature and pressure of its own state")
 }
 
 /// A failure as a diagnostic.

@@ -88,6 +88,13 @@ impl Teller<'_> {
                     "name the phase where its matter is declared, such as `{}`",
                     species.map_or(String::new(), |species| beside_boiling(species, kelvin > at.value))
                 )),
+            LocateError::NoTransition if self.inherits_share() => self
+                .found(
+                    Code::ShareWithoutPlateau,
+                    format!("`{state}` keeps the temperature and the share of a phase of the state it is made from, but no transition of `{name}` lies within 0.5 K of {here} at its pressure"),
+                    format!("at {here}"),
+                )
+                .help(format!("say its temperature or `saturated vapour`, or write `at ?, {} kPa` and let a step settle it", significant(pascal / 1e3, 6))),
             LocateError::NoTransition => self
                 .found(
                     Code::ShareWithoutPlateau,

@@ -2,7 +2,7 @@
 
 use crate::diagnostic::{Code, Diagnostic};
 use crate::plan::{Origin, OriginKind};
-use crate::program::{Program, Species};
+use crate::program::{Condition, Program, Species};
 use crate::report::number::significant;
 use crate::units::{Dimension, engineering_unit};
 
@@ -27,6 +27,13 @@ impl Teller<'_> {
         let Some(state) = self.program.states.get(id.0) else { return ("", None) };
         let species = state.constituents.get(at).and_then(|part| self.program.species.get(part.species.0));
         (&state.name, species)
+    }
+
+    /// Whether the state at fault keeps a share of a phase that another state says.
+    pub(super) fn inherits_share(&self) -> bool {
+        let OriginKind::State(id, _) = &self.origin.kind else { return false };
+        let state = self.program.states.get(id.0);
+        state.is_some_and(|state| state.share.is_none() && matches!(state.temperature, Condition::Of(_)))
     }
 
     pub(super) fn step(&self) -> &str {

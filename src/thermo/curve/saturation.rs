@@ -34,6 +34,13 @@ pub enum SaturationFault {
         /// What the law gives there.
         pressure: Pressure,
     },
+    /// Its range does not meet the temperatures over which the liquid has data.
+    BeyondLiquid {
+        /// Where the data of the liquid begin.
+        lo: ThermodynamicTemperature,
+        /// Where they end.
+        hi: ThermodynamicTemperature,
+    },
     /// Its range lies below the melting of the liquid.
     BelowMelting,
 }
@@ -82,6 +89,12 @@ impl Saturation {
         let lo = melting.map_or(lo, |(_, end)| lo.max(end - shift));
         if lo >= hi {
             return Err(SaturationFault::BelowMelting);
+        }
+        let ranges = data.phases.get(link).map_or(&[][..], |phase| &phase.ranges);
+        if let (Some(first), Some(last)) = (ranges.first(), ranges.last())
+            && (lo + shift > last.hi.value || hi + shift < first.lo.value)
+        {
+            return Err(SaturationFault::BeyondLiquid { lo: first.lo, hi: last.hi });
         }
         Ok(Some(Saturation { link, normal, law, shift, lo: law.end(lo), hi: law.end(hi) }))
     }
