@@ -1,5 +1,7 @@
 //! The unit for a value that asks for none.
 
+use std::sync::OnceLock;
+
 use super::dimension::Dimension;
 use super::read::read_unit;
 use super::unit::Unit;
@@ -49,16 +51,20 @@ const SHOWN: &[(Dimension, &[&str])] = &[
     (Dimension::LUMINOUS_INTENSITY, &["cd"]),
 ];
 
+/// The units of each row above, read when first asked for.
+static READ: [OnceLock<Vec<Unit>>; SHOWN.len()] = [const { OnceLock::new() }; SHOWN.len()];
+
 /// A unit in which an engineer would read a value of this dimension, given in the coherent SI unit. A dimension
 /// without a usual unit gets the product of base units, such as `kg m-1 s-2`.
 pub fn engineering_unit(dimension: Dimension, si: f64) -> Unit {
-    let Some((_, texts)) = SHOWN.iter().find(|(shown, _)| *shown == dimension) else {
-        return Unit::coherent(dimension);
-    };
-    let units =
-        || texts.iter().map(|text| read_unit(text).expect("the texts above are units, which a test holds"));
-    let reached = units().take_while(|unit| si.is_finite() && si.abs() >= unit.factor).last();
-    reached.or_else(|| units().next()).unwrap_or_else(|| Unit::coherent(dimension))
+    let row = SHOWN.iter().zip(&READ).find(|((shown, _), _)| *shown == dimension);
+    let Some(((_, texts), read)) = row else { return Unit::coherent(dimension) };
+    let units = read.get_or_init(|| {
+        let unit = |text: &&str| read_unit(text).expect("the texts above are units, which a test holds");
+        texts.iter().map(unit).collect()
+    });
+    let reached = units.iter().take_while(|unit| si.is_finite() && si.abs() >= unit.factor).last();
+    reached.or(units.first()).cloned().unwrap_or_else(|| Unit::coherent(dimension))
 }
 
 #[cfg(test)]

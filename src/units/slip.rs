@@ -112,11 +112,13 @@ fn named(word: &str) -> Option<String> {
 /// A word all in small letters may stand for any prefix, so the commonest is taken; else the fewest letters change.
 fn case_slip(word: &str) -> Option<String> {
     let folded = word.to_lowercase();
-    let mut slips = candidates().filter(|candidate| candidate.to_lowercase() == folded);
-    if word == folded {
-        return slips.next();
-    }
-    slips.min_by_key(|candidate| candidate.chars().zip(word.chars()).filter(|(a, b)| a != b).count())
+    let mut slips = candidates().filter(|candidate| candidate.folded().eq(folded.chars()));
+    let found = if word == folded {
+        slips.next()
+    } else {
+        slips.min_by_key(|candidate| candidate.letters().zip(word.chars()).filter(|(a, b)| a != b).count())
+    };
+    found.map(Candidate::text)
 }
 
 /// Two units without a product sign, as the product in parentheses: it can stand below a solidus as well.
@@ -135,29 +137,60 @@ fn letter_slip(word: &str) -> Option<String> {
     }
     let allowed = (length / 3).max(1);
     let folded: Vec<char> = word.to_lowercase().chars().collect();
+    let mut letters = Vec::new();
+    let mut edits_to = |candidate: &Candidate| {
+        letters.clear();
+        letters.extend(candidate.folded());
+        // at least as many edits as the lengths differ by
+        let near = letters.len().abs_diff(folded.len()) <= allowed;
+        near.then(|| edits(&folded, &letters)).filter(|edits| *edits <= allowed)
+    };
     candidates()
-        .map(|candidate| (edits(&folded, &candidate.to_lowercase().chars().collect::<Vec<_>>()), candidate))
-        .filter(|(edits, candidate)| *edits <= allowed && *edits + 1 < candidate.chars().count())
+        .filter_map(|candidate| Some((edits_to(&candidate)?, candidate)))
+        .filter(|(edits, candidate)| *edits + 1 < candidate.letters().count())
         .min_by_key(|(edits, _)| *edits)
-        .map(|(_, candidate)| candidate)
+        .map(|(_, candidate)| candidate.text())
+}
+
+/// A unit's symbol, with a prefix before it or an empty text.
+#[derive(Debug, Clone, Copy)]
+struct Candidate {
+    prefix: &'static str,
+    symbol: &'static str,
+}
+
+impl Candidate {
+    fn text(self) -> String {
+        format!("{}{}", self.prefix, self.symbol)
+    }
+
+    fn letters(self) -> impl Iterator<Item = char> {
+        self.prefix.chars().chain(self.symbol.chars())
+    }
+
+    /// Its letters as small ones.
+    fn folded(self) -> impl Iterator<Item = char> {
+        self.letters().flat_map(char::to_lowercase)
+    }
 }
 
 /// Every unit's symbol, plain and with the common prefixes that it takes, what is plain first. Nobody means a `GK`.
-fn candidates() -> impl Iterator<Item = String> {
+fn candidates() -> impl Iterator<Item = Candidate> {
     let prefixes = COMMON.iter().filter_map(|ten| PREFIXES.iter().find(|prefix| prefix.ten == *ten));
     let ways = std::iter::once(None).chain(prefixes.map(Some));
     ways.flat_map(|way: Option<&'static Prefix>| {
         let entries = FAMILIES.iter().flat_map(|family| family.iter());
         entries.flat_map(move |entry| {
-            entry.spellings().filter_map(move |spelling| match way {
-                None => Some(spelling.to_owned()),
-                Some(prefix) => {
-                    let symbol = prefix.symbols.first().filter(|_| {
+            let prefix =
+                match way {
+                    None => Some(""),
+                    Some(prefix) => prefix.symbols.first().copied().filter(|_| {
                         entry.prefixes.admit(prefix) && entry.dimension != Dimension::TEMPERATURE
-                    })?;
-                    Some(format!("{symbol}{spelling}"))
-                }
-            })
+                    }),
+                };
+            prefix
+                .into_iter()
+                .flat_map(|prefix| entry.spellings().map(move |symbol| Candidate { prefix, symbol }))
         })
     })
 }
@@ -265,7 +298,7 @@ mod tests {
         for (_, offered) in ELSEWHERE {
             assert!(read_unit(offered).is_ok(), "{offered}");
         }
-        for offered in candidates() {
+        for offered in candidates().map(Candidate::text) {
             assert!(read_unit(&offered).is_ok(), "{offered}");
         }
     }

@@ -129,6 +129,11 @@ impl Page {
     }
 
     fn filled(&self, first: &str, indent: &str, text: &str) -> Vec<String> {
+        // most texts fit on their line, where the search for the best line ends would only cost time
+        let rest = text.trim_end_matches(' ');
+        if !rest.is_empty() && display_width(first) + display_width(rest) <= self.columns() {
+            return vec![format!("{first}{rest}").replace(BOUND, " ")];
+        }
         let options = Options::new(self.columns())
             .initial_indent(first)
             .subsequent_indent(indent)
@@ -148,23 +153,34 @@ fn lead(mark: &str) -> String {
 
 /// The blanks between a number and its unit, bound so that no line ends there.
 fn bound(text: &str) -> String {
-    let chars: Vec<char> = text.chars().collect();
-    let joins = |at: usize| {
-        let before = at.checked_sub(1).and_then(|at| chars.get(at)).is_some_and(char::is_ascii_digit);
-        before && chars.get(at + 1).is_some_and(|c| c.is_alphabetic() || matches!(c, '%' | '°'))
-    };
-    chars.iter().enumerate().map(|(at, c)| if *c == ' ' && joins(at) { BOUND } else { *c }).collect()
+    let mut out = String::with_capacity(text.len() + 16);
+    let mut chars = text.chars().peekable();
+    let mut behind_digit = false;
+    while let Some(c) = chars.next() {
+        let before_unit = chars.peek().is_some_and(|c| c.is_alphabetic() || matches!(c, '%' | '°'));
+        out.push(if c == ' ' && behind_digit && before_unit { BOUND } else { c });
+        behind_digit = c.is_ascii_digit();
+    }
+    out
 }
 
 /// A text without control characters and without marks that turn the direction of writing; a line end becomes a blank.
 pub(super) fn clean(text: &str) -> String {
-    let kept = |c: char| match c {
+    if text.chars().all(|c| kept(c) == Some(c)) {
+        return text.to_owned();
+    }
+    text.chars().filter_map(kept).collect()
+}
+
+/// A character as it may stand on the page; none where it may not.
+fn kept(c: char) -> Option<char> {
+    match c {
+        ' '..='~' => Some(c),
         '\n' | '\t' => Some(' '),
         '\u{200e}' | '\u{200f}' | '\u{202a}'..='\u{202e}' | '\u{2066}'..='\u{2069}' => None,
         c if c.is_control() => None,
         c => Some(c),
-    };
-    text.chars().filter_map(kept).collect()
+    }
 }
 
 #[cfg(test)]
