@@ -3,10 +3,19 @@
 use super::checker::Checker;
 use super::wanted::{mass_against_amount, with_dimension};
 use crate::diagnostic::{Code, Diagnostic};
-use crate::program::{Expr, Node};
+use crate::program::{Expr, Node, StateMember};
 use crate::span::Span;
 use crate::syntax::tree::{Expression, ExpressionKind, Factor};
 use crate::units::{self, Dimension, Kind, KindClash};
+
+/// The kind of a term in a sum. The temperature of a state is open, but what is less by it is a difference: `out.T -
+/// bath.T in degC` would show a rise as a reading.
+fn taken(so_far: Kind, term: &Expr) -> Kind {
+    match term.node {
+        Node::State(_, StateMember::Temperature) if so_far != Kind::Difference => Kind::Point,
+        _ => term.kind,
+    }
+}
 
 impl Checker<'_> {
     pub(super) fn sum(&mut self, terms: &[(bool, Expression)], span: Span) -> Option<Expr> {
@@ -23,8 +32,11 @@ impl Checker<'_> {
                 self.unlike_sum(first, term, *taken_away);
                 return None;
             }
-            let together =
-                if *taken_away { units::difference } else { units::sum }(dimension, kind, term.kind);
+            let together = if *taken_away {
+                units::difference(dimension, kind, taken(kind, term))
+            } else {
+                units::sum(dimension, kind, term.kind)
+            };
             match together {
                 Ok(next) => kind = next,
                 Err(clash) => {

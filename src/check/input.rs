@@ -5,7 +5,7 @@ use super::datum::About;
 use super::names::declared_twice;
 use super::wanted::with_dimension;
 use crate::diagnostic::{Code, Diagnostic};
-use crate::program::{Entry, Expr, Quantity, QuantityId, Role};
+use crate::program::{Entry, Expr, Node, Quantity, QuantityId, Role, StateMember};
 use crate::span::Span;
 use crate::syntax::tree::{
     Datum, Expression, ExpressionKind, Input, InputRole, InputValue, Suffixes, UnitText, Word,
@@ -126,7 +126,7 @@ impl Checker<'_> {
             );
             return Some(None);
         }
-        if unit.zero != Zero::None && value.kind == Kind::Difference {
+        if unit.zero != Zero::None && (value.kind == Kind::Difference || is_pressure_drop(value)) {
             let plain = if unit.is_gauge() { "bar" } else { "K" };
             self.report(
                 Diagnostic::new(
@@ -207,6 +207,17 @@ fn is_literal(expression: &Expression) -> bool {
     match &expression.kind {
         ExpressionKind::Literal(_) => true,
         ExpressionKind::Negative(inner) => matches!(inner.kind, ExpressionKind::Literal(_)),
+        _ => false,
+    }
+}
+
+/// What is less by the pressure of a state serves as a pressure, a partial one, but is no reading of a gauge.
+fn is_pressure_drop(value: &Expr) -> bool {
+    let of_state = |term: &Expr| matches!(term.node, Node::State(_, StateMember::Pressure));
+    match &value.node {
+        Node::Sum(terms) => {
+            value.kind == Kind::Open && terms.iter().any(|(taken, term)| *taken && of_state(term))
+        }
         _ => false,
     }
 }

@@ -295,3 +295,31 @@ fn a_file_beyond_the_limit_is_refused_by_its_size() {
     assert_eq!(ran.status, Some(2));
     assert!(ran.stderr.starts_with("error S110\n"), "{}", ran.stderr);
 }
+
+#[test]
+fn species_lists_a_family_by_its_name() {
+    let ran = heatpath(&["species", "Salts"]);
+    assert_eq!((ran.status, ran.stderr.as_str()), (Some(0), ""));
+    assert!(ran.stdout.contains("NaCl") && !ran.stdout.contains("Zn"), "{}", ran.stdout);
+    let json: Value = serde_json::from_str(&heatpath(&["species", "salts", "--format", "json"]).stdout)
+        .expect("the list is JSON");
+    let families = json["species"].as_array().expect("a list of species").iter().map(|one| &one["family"]);
+    assert!(families.clone().count() > 3 && families.clone().all(|family| family == "salts"), "{json}");
+    let water = heatpath(&["species", "water"]);
+    assert!(water.stdout.starts_with("H2O  water"), "a species comes before a family: {}", water.stdout);
+}
+
+/// The liquid of the library's ethanol has data to 390 K, and it boils at 424 K at 10 bar: what is latent is then that
+/// of the stated boiling point, and the report says so.
+#[test]
+fn a_way_over_the_stated_boiling_point_is_told() {
+    let sheet = "use C2H5OH from solvents\nstate cold = 1 kg of C2H5OH at 20 degC, 10 bar\nstate hot = cold at 170 degC\n\
+        step boil: cold -> hot, at constant pressure\nresult q = boil.Q in kJ\n";
+    let path = scratch("over_stated_boiling").join("sheet.heat");
+    std::fs::write(&path, sheet).expect("the folder is ours");
+    let ran = heatpath(&["run".as_ref(), path.as_os_str()]);
+    assert_eq!(ran.status, Some(0), "{}", ran.stderr);
+    let words = ran.stdout.split_whitespace().collect::<Vec<_>>().join(" ");
+    assert!(words.contains("C2H5OH boils at 424.133 K at 1000 kPa abs"), "{}", ran.stdout);
+    assert!(words.contains("the legs go over its stated boiling point"), "{}", ran.stdout);
+}
