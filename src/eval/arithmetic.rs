@@ -128,9 +128,10 @@ pub(super) fn log_mean(a: f64, b: f64) -> f64 {
 
 /// A value that goes on where another is known.
 pub(super) fn known<const N: usize>(frame: &mut Frame<N>, value: Slot, given: Slot, to: Slot) {
-    let (value, given) = (frame.get(value), frame.get(given));
-    frame.slots[to.0 as usize] =
-        std::array::from_fn(|lane| if given[lane].is_nan() { f64::NAN } else { value[lane] });
+    let (value, given, out) = frame.two_to(value, given, to);
+    for lane in 0..N {
+        out[lane] = if given[lane].is_nan() { f64::NAN } else { value[lane] };
+    }
 }
 
 #[inline]
@@ -141,17 +142,38 @@ pub(super) fn guard<const N: usize>(
     [a, b, value]: [Slot; 3],
     to: Slot,
 ) {
-    let value = frame.slots[value.0 as usize];
-    let (x, y, out) = frame.two_to(a, b, to);
-    let mut all = true;
-    for lane in 0..N {
-        let good = holds(check, x[lane], y[lane]);
-        all &= good;
-        out[lane] = if good { value[lane] } else { f64::NAN };
-    }
+    let slots = [a, b, value];
+    let all = match check {
+        Check::PositiveAmount | Check::PositivePressure | Check::PositiveTime => {
+            pass(frame, slots, to, |a, b| holds(Check::PositiveAmount, a, b))
+        }
+        Check::Share | Check::Efficiency => pass(frame, slots, to, |a, b| holds(Check::Share, a, b)),
+        Check::Heating => pass(frame, slots, to, |a, b| holds(Check::Heating, a, b)),
+        check => pass(frame, slots, to, |a, b| holds(check, a, b)),
+    };
     if !all {
         refuse_unguarded(frame, at, check, [a, b], to);
     }
+}
+
+/// Lets the value pass in the lanes that are good; whether all are.
+#[inline]
+fn pass<const N: usize>(
+    frame: &mut Frame<N>,
+    [a, b, value]: [Slot; 3],
+    to: Slot,
+    good: impl Fn(f64, f64) -> bool,
+) -> bool {
+    let (known, open) = frame.slots.split_at_mut(to.0 as usize);
+    let (x, y, value) = (&known[a.0 as usize], &known[b.0 as usize], &known[value.0 as usize]);
+    let out = &mut open[0];
+    let mut all = true;
+    for lane in 0..N {
+        let good = good(x[lane], y[lane]);
+        all &= good;
+        out[lane] = if good { value[lane] } else { f64::NAN };
+    }
+    all
 }
 
 /// The lanes in which a check on numbers does not hold.

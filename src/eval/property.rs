@@ -148,6 +148,62 @@ pub(super) fn enthalpy<const N: usize>(
     }
 }
 
+/// Place and enthalpy in one: the place serves nothing else and is not kept.
+#[inline]
+pub(super) fn enthalpy_at<const N: usize>(
+    plan: &Plan,
+    frame: &mut Frame<N>,
+    at: usize,
+    which: u32,
+    [t, p]: [Slot; 2],
+    to: Slot,
+) {
+    let material = material(plan, which);
+    let curve = &*material.curve;
+    let (kelvin, pascal, out) = frame.two_to(t, p, to);
+    let mut all = false;
+    if let Some(plain) = curve.locator(material.pin, &material.allowance) {
+        all = true;
+        for lane in 0..N {
+            let place = plain.place(kelvin[lane], pascal[lane]).filter(|_| !pascal[lane].is_nan());
+            all &= place.is_some();
+            out[lane] = place.map_or(f64::NAN, |place| {
+                curve.enthalpy(place).value + pressure_enthalpy(curve, place, pascal[lane])
+            });
+        }
+    } else {
+        *out = [f64::NAN; N];
+    }
+    if !all {
+        enthalpy_at_others(frame, at, material, [t, p], to);
+    }
+}
+
+/// The lanes in which no place is plain.
+#[inline(never)]
+fn enthalpy_at_others<const N: usize>(
+    frame: &mut Frame<N>,
+    at: usize,
+    material: &Material,
+    [t, p]: [Slot; 2],
+    to: Slot,
+) {
+    let curve = &*material.curve;
+    for lane in 0..N {
+        let (t, p, out) = frame.two_to(t, p, to);
+        let (kelvin, pascal) = (t[lane], p[lane]);
+        if kelvin.is_nan() || pascal.is_nan() || !out[lane].is_nan() {
+            continue;
+        }
+        match curve.locate(quantity(kelvin), quantity(pascal), material.pin, None, &material.allowance) {
+            Ok(place) => {
+                out[lane] = curve.enthalpy(place).value + pressure_enthalpy(curve, place, pascal);
+            }
+            Err(error) => frame.fail(at, lane, Fault::Locate { error, kelvin, pascal }),
+        }
+    }
+}
+
 pub(super) fn internal_energy<const N: usize>(
     plan: &Plan,
     frame: &mut Frame<N>,

@@ -54,6 +54,7 @@ fn step<const N: usize>(plan: &Plan, frame: &mut Frame<N>, at: usize, op: &Op) {
             property::place(plan, frame, at, material, [t, p, share], to)
         }
         Op::Enthalpy { material, place, p, to } => property::enthalpy(plan, frame, material, place, p, to),
+        Op::EnthalpyAt { material, t, p, to } => property::enthalpy_at(plan, frame, at, material, [t, p], to),
         Op::InternalEnergy { material, place, to } => {
             property::internal_energy(plan, frame, at, material, place, to)
         }

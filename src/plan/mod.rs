@@ -6,9 +6,10 @@
 //!
 //! Guaranteed: an operation reads only slots that an earlier one has written, or inputs, and all of them have lower
 //! numbers than the slot it writes; whatever can fail passes its value through a guard, so that a Plan pruned to some
-//! outputs still guards them.
+//! outputs still guards them. Pruning merges operations, and changes no bit and no failure by it.
 
 mod lower;
+mod merge;
 mod op;
 mod prune;
 mod slots;

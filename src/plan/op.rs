@@ -195,6 +195,13 @@ pub enum Op {
         p: Slot,
         to: Slot,
     },
+    /// Enthalpy per mass at a written temperature, with the pressure's part; the place is not kept.
+    EnthalpyAt {
+        material: u32,
+        t: Slot,
+        p: Slot,
+        to: Slot,
+    },
     /// Internal energy per mass.
     InternalEnergy {
         material: u32,

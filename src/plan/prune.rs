@@ -1,9 +1,10 @@
 //! A Plan cut down to what some outputs need.
 
+use super::merge::merged;
 use super::op::{Op, Plan, Slot};
 
 /// The slots and places that an operation reads.
-fn reads(op: &Op, plan: &Plan, slot: &mut impl FnMut(Slot), place: &mut impl FnMut(u32)) {
+pub(super) fn reads(op: &Op, plan: &Plan, slot: &mut impl FnMut(Slot), place: &mut impl FnMut(u32)) {
     match *op {
         Op::Add { a, b, .. }
         | Op::Subtract { a, b, .. }
@@ -30,6 +31,7 @@ fn reads(op: &Op, plan: &Plan, slot: &mut impl FnMut(Slot), place: &mut impl FnM
             slot(p);
             side.into_iter().for_each(|(_, share)| slot(share));
         }
+        Op::EnthalpyAt { t, p, .. } => [t, p].into_iter().for_each(slot),
         Op::Place { t, p, share, .. } => [t, p, share].into_iter().for_each(slot),
         Op::Enthalpy { place: at, p, .. }
         | Op::Latent { place: at, p, .. }
@@ -87,6 +89,7 @@ fn writes(op: &Op) -> (Option<Slot>, Option<Slot>, Option<u32>) {
         | Op::Known { to, .. }
         | Op::Guard { to, .. }
         | Op::Enthalpy { to, .. }
+        | Op::EnthalpyAt { to, .. }
         | Op::InternalEnergy { to, .. }
         | Op::Latent { to, .. }
         | Op::BoilingTemperature { to, .. }
@@ -102,33 +105,36 @@ fn writes(op: &Op) -> (Option<Slot>, Option<Slot>, Option<u32>) {
 }
 
 impl Plan {
-    /// The operations that these outputs need, in order, as a Plan with the same slots.
+    /// The operations that these outputs need, in order, as a Plan with the same slots; places that serve one operation
+    /// alone are not kept.
     #[must_use]
     pub fn pruned(&self, outputs: &[Slot]) -> Plan {
         let needed = self.needed(outputs);
         let numbers: Vec<usize> = (0..self.ops.len()).filter(|at| needed[*at]).collect();
-        self.part(&numbers)
+        self.part(&numbers).0
     }
 
     /// The operations that lead from these inputs to these outputs: what a sweep over the inputs has to repeat. A Plan
-    /// with the same slots, and the numbers that its operations have in this one.
+    /// with the same slots, as [`Plan::pruned`] gives it, and the numbers that its operations have in this one.
     #[must_use]
     pub fn between(&self, inputs: &[Slot], outputs: &[Slot]) -> (Plan, Vec<usize>) {
         let (needed, varies) = (self.needed(outputs), self.varying(inputs));
         let numbers: Vec<usize> = (0..self.ops.len()).filter(|at| needed[*at] && varies[*at]).collect();
-        (self.part(&numbers), numbers)
+        self.part(&numbers)
     }
 
-    fn part(&self, numbers: &[usize]) -> Plan {
-        Plan {
-            ops: numbers.iter().map(|at| self.ops[*at]).collect(),
+    fn part(&self, numbers: &[usize]) -> (Plan, Vec<usize>) {
+        let (ops, numbers) = merged(self, numbers);
+        let plan = Plan {
+            ops,
             origins: numbers.iter().map(|at| self.origins[*at]).collect(),
             slots: self.slots,
             places: self.places,
             start: self.start.clone(),
             materials: self.materials.clone(),
             parts: self.parts.clone(),
-        }
+        };
+        (plan, numbers)
     }
 
     /// Which operations these outputs need.

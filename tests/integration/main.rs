@@ -7,6 +7,7 @@ mod examples;
 mod laws;
 mod library;
 mod library_values;
+mod merged;
 mod mutated;
 mod program;
 mod readme;

@@ -118,22 +118,23 @@ impl Page {
 
     /// The lines of a text behind a lead. A lead that leaves no room for text stands on a line of its own.
     fn wrapped(&self, lead: &str, column: usize, text: &str) -> Vec<String> {
-        let (lead, text) = (clean(lead), bound(&clean(text)));
+        let (lead, text) = (clean(lead), clean(text));
         let indent = " ".repeat(column);
-        if display_width(&lead) + ROOM > self.columns() {
+        let lead_width = width(&lead);
+        if lead_width + ROOM > self.columns() {
             let mut lines = self.filled("", &indent, lead.trim_end());
-            lines.extend(self.filled(&indent, &indent, &text));
+            lines.extend(self.filled(&indent, &indent, &bound(&text)));
             return lines;
         }
-        self.filled(&lead, &indent, &text)
+        // most texts fit on their line, where the search for the best line ends would only cost time
+        let rest = text.trim_end_matches(' ');
+        if !rest.is_empty() && lead_width + width(rest) <= self.columns() {
+            return vec![format!("{lead}{rest}").replace(BOUND, " ")];
+        }
+        self.filled(&lead, &indent, &bound(&text))
     }
 
     fn filled(&self, first: &str, indent: &str, text: &str) -> Vec<String> {
-        // most texts fit on their line, where the search for the best line ends would only cost time
-        let rest = text.trim_end_matches(' ');
-        if !rest.is_empty() && display_width(first) + display_width(rest) <= self.columns() {
-            return vec![format!("{first}{rest}").replace(BOUND, " ")];
-        }
         let options = Options::new(self.columns())
             .initial_indent(first)
             .subsequent_indent(indent)
@@ -145,6 +146,11 @@ impl Page {
         self.out.push_str(line.trim_end());
         self.out.push('\n');
     }
+}
+
+/// The columns that a clean text takes.
+fn width(text: &str) -> usize {
+    if text.is_ascii() { text.len() } else { display_width(text) }
 }
 
 fn lead(mark: &str) -> String {
