@@ -54,8 +54,19 @@ fn page_text(page: &SpeciesPage, plot: bool) -> String {
 
 /// Those that are named so exactly, else those that the word finds.
 fn found<'a>(pages: &'a [SpeciesPage], word: &str) -> Vec<&'a SpeciesPage> {
-    let exact: Vec<&SpeciesPage> = pages.iter().filter(|page| page.is_named(word)).collect();
+    let bare = without_symbol(word);
+    let named = |page: &&SpeciesPage| page.is_named(word) || page.is_named(bare);
+    let exact: Vec<&SpeciesPage> = pages.iter().filter(named).collect();
     if exact.is_empty() { pages.iter().filter(|page| page.matches(word)).collect() } else { exact }
+}
+
+/// `CaCO3` of `CaCO3(s)`: a page shows all phases.
+fn without_symbol(word: &str) -> &str {
+    let symbol = |inside: &str| inside.starts_with(|c: char| c.is_lowercase());
+    match word.trim().strip_suffix(')').and_then(|word| word.rsplit_once('(')) {
+        Some((bare, inside)) if symbol(inside) => bare,
+        _ => word,
+    }
 }
 
 fn unknown(pages: &[SpeciesPage], word: &str) -> Status {

@@ -323,3 +323,14 @@ fn a_way_over_the_stated_boiling_point_is_told() {
     assert!(words.contains("C2H5OH boils at 424.133 K at 1000 kPa abs"), "{}", ran.stdout);
     assert!(words.contains("the legs go over its stated boiling point"), "{}", ran.stdout);
 }
+
+/// A page shows all phases of a species, so that a state symbol picks none; a group of a formula is no symbol.
+#[test]
+fn a_species_is_found_with_its_state_symbol() {
+    for (word, first) in [("CaCO3(s)", "CaCO3  calcium carbonate"), ("Ca(OH)2", "Ca(OH)2  calcium hydroxide")]
+    {
+        let ran = heatpath(&["species", word]);
+        assert_eq!(ran.status, Some(0), "{}", ran.stderr);
+        assert!(ran.stdout.starts_with(first), "{}", ran.stdout);
+    }
+}
