@@ -317,12 +317,7 @@ pub(super) fn volume<const N: usize>(
 ) {
     let curve = &material(plan, which).curve;
     let p = frame.slots[p.0 as usize];
-    let has_gas = |place: Place| {
-        let present = curve.phases_at(place);
-        std::iter::once(present.lower)
-            .chain(present.upper)
-            .any(|(phase, share)| share > 0.0 && curve.phase_class(phase) == Some(PhaseClass::Gas))
-    };
+    let has_gas = |place: Place| curve.class_share(place, PhaseClass::Gas) > 0.0;
     each(frame, place, to, Some((at, Fault::NoVolume)), |place, lane| {
         match curve.specific_volume(place, quantity(p[lane])) {
             Some(volume) => Some(volume.value),
@@ -341,13 +336,10 @@ pub(super) fn phase_share<const N: usize>(
 ) {
     let curve = &material(plan, which).curve;
     each(frame, place, to, None, |place, _| {
-        let present = curve.phases_at(place);
-        let shares = std::iter::once(present.lower).chain(present.upper);
-        let wanted = |phase: usize| match phases {
-            PhaseSet::One(one) => phase == one as usize,
-            PhaseSet::Class(class) => curve.phase_class(phase) == Some(class),
-        };
-        Some(shares.filter(|(phase, _)| wanted(*phase)).fold(0.0, |sum, (_, share)| sum + share))
+        Some(match phases {
+            PhaseSet::One(one) => curve.phases_at(place).share(one as usize),
+            PhaseSet::Class(class) => curve.class_share(place, class),
+        })
     });
 }
 

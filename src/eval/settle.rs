@@ -86,11 +86,7 @@ fn volume_and_gas(parts: &[Part<'_>], kelvin: f64, pascal: f64, share: Option<f6
     for part in parts {
         let place =
             part.curve.place(quantity(kelvin), quantity(pascal), part.pin, share, part.allowance).ok()?;
-        let present = part.curve.phases_at(place);
-        let gas_share = std::iter::once(present.lower)
-            .chain(present.upper)
-            .filter(|(phase, _)| part.curve.phase_class(*phase) == Some(PhaseClass::Gas))
-            .fold(0.0, |sum, (_, share)| sum + share);
+        let gas_share = part.curve.class_share(place, PhaseClass::Gas);
         if gas_share > 0.0 {
             gas += part.mass.value * gas_share / part.curve.molar_mass()?.value;
         }

@@ -69,9 +69,7 @@ fn density_beyond(sheet: &WorkedSheet<'_>, id: StateId) -> Vec<Diagnostic> {
         };
         let t = place.temperature().value;
         let present = species.curve.phases_at(place);
-        for (phase, _) in
-            std::iter::once(present.lower).chain(present.upper).filter(|(_, share)| *share > 0.0)
-        {
+        for (phase, _) in present.present() {
             let given = species.data.iter().find(|datum| datum.kind == DatumKind::Density { phase });
             let Some((lo, hi)) = given.and_then(|datum| datum.valid) else { continue };
             if t < lo - 1e-9 || t > hi + 1e-9 {

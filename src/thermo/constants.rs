@@ -1,6 +1,6 @@
 //! Constants and conventional values that the physics rests on.
 
-use uom::si::f64::{MolarHeatCapacity, Pressure, ThermodynamicTemperature};
+use uom::si::f64::MolarHeatCapacity;
 
 use super::si::typed;
 
@@ -17,14 +17,4 @@ pub const REFERENCE_TEMPERATURE: f64 = 298.15;
 /// The molar gas constant.
 pub fn gas_constant() -> MolarHeatCapacity {
     typed(GAS_CONSTANT)
-}
-
-/// One standard atmosphere.
-pub fn standard_atmosphere() -> Pressure {
-    typed(STANDARD_ATMOSPHERE)
-}
-
-/// The temperature of tabulated formation enthalpies, 298.15 K.
-pub fn reference_temperature() -> ThermodynamicTemperature {
-    typed(REFERENCE_TEMPERATURE)
 }

@@ -131,10 +131,7 @@ fn vapour_name(
 ) -> Option<String> {
     let species = sheet.program.species.get(part.species.0)?;
     let place = place.filter(|_| mass > 0.0)?;
-    let present = species.curve.phases_at(place);
-    let gas = std::iter::once(present.lower)
-        .chain(present.upper)
-        .any(|(phase, share)| share > 0.0 && species.curve.phase_class(phase) == Some(PhaseClass::Gas));
+    let gas = species.curve.class_share(place, PhaseClass::Gas) > 0.0;
     (gas && is_flammable(species)).then(|| species.name.clone())
 }
 

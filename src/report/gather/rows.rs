@@ -167,9 +167,7 @@ impl WorkedSheet<'_> {
             let (Some(species), Some(place)) = (species(part.species), place) else { continue };
             let amount = if by_mole { mass / species.molar_mass.unwrap_or(1.0) } else { mass };
             let present = species.curve.phases_at(place);
-            for (phase, share) in
-                std::iter::once(present.lower).chain(present.upper).filter(|(_, share)| *share > 0.0)
-            {
+            for (phase, share) in present.present() {
                 let name = species.in_phase(phase);
                 match phases.iter_mut().find(|(known, _)| *known == name) {
                     Some((_, sum)) => *sum += amount * share,

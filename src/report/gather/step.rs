@@ -295,12 +295,10 @@ impl WorkedSheet<'_> {
                 let (Some(place), Some(species)) = (place, self.program.species.get(part.species.0)) else {
                     continue;
                 };
-                let present = species.curve.phases_at(place);
-                for (phase, share) in std::iter::once(present.lower).chain(present.upper) {
+                for (phase, _) in species.curve.phases_at(place).present() {
                     let condensed = species.curve.phase_class(phase) != Some(PhaseClass::Gas);
                     let name = species.in_phase(phase);
-                    if share > 0.0 && condensed && !species.curve.has_density(phase) && !names.contains(&name)
-                    {
+                    if condensed && !species.curve.has_density(phase) && !names.contains(&name) {
                         names.push(name);
                     }
                 }

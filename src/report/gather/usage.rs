@@ -65,13 +65,11 @@ impl Usage {
             let t = place.temperature().value;
             let present = species.curve.phases_at(place);
             let changing = present.upper.is_some_and(|(_, share)| share > 0.0 && share < 1.0);
-            for (phase, share) in std::iter::once(present.lower).chain(present.upper) {
-                if share > 0.0 {
-                    if !changing {
-                        self.sensible(sheet, constituent.species, phase, (t, t));
-                    }
-                    self.note(constituent.species, DatumKind::Density { phase }, (t, t));
+            for (phase, _) in present.present() {
+                if !changing {
+                    self.sensible(sheet, constituent.species, phase, (t, t));
                 }
+                self.note(constituent.species, DatumKind::Density { phase }, (t, t));
             }
             if changing {
                 self.note(constituent.species, DatumKind::Transition { below: present.lower.0 }, (t, t));

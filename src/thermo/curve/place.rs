@@ -105,12 +105,13 @@ pub struct PhaseShares {
 }
 
 impl PhaseShares {
+    /// The phases that are there, with their mass shares.
+    pub fn present(self) -> impl Iterator<Item = (usize, f64)> {
+        std::iter::once(self.lower).chain(self.upper).filter(|(_, share)| *share > 0.0)
+    }
+
     /// The mass share of `phase`, by its index.
     pub fn share(self, phase: usize) -> f64 {
-        std::iter::once(self.lower)
-            .chain(self.upper)
-            .filter(|(known, _)| *known == phase)
-            .map(|(_, share)| share)
-            .sum()
+        self.present().filter(|(known, _)| *known == phase).fold(0.0, |sum, (_, share)| sum + share)
     }
 }

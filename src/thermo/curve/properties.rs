@@ -114,14 +114,10 @@ impl HeatingCurve {
         self.phases.len()
     }
 
-    /// The name of a phase.
-    pub fn phase_name(&self, phase: usize) -> Option<&str> {
-        self.phases.get(phase).map(|phase| phase.name.as_str())
-    }
-
-    /// The phase of this name, by its index.
-    pub fn phase_named(&self, name: &str) -> Option<usize> {
-        self.phases.iter().position(|phase| phase.name == name)
+    /// The mass share of the phases of a class at a place.
+    pub fn class_share(&self, place: Place, class: PhaseClass) -> f64 {
+        let of_class = |(phase, _): &(usize, f64)| self.phase_class(*phase) == Some(class);
+        self.phases_at(place).present().filter(of_class).fold(0.0, |sum, (_, share)| sum + share)
     }
 
     /// Whether a phase is solid, liquid or gas.
@@ -165,9 +161,8 @@ impl HeatingCurve {
     }
 
     fn condensed_volume(&self, place: Place) -> Option<f64> {
-        let PhaseShares { lower, upper } = self.phases_at(place);
         let mut sum = 0.0;
-        for (phase, share) in std::iter::once(lower).chain(upper).filter(|(_, share)| *share > 0.0) {
+        for (phase, share) in self.phases_at(place).present() {
             let phase = self.phases.get(phase)?;
             if phase.class != PhaseClass::Gas {
                 sum += share / phase.density.as_ref()?.value(place.temperature);
